@@ -1,0 +1,72 @@
+import { fileURLToPath } from 'node:url'
+
+const inRoot = (path: string) => fileURLToPath(new URL(path, import.meta.url))
+
+export default defineNuxtConfig({
+  modules: ['@pinia/nuxt', '@nuxtjs/tailwindcss', '@sidebase/nuxt-auth', 'nuxt-security', '@nuxt/eslint', '@nuxt/test-utils/module'],
+  components: [{ path: '~/components', pathPrefix: false }],
+  devtools: { enabled: false },
+  app: {
+    head: {
+      htmlAttrs: { lang: 'en' },
+      title: 'Wideberth',
+      meta: [{ name: 'viewport', content: 'width=device-width, initial-scale=1' }],
+      link: [{ rel: 'icon', type: 'image/svg+xml', href: '/mark.svg' }],
+    },
+  },
+  css: ['~/assets/css/main.css'],
+  // A second build folder lets a build for tests run beside the one that serves.
+  buildDir: process.env.WIDEBERTH_BUILD_DIR || '.nuxt',
+  compatibilityDate: '2026-11-01',
+  nitro: {
+    compressPublicAssets: true,
+    serverAssets: [{ baseName: 'templates', dir: inRoot('./templates') }],
+    typescript: { tsConfig: { include: [inRoot('./tests/**/*.ts'), inRoot('./scripts/**/*.ts')] } },
+  },
+  vite: {
+    optimizeDeps: { include: ['@svgdotjs/svg.js', 'comlink', 'mathjs', 'papaparse'] },
+    worker: { format: 'es' },
+  },
+  typescript: { strict: true },
+  telemetry: false,
+  auth: {
+    // The 'authjs' provider pins a package with known holes; see DEVELOPERS.md on sign-in.
+    provider: {
+      type: 'local',
+      endpoints: {
+        signIn: { path: '/sign-in', method: 'post' },
+        signOut: { path: '/sign-out', method: 'post' },
+        getSession: { path: '/session', method: 'get' },
+        signUp: false,
+      },
+      pages: { login: '/sign-in' },
+      token: {
+        signInResponseTokenPointer: '/token',
+        cookieName: 'signed-in',
+        maxAgeInSeconds: 12 * 60 * 60,
+        sameSiteAttribute: 'lax',
+        httpOnlyCookieAttribute: false,
+      },
+    },
+    globalAppMiddleware: { isEnabled: true },
+    sessionRefresh: { enableOnWindowFocus: false },
+  },
+  eslint: { config: { stylistic: true } },
+  security: {
+    rateLimiter: false,
+    requestSizeLimiter: false,
+    headers: {
+      crossOriginEmbedderPolicy: false,
+      contentSecurityPolicy: {
+        'default-src': ['\'self\''],
+        'img-src': ['\'self\'', 'data:'],
+        'font-src': ['\'self\'', 'data:'],
+        'style-src': ['\'self\'', '\'unsafe-inline\''],
+        'worker-src': ['\'self\'', 'blob:'],
+        'connect-src': ['\'self\''],
+        'frame-ancestors': ['\'self\''],
+        'upgrade-insecure-requests': false,
+      },
+    },
+  },
+})
