@@ -1,0 +1,59 @@
+import type { LoopAnalysis, LoopInput, FrequencyUnit } from './analysis'
+import type { Criterion, Judgement } from './criterion'
+import type { PageSize } from './brand'
+import type { SourceDefinition } from './source'
+
+/**
+ * Everything a frozen draft was made from and everything that was found: plain data, canonical JSON (keys sorted),
+ * enough to print the document again and to compare two revisions without the database.
+ */
+export interface ReportSnapshot {
+  format: 'wideberth report snapshot'
+  formatVersion: 1
+  engineVersion: string
+  /** ISO 8601, UTC */
+  frozenAt: string
+  frozenBy: string
+  letter: string
+  draftNumber: number
+  changeNote: string
+  brand: { teamName: string, accent: string, addressLine: string, pageSize: PageSize, mark: string | null }
+  system: { name: string, customer: string, documentNumber: string, frequencyUnit: FrequencyUnit, description: string }
+  report: { title: string, documentNumber: string, remarks: string }
+  criteria: Criterion[]
+  conditions: { code: string, name: string, coordinates: { name: string, unit: string, value: number }[], tags: string[], notes: string }[]
+  loops: { code: string, name: string, axis: string, breakPoint: string, otherLoops: string, notes: string, remarks: string }[]
+  parameters: { name: string, unit: string, notes: string, values: Record<string, number> }[]
+  /** one for each loop and condition covered, in order of loops, then conditions */
+  cells: SnapshotCell[]
+  /** the issued revisions before this one, oldest first */
+  history: { letter: string, changeNote: string, frozenBy: string, issuedBy: string, issuedAt: string }[]
+}
+
+export interface SnapshotCell {
+  loopCode: string
+  conditionCode: string
+  source: {
+    name: string
+    kind: SourceDefinition['kind']
+    definition: SourceDefinition
+    /** of a measured response: file name and SHA-256 of the bytes uploaded */
+    file: { name: string, sha256: string } | null
+  } | null
+  input: LoopInput | null
+  analysis: LoopAnalysis | null
+  failure: { message: string, path: string } | null
+  judgement: Judgement
+}
+
+/** What an edition adds to a snapshot when the document is printed. */
+export interface EditionFacts {
+  edition: 'draft' | 'issued'
+  /** 'A draft 2' or 'A' */
+  label: string
+  preparedBy: string
+  preparedAt: string
+  approvedBy: string | null
+  issuedAt: string | null
+  snapshotSha256: string
+}

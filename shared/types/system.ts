@@ -1,0 +1,82 @@
+import type { Judgement } from './criterion'
+import type { FrequencyUnit, LoopAnalysis } from './analysis'
+import type { Role } from './person'
+import type { Source } from './source'
+
+/** Every stored row carries a version: a change names the version it was made from and is refused with 409 when that is not the newest. */
+export interface Versioned {
+  id: number
+  version: number
+}
+
+export interface System extends Versioned {
+  name: string
+  customer: string
+  documentNumber: string
+  frequencyUnit: FrequencyUnit
+  description: string
+}
+
+export interface SystemSummary extends System {
+  loopCount: number
+  conditionCount: number
+  /** the caller's roles in this system */
+  roles: Role[]
+  /** letter of the newest issued revision over all its reports */
+  newestIssue: string | null
+}
+
+export interface Loop extends Versioned {
+  systemId: number
+  code: string
+  name: string
+  /** axis or channel */
+  axis: string
+  /** the signal at which the loop is opened; needed before freezing */
+  breakPoint: string
+  /** the state of every other loop while this one is open; needed before freezing */
+  otherLoops: string
+  notes: string
+  position: number
+}
+
+export interface OperatingCondition extends Versioned {
+  systemId: number
+  code: string
+  name: string
+  /** numeric coordinates such as { 'wave height, m': 3 } */
+  coordinates: { name: string, unit: string, value: number }[]
+  tags: string[]
+  notes: string
+  position: number
+}
+
+/** A named number of the system that expressions use, with a value in each operating condition. */
+export interface Parameter extends Versioned {
+  systemId: number
+  name: string
+  unit: string
+  notes: string
+  position: number
+  /** by operating condition id; a missing one is an error where an expression needs it */
+  values: Record<number, number>
+}
+
+/** One cell of the board: a loop in a condition, by its source of record. */
+export interface BoardCell {
+  loopId: number
+  conditionId: number
+  source: Pick<Source, 'id' | 'name' | 'kind'> | null
+  analysis: LoopAnalysis | null
+  /** why there is no analysis though there is a source */
+  failure: { message: string, path: string } | null
+  judgement: Judgement
+}
+
+export interface Board {
+  system: System
+  loops: Loop[]
+  conditions: OperatingCondition[]
+  criteria: import('./criterion').Criterion[]
+  cells: BoardCell[]
+}
