@@ -1,4 +1,4 @@
-import type { Judgement } from './criterion'
+import type { Criterion, Judgement } from './criterion'
 import type { FrequencyUnit, LoopAnalysis } from './analysis'
 import type { Role } from './person'
 import type { Source } from './source'
@@ -77,6 +77,6 @@ export interface Board {
   system: System
   loops: Loop[]
   conditions: OperatingCondition[]
-  criteria: import('./criterion').Criterion[]
+  criteria: Criterion[]
   cells: BoardCell[]
 }
