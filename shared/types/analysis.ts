@@ -107,6 +107,8 @@ export interface ClosestApproach {
   /** dB, and deg (lag negative): the simultaneous change that takes that point of L to -1 */
   gainChange: number
   phaseChange: number
+  /** measured: the dip is no deeper than the 95 % confidence radius of its samples, so it may be noise */
+  withinNoise?: boolean
 }
 
 export interface VectorMargin {
@@ -161,6 +163,18 @@ export interface CoverageException {
   reason: string
   /** Stable name of the reason, for tests and screens. */
   code?: string
+  /** What |1 + L| is at least in the stretch, where that much can be said: what hides there has margins no smaller than it implies. */
+  leastDistance?: number
+}
+
+/** The 95 % confidence circle of a measured sample, as a disc about the loop gain. */
+export interface ConfidenceDisc {
+  frequency: number
+  /** the loop gain L of the sample */
+  re: number
+  im: number
+  /** radius in the plane of L; null where the data bound nothing */
+  radius: number | null
 }
 
 export interface Coverage {
@@ -183,6 +197,10 @@ export interface LoopAnalysis {
   diskMargin?: DiskMargin | null
   stability: Stability
   coverage: Coverage
+  /** Measured: how many samples lie in the band. */
+  samples?: number
+  /** Measured with coherence and averages: one for each sample in the band. */
+  discs?: ConfidenceDisc[]
 }
 
 /** In the place of an analysis that could not be made. */
