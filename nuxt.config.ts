@@ -14,7 +14,11 @@ export default defineNuxtConfig({
       link: [{ rel: 'icon', type: 'image/svg+xml', href: '/mark.svg' }],
     },
   },
-  css: ['~/assets/css/main.css'],
+  css: [
+    '@fontsource/noto-sans/400.css', '@fontsource/noto-sans/600.css',
+    '@fontsource/noto-sans/400-italic.css', '@fontsource/noto-sans/600-italic.css',
+    '@fontsource/noto-sans-mono/400.css',
+  ],
   // A second build folder lets a build for tests run beside the one that serves.
   buildDir: process.env.WIDEBERTH_BUILD_DIR || '.nuxt',
   compatibilityDate: '2026-11-01',
@@ -47,8 +51,14 @@ export default defineNuxtConfig({
         sameSiteAttribute: 'lax',
         httpOnlyCookieAttribute: false,
       },
+      session: {
+        dataType: {
+          person: 'import(\'#shared/types/person\').Person',
+          memberships: 'import(\'#shared/types/person\').Membership[]',
+        },
+      },
     },
-    globalAppMiddleware: { isEnabled: true },
+    globalAppMiddleware: { isEnabled: true, allow404WithoutAuth: true, addDefaultCallbackUrl: true },
     sessionRefresh: { enableOnWindowFocus: false },
   },
   eslint: { config: { stylistic: true } },
@@ -69,4 +79,5 @@ export default defineNuxtConfig({
       },
     },
   },
+  tailwindcss: { cssPath: '~/assets/css/main.css', viewer: false },
 })

@@ -19,6 +19,7 @@ export default {
         unshown: '#8F5F00',
       },
       fontFamily: { sans: ['"Noto Sans"', 'sans-serif'], mono: ['"Noto Sans Mono"', 'monospace'] },
+      fontSize: { note: ['12.5px', '17px'], title: ['25px', '32px'] },
       borderRadius: { DEFAULT: '3px' },
     },
   },

@@ -1,0 +1,25 @@
+import type { Ref } from 'vue'
+import { useConfirmStore } from '~/stores/confirm'
+
+/** Asks before a page with unsaved changes is left, by a link or by closing the tab. */
+export function useUnsavedChanges(unsaved: Ref<boolean>): void {
+  const confirm = useConfirmStore()
+  const { person } = useSession()
+
+  onBeforeRouteLeave(async () => {
+    // An ended session takes the person to the sign-in page and back; the draft is kept meanwhile.
+    if (!unsaved.value || person.value === null) return true
+    return confirm.ask({
+      title: 'Leave without saving?',
+      text: 'What you changed here is not saved yet.',
+      yes: 'Leave',
+      no: 'Stay here',
+    })
+  })
+
+  const warn = (event: BeforeUnloadEvent) => {
+    if (unsaved.value) event.preventDefault()
+  }
+  onMounted(() => addEventListener('beforeunload', warn))
+  onBeforeUnmount(() => removeEventListener('beforeunload', warn))
+}
