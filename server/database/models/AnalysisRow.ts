@@ -1,0 +1,24 @@
+import { Model, type CreationOptional, type InferAttributes, type InferCreationAttributes, type Sequelize } from 'sequelize'
+import type { LoopAnalysis } from '#shared/types/analysis'
+import { id, json, text } from './columns'
+
+/** What the engine found for one input, kept under the hash of the input and the engine's version. */
+export class AnalysisRow extends Model<InferAttributes<AnalysisRow>, InferCreationAttributes<AnalysisRow>> {
+  declare id: CreationOptional<number>
+  declare inputHash: string
+  declare engineVersion: string
+  declare result: LoopAnalysis
+  declare createdAt: string
+}
+
+export const defineAnalysisRow = (sequelize: Sequelize) => AnalysisRow.init({
+  id: id(),
+  inputHash: text(),
+  engineVersion: text(),
+  result: json<LoopAnalysis>('result'),
+  createdAt: text(),
+}, {
+  sequelize,
+  tableName: 'analyses',
+  indexes: [{ name: 'analyses_input', unique: true, fields: ['input_hash', 'engine_version'] }],
+})
