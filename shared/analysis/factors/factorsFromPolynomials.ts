@@ -1,0 +1,51 @@
+import type { ExactPolynomial } from '../../numeric/extended/ExactPolynomial'
+import { polynomialRoots } from '../../numeric/extended/polynomialRoots'
+import { ScaledPolynomial } from '../../numeric/extended/ScaledPolynomial'
+import { AnalysisInputError } from '../AnalysisInputError'
+import type { FactorList } from '../FactoredLoop'
+import { snapToBoundary } from './snapToBoundary'
+
+/** An exact polynomial (leading coefficient not zero) that stands in a product as many times as `power` says. */
+export interface PolynomialPower {
+  polynomial: ExactPolynomial
+  power: number
+}
+
+/**
+ * The roots of a product of exact polynomials as one list of factors, each polynomial's roots found once, with the proven
+ * correction of each and the boundary rule applied.
+ *
+ * @throws AnalysisInputError naming `path` when roots cannot be told apart or leave the range of doubles
+ */
+export function factorsFromPolynomials(parts: PolynomialPower[], sampled: boolean, path: string): FactorList {
+  const lists = parts.map(({ polynomial, power }) => ({ list: factorsOf(polynomial, sampled, path), power }))
+  const total = lists.reduce((sum, { list, power }) => sum + power * list.re.length, 0)
+  const result = {
+    re: new Float64Array(total),
+    im: new Float64Array(total),
+    correction: new Float64Array(total),
+    onBoundary: new Uint8Array(total),
+  }
+  let offset = 0
+  for (const { list, power } of lists) {
+    for (let repeat = 0; repeat < power; repeat++, offset += list.re.length) {
+      result.re.set(list.re, offset)
+      result.im.set(list.im, offset)
+      result.correction.set(list.correction, offset)
+      result.onBoundary.set(list.onBoundary, offset)
+    }
+  }
+  return result
+}
+
+function factorsOf(polynomial: ExactPolynomial, sampled: boolean, path: string): FactorList {
+  try {
+    return snapToBoundary(polynomialRoots(polynomial), sampled, ScaledPolynomial.fromExact(polynomial))
+  }
+  catch (error) {
+    if (error instanceof RangeError) {
+      throw new AnalysisInputError(`The roots of the ${path} cannot be found: ${error.message}. Scale the coefficients or give zeros and poles.`, path)
+    }
+    throw error
+  }
+}

@@ -1,0 +1,85 @@
+import { initialRoots } from './initialRoots'
+import type { ScaledPolynomial } from './ScaledPolynomial'
+
+const MAXIMAL_SWEEPS = 120
+
+/**
+ * All roots to about double precision of the coefficients, by the iteration of O. Aberth ('Iteration methods for finding
+ * all zeros of a polynomial simultaneously', Mathematics of Computation 27, 1973) in plain doubles, each root in its own scale.
+ * The constant coefficient must not be zero. The result is a starting point only: nothing is proven of it.
+ */
+export function aberthRoots(polynomial: ScaledPolynomial): { re: Float64Array, im: Float64Array } {
+  const n = polynomial.degree
+  const { re, im } = initialRoots(polynomial)
+  const settled = new Uint8Array(n)
+  let open = n
+  for (let sweep = 0; sweep < MAXIMAL_SWEEPS && open > 0; sweep++) {
+    for (let k = 0; k < n; k++) {
+      if (settled[k]) continue
+      const x = re[k] as number
+      const y = im[k] as number
+      const shift = exponentOf(x, y)
+      const scaling = 2 ** -shift
+      const c = polynomial.at(shift).high
+      const a = x * scaling
+      const b = y * scaling
+      const modulus = Math.sqrt(a * a + b * b)
+      let pr = c[n] as number
+      let pi = 0
+      let dr = 0
+      let di = 0
+      let size = Math.abs(pr)
+      for (let j = n - 1; j >= 0; j--) {
+        let t = dr * a - di * b + pr
+        di = dr * b + di * a + pi
+        dr = t
+        t = pr * a - pi * b + (c[j] as number)
+        pi = pr * b + pi * a
+        pr = t
+        size = size * modulus + Math.abs(c[j] as number)
+      }
+      // Below the noise of the evaluation a further step would be random.
+      const noise = Math.sqrt(pr * pr + pi * pi) <= 4e-16 * size
+      // Newton step N = P / P'; then N / (1 - N sum 1/(r - r_j)) = 1 / (P'/P - sum)
+      const denominator = pr * pr + pi * pi
+      if (denominator === 0) {
+        settled[k] = 1
+        open--
+        continue
+      }
+      let ur = (dr * pr + di * pi) / denominator
+      let ui = (di * pr - dr * pi) / denominator
+      for (let j = 0; j < n; j++) {
+        if (j === k) continue
+        const p = (x - (re[j] as number)) * scaling
+        const q = (y - (im[j] as number)) * scaling
+        const square = p * p + q * q
+        if (square === 0) continue
+        ur -= p / square
+        ui += q / square
+      }
+      const square = ur * ur + ui * ui
+      let stepRe = ur / square
+      let stepIm = -ui / square
+      const length = Math.sqrt(stepRe * stepRe + stepIm * stepIm)
+      if (!(length < 4)) {
+        // Steps far beyond the root's own size only throw it out of its place.
+        const limit = length < Infinity ? 4 / length : 0
+        stepRe *= limit
+        stepIm *= limit
+      }
+      re[k] = x - stepRe * 2 ** shift
+      im[k] = y - stepIm * 2 ** shift
+      if (noise || length <= 1e-15 * modulus) {
+        settled[k] = 1
+        open--
+      }
+    }
+  }
+  return { re, im }
+}
+
+/** Power of two nearest to |x + j y|, so that the point divided by it lies in about [0.7, 1.5]. */
+function exponentOf(x: number, y: number): number {
+  return Math.round(Math.log2(Math.max(Math.abs(x), Math.abs(y), 1e-300)))
+}
