@@ -1,0 +1,44 @@
+import type { MarginSummary } from './analysis'
+import type { Verdict } from './criterion'
+
+/** One side of a cell: null where that revision does not cover the loop in the condition. */
+export interface ComparedSide {
+  verdict: Verdict
+  closedLoop: string | null
+  /** null where there is no analysis or the closed loop is not stable */
+  summary: MarginSummary | null
+  /** least |1 + L|; null where there is no analysis */
+  vectorMargin: number | null
+  sourceName: string | null
+}
+
+export type ComparedQuantity = 'gainIncrease' | 'gainDecrease' | 'phaseLag' | 'phaseLead' | 'delay' | 'vectorMargin'
+
+export interface ComparedCell {
+  loopCode: string
+  loopName: string
+  conditionCode: string
+  conditionName: string
+  before: ComparedSide | null
+  after: ComparedSide | null
+  /** after less before, in the quantity's own unit; null where either is missing; 0 where both are the same to the last bit */
+  differences: Record<ComparedQuantity, number | null>
+  verdictChanged: boolean
+  /** whether any input or result of the cell differs at all */
+  changed: boolean
+}
+
+/** What changed from one revision to another, told from their snapshots alone. */
+export interface RevisionComparison {
+  before: { id: number, label: string }
+  after: { id: number, label: string }
+  loopsAdded: string[]
+  loopsRemoved: string[]
+  conditionsAdded: string[]
+  conditionsRemoved: string[]
+  /** in words, such as 'gain margin: 6 dB -> 8 dB', 'parameter kSlP in C1: 7.2 -> 6.6' */
+  criteriaChanges: string[]
+  parameterChanges: string[]
+  /** in the order of the newer revision, cells that only the older one has last */
+  cells: ComparedCell[]
+}
