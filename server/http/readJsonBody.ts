@@ -1,0 +1,30 @@
+import type { H3Event } from 'h3'
+import { AppError } from '#shared/errors/AppError'
+
+/**
+ * The JSON body of a request, counted as it arrives: the length a client announces is not believed.
+ * Throws 'too large' over the limit (bytes) and 'invalid input' for what is not JSON.
+ */
+export async function readJsonBody(event: H3Event, limit: number): Promise<unknown> {
+  const type = event.node.req.headers['content-type'] ?? ''
+  if (!/^application\/json(?:;|$)/i.test(type)) throw new AppError('invalidInput', 'The request must carry JSON (content-type application/json).')
+  const text = (await readBytes(event, limit)).toString('utf8')
+  try {
+    return JSON.parse(text) as unknown
+  }
+  catch (cause) {
+    throw new AppError('invalidInput', 'The request is not JSON.', { cause })
+  }
+}
+
+/** The bytes of a request's body; throws 'too large' as soon as they pass the limit. */
+export async function readBytes(event: H3Event, limit: number): Promise<Buffer> {
+  const chunks: Buffer[] = []
+  let size = 0
+  for await (const chunk of event.node.req as AsyncIterable<Buffer>) {
+    size += chunk.length
+    if (size > limit) throw new AppError('tooLarge', `The request holds more than ${limit.toLocaleString('en')} bytes.`)
+    chunks.push(chunk)
+  }
+  return Buffer.concat(chunks)
+}

@@ -1,0 +1,21 @@
+/** Limits of what people type and upload, used by forms and routes. Lengths in characters. */
+export const limits = {
+  code: 24,
+  name: 200,
+  unit: 40,
+  notes: 10_000,
+  tags: 20,
+  tag: 40,
+  coordinates: 20,
+  parameters: 500,
+  expression: 10_000,
+  email: 254,
+  passwordLeast: 12,
+  passwordMost: 128,
+  /** coefficients, zeros or poles of one source */
+  order: 200,
+  /** loops, or operating conditions, of one system */
+  rows: 1000,
+  /** bytes of one uploaded measurement */
+  uploadBytes: 20_000_000,
+} as const
