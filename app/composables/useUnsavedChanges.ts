@@ -1,12 +1,12 @@
 import type { Ref } from 'vue'
 import { useConfirmStore } from '~/stores/confirm'
 
-/** Asks before a page with unsaved changes is left, by a link or by closing the tab. */
+/** Asks before a page with unsaved changes is left, by a link, for another part of it, or by closing the tab. */
 export function useUnsavedChanges(unsaved: Ref<boolean>): void {
   const confirm = useConfirmStore()
   const { person } = useSession()
 
-  onBeforeRouteLeave(async () => {
+  async function ask(): Promise<boolean> {
     // An ended session takes the person to the sign-in page and back; the draft is kept meanwhile.
     if (!unsaved.value || person.value === null) return true
     return confirm.ask({
@@ -15,7 +15,10 @@ export function useUnsavedChanges(unsaved: Ref<boolean>): void {
       yes: 'Leave',
       no: 'Stay here',
     })
-  })
+  }
+
+  onBeforeRouteLeave(ask)
+  onBeforeRouteUpdate(ask)
 
   const warn = (event: BeforeUnloadEvent) => {
     if (unsaved.value) event.preventDefault()
