@@ -1,0 +1,4 @@
+import { listPeople } from '../../services/people/listPeople'
+
+/** GET /api/people: every account. */
+export default defineApiHandler('GET /api/people', {}, () => listPeople())
