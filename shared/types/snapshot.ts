@@ -48,8 +48,8 @@ export interface SnapshotCell {
 
 /** What an edition adds to a snapshot when the document is printed. */
 export interface EditionFacts {
-  edition: 'draft' | 'issued'
-  /** 'A draft 2' or 'A' */
+  edition: 'preview' | 'draft' | 'issued'
+  /** 'A draft 2', 'A', or 'Preview' of what is not frozen yet */
   label: string
   preparedBy: string
   preparedAt: string

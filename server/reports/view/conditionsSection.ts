@@ -1,0 +1,63 @@
+import type { ReportSnapshot } from '#shared/types/snapshot'
+import { significantDigits } from '#shared/formatting/significantDigits'
+import type { SectionView, TableView } from './ReportView'
+import { tableOf } from './tableOf'
+
+/** Conditions whose parameter values stand side by side on one page. */
+const conditionsPerTable = 6
+
+function conditionsTable({ conditions }: ReportSnapshot): TableView {
+  return tableOf({
+    caption: 'Operating conditions',
+    columns: [{ head: 'code' }, { head: 'name' }, { head: 'coordinates' }, { head: 'tags' }, { head: 'notes', isWide: true }],
+    rows: conditions.map(condition => ({
+      cells: [
+        { text: condition.code, isHead: true },
+        { text: condition.name },
+        { text: condition.coordinates.map(({ name, unit, value }) => `${name} ${significantDigits(value)}${unit === '' ? '' : ` ${unit}`}`).join(', ') },
+        { text: condition.tags.join(', ') },
+        { text: condition.notes },
+      ],
+    })),
+    notes: [],
+    kind: 'conditions',
+  })
+}
+
+function parameterTables({ parameters, conditions }: ReportSnapshot): TableView[] {
+  const tables: TableView[] = []
+  for (let from = 0; from < conditions.length; from += conditionsPerTable) {
+    const shown = conditions.slice(from, from + conditionsPerTable)
+    tables.push(tableOf({
+      caption: shown.length === conditions.length ? 'Parameters and their values' : `Parameters and their values, conditions ${from + 1} to ${from + shown.length}`,
+      columns: [{ head: 'parameter' }, { head: 'unit' }, ...shown.map(condition => ({ head: condition.code, isNumber: true })), { head: 'notes', isWide: true }],
+      rows: parameters.map(parameter => ({
+        cells: [
+          { text: parameter.name, isHead: true, isMono: true },
+          { text: parameter.unit },
+          ...shown.map(condition => ({ text: valueText(parameter.values[condition.code]) })),
+          { text: parameter.notes },
+        ],
+      })),
+      notes: [],
+      kind: 'parameters',
+    }))
+  }
+  return tables
+}
+
+const valueText = (value: number | undefined) => (value === undefined ? '' : String(Number(value.toPrecision(8))))
+
+/** The operating conditions and the values the models took in each. */
+export function conditionsSection(snapshot: ReportSnapshot, number: string): SectionView {
+  return {
+    number,
+    anchor: 'conditions',
+    title: 'Operating conditions and parameters',
+    introduction: [],
+    blocks: [
+      { title: 'Operating conditions', paragraphs: [], items: [], table: conditionsTable(snapshot) },
+      ...(snapshot.parameters.length === 0 ? [] : parameterTables(snapshot).map((table, index) => ({ title: index === 0 ? 'Parameters' : '', paragraphs: [], items: [], table }))),
+    ],
+  }
+}

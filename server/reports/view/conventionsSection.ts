@@ -1,0 +1,48 @@
+import type { ReportSnapshot } from '#shared/types/snapshot'
+import type { SectionView } from './ReportView'
+import { tableOf } from './tableOf'
+import { limitWords, quantityNames } from './criteriaWords'
+
+const signs = [
+  { term: 'Loop gain L', words: 'the gain once around the loop opened at its break point, for negative feedback: the critical point is \u22121 and the return difference is 1 + L.' },
+  { term: 'Gain crossover', words: 'a frequency at which |L| = 1. Its phase margin is told in words: \u2018lag 32.3 deg\u2019 means that this much more lag reaches \u22121, \u2018lead 20 deg\u2019 that this much lead does.' },
+  { term: 'Phase crossover', words: 'a frequency at which L is real and negative, zero frequency and the end of the axis included. \u2018Gain may rise 12.4 dB\u2019 and \u2018gain may fall 6.1 dB\u2019 say how far the gain may change before L is \u22121 there.' },
+  { term: 'Delay margin', words: 'the least added delay that takes a gain crossover to \u22121: its phase margin, taken between 0 and 360 deg, over its frequency.' },
+  { term: 'Closest approach', words: 'a local minimum of |1 + L|, the distance of L to \u22121. Beside it stands one change of gain and phase together that takes this very point to \u22121. It is one such change, not the smallest combination.' },
+  { term: 'Vector margin', words: 'the least |1 + L| over all frequencies, a ratio. A vector margin d lets the gain rise by 1/(1 \u2212 d), fall by 1/(1 + d), and the phase move by 2 asin(d/2) either way, each alone. Gain and phase margin together do not imply a vector margin.' },
+  { term: 'Closed loop', words: 'judged by counting encirclements of \u22121 (Nyquist, Regeneration Theory, 1932), or observed during the test where L was measured; the basis is printed with each verdict. A closed loop that is not shown to be stable has no margins: only distances to \u22121 are printed.' },
+  { term: 'Frequencies', words: 'stand in the unit given in each head. Crossings whose |L| lies below the gain floor of the analysis are left out.' },
+]
+
+const method = [
+  { term: 'Models', words: 'Crossings and closest approaches are searched on the factors of L with Taylor series of log L whose remainder is bounded. Every stretch of the frequency axis is either shown to hold none or lies in a bracket shown to hold exactly one; what cannot be shown is listed as \u2018not proven\u2019 with its place and reason. A report with a model loop that is not proven is not issued.' },
+  { term: 'Measured responses', words: 'Log magnitude and unwrapped phase are interpolated between samples. Gaps too wide to trust are listed with the reason, among them those where a local rational interpolant disagrees (Nakatsukasa, S\u00e8te and Trefethen, The AAA Algorithm for Rational Approximation, 2018). Measured data prove nothing between their samples.' },
+  { term: 'Verdicts', words: 'worst first: unstable; not met; not shown (the data cannot tell); no data; not met, accepted by deviation; met; met, no limit; not applicable.' },
+  { term: 'Further reading', words: 'Bode, Network Analysis and Feedback Amplifier Design, 1945 (return difference, gain and phase margin); \u00c5str\u00f6m and Murray, Feedback Systems, 2008 (the least distance to the critical point as a margin).' },
+]
+
+/** How to read the numbers, how they were found, and against which criteria they were judged. */
+export function conventionsSection(snapshot: ReportSnapshot, number: string): SectionView {
+  return {
+    number,
+    anchor: 'conventions',
+    title: 'Conventions and method',
+    introduction: [],
+    blocks: [
+      { title: 'Words and signs', paragraphs: [], items: signs, table: null },
+      { title: 'How the crossings are found', paragraphs: [`Engine ${snapshot.engineVersion}.`], items: method, table: null },
+      {
+        title: 'Criteria',
+        paragraphs: ['Agreed limits of this system. A margin is met when it is not smaller than its limit, in each direction.'],
+        items: [],
+        table: tableOf({
+          caption: 'Criteria',
+          columns: [{ head: 'quantity' }, { head: 'limit' }],
+          rows: snapshot.criteria.map(({ quantity, limit }) => ({ cells: [{ text: quantityNames[quantity], isHead: true }, { text: limitWords(quantity, limit) }] })),
+          notes: [],
+          kind: 'criteria',
+        }),
+      },
+    ],
+  }
+}

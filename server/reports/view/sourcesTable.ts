@@ -1,0 +1,37 @@
+import type { PlacedCell } from './cellsOf'
+import type { TableView } from './ReportView'
+import { tableOf } from './tableOf'
+import type { CellDraft } from './tableOf'
+import { kindNames, sourceWords } from './sourceWords'
+
+/** Where each condition's loop gain comes from; conditions with the very same definition share a row. */
+export function sourcesTable(cells: readonly PlacedCell[]): TableView {
+  const rows: { conditions: string[], key: string, cells: CellDraft[] }[] = []
+  for (const { cell: { source, failure }, condition } of cells) {
+    const said = source === null ? 'no source of record' : sourceWords(source.definition)
+    const file = source?.file ? `file ${source.file.name}, SHA-256 ${source.file.sha256}` : ''
+    const failed = failure === null ? '' : `no analysis: ${failure.message}`
+    const key = JSON.stringify([source?.name, source?.kind, said, file, failed])
+    const same = rows.find(row => row.key === key)
+    if (same) {
+      same.conditions.push(condition.code)
+      continue
+    }
+    rows.push({
+      conditions: [condition.code],
+      key,
+      cells: [
+        { text: source?.name ?? 'none', tone: source ? 'plain' : 'open' },
+        { text: source ? kindNames[source.kind] : 'no data', tone: source ? 'plain' : 'open' },
+        { text: said, isMono: source !== null && source.kind !== 'measured', small: [file, failed].filter(text => text !== '').join('. '), tone: failure ? 'open' : 'plain' },
+      ],
+    })
+  }
+  return tableOf({
+    caption: 'Sources of record',
+    columns: [{ head: 'conditions' }, { head: 'source' }, { head: 'kind' }, { head: 'definition', isWide: true }],
+    rows: rows.map(row => ({ cells: [{ text: row.conditions.join(', '), isHead: true }, ...row.cells] })),
+    notes: [],
+    kind: 'sources',
+  })
+}
