@@ -66,6 +66,7 @@ export function buildReportView(snapshot: ReportSnapshot, edition: EditionFacts,
       foot: `${brand.teamName} \u00b7 ${documentType} \u00b7 ${edition.snapshotSha256.slice(0, 12)}`,
     },
     cover: coverView(snapshot, edition, contents),
+    description: system.description,
     summary: summaryView(snapshot, cells, chart),
     remarks: markdownToHtml(report.remarks),
     matrix: {

@@ -6,7 +6,7 @@ import type { ReportAssets } from './ReportAssets'
 import { isSafeHtml, safeHtml } from './text/SafeHtml'
 import type { ReportView, TableCell } from './view/ReportView'
 
-const partials = ['cover', 'table', 'cell', 'cellText', 'figure', 'summary', 'matrix', 'chapter', 'condition', 'section'] as const
+const partials = ['cover', 'front', 'table', 'cell', 'cellText', 'figure', 'summary', 'matrix', 'chapter', 'condition', 'section'] as const
 const styles = ['type', 'cover', 'tables', 'sections', 'screen', 'print'] as const
 
 export type HtmlRenderer = (view: ReportView) => Promise<string>

@@ -28,6 +28,8 @@ export interface TableView {
   caption: string
   columns: TableColumn[]
   rows: { cells: TableCell[], isMarked: boolean }[]
+  /** short enough to be kept on one page */
+  isShort: boolean
   /** small print under the table */
   notes: string[]
   /** a class of its own for the style sheet */
@@ -121,6 +123,8 @@ export interface ReportView {
   stamp: string | null
   runningHead: { left: string, right: string, foot: string }
   cover: CoverView
+  /** what the system is, in plain words */
+  description: string
   summary: SummaryView
   remarks: SafeHtml
   matrix: { number: string, anchor: string, introduction: string, tables: TableView[] }

@@ -1,5 +1,4 @@
 import type { ReportSnapshot } from '#shared/types/snapshot'
-import { significantDigits } from '#shared/formatting/significantDigits'
 import type { SectionView, TableView } from './ReportView'
 import { tableOf } from './tableOf'
 
@@ -14,7 +13,7 @@ function conditionsTable({ conditions }: ReportSnapshot): TableView {
       cells: [
         { text: condition.code, isHead: true },
         { text: condition.name },
-        { text: condition.coordinates.map(({ name, unit, value }) => `${name} ${significantDigits(value)}${unit === '' ? '' : ` ${unit}`}`).join(', ') },
+        { text: condition.coordinates.map(({ name, unit, value }) => `${name} ${valueText(value)}${unit === '' ? '' : ` ${unit}`}`).join(', ') },
         { text: condition.tags.join(', ') },
         { text: condition.notes },
       ],

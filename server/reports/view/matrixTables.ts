@@ -15,16 +15,14 @@ const conditionsPerTable = 5
 
 /** What a pair falls short in, in a word or two each. */
 function shortfall({ cell }: PlacedCell): string {
-  const failing = marginKinds.filter((kind) => {
-    const row = rowOfKind(cell.judgement.rows, kind)
-    return row !== undefined && row.limit !== null && (row.verdict === 'not met' || row.verdict === 'not shown')
-  })
+  const failing = marginKinds.filter(kind => rowOfKind(cell.judgement.rows, kind)?.verdict === 'not met')
   return failing.map(kind => kind.name).join(', ')
 }
 
-function crossingCount({ cell: { analysis } }: PlacedCell): string {
+function crossingCount({ cell: { analysis, source } }: PlacedCell): string {
   if (!analysis) return ''
-  return `${analysis.gainCrossovers.length} gain \u00b7 ${analysis.phaseCrossovers.length} phase`
+  const unproven = !analysis.coverage.proven && source?.kind !== 'measured' ? ' \u00b7 not proven' : ''
+  return `${analysis.gainCrossovers.length} gain \u00b7 ${analysis.phaseCrossovers.length} phase${unproven}`
 }
 
 function matrixCell(placed: PlacedCell, limit: number | null): CellDraft {

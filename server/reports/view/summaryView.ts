@@ -1,10 +1,11 @@
 import type { ReportSnapshot } from '#shared/types/snapshot'
 import type { Verdict } from '#shared/types/criterion'
+import { verdictOrder } from '#shared/analysis/criteria/verdictOrder'
 import { formatDistance } from '#shared/formatting/formatDistance'
 import { formatFrequency } from '#shared/formatting/formatFrequency'
 import type { PlacedCell } from './cellsOf'
 import { conditionAnchor, loopAnchor } from './anchorOf'
-import { compareStanding, verdictsWorstFirst } from './compareStanding'
+import { compareStanding } from './compareStanding'
 import { formatMargin, limitOf, limitWords, marginKinds } from './criteriaWords'
 import { rowOfKind } from './marginsTable'
 import type { FigureView, SummaryView, TableView, Tone } from './ReportView'
@@ -114,7 +115,7 @@ function attentionTable(snapshot: ReportSnapshot, cells: readonly PlacedCell[]):
 export function summaryView(snapshot: ReportSnapshot, cells: readonly PlacedCell[], chart: FigureView | null): SummaryView {
   return {
     ...findingOf(cells),
-    counts: verdictsWorstFirst
+    counts: verdictOrder
       .map(word => ({ word, tone: verdictTone(word), count: cells.filter(({ cell }) => cell.judgement.verdict === word).length }))
       .filter(({ count }) => count > 0),
     worst: worstTable(snapshot, cells),

@@ -11,6 +11,9 @@ export interface TableDraft {
   kind: string
 }
 
+/** Rows up to which a table is kept on one page. */
+const rowsOfShortTable = 24
+
 /** A table with every field the templates name, for they refuse a field that is missing. Throws a RangeError for a row of another length than the head. */
 export function tableOf({ caption, columns, rows, notes = [], kind }: TableDraft): TableView {
   return {
@@ -20,6 +23,7 @@ export function tableOf({ caption, columns, rows, notes = [], kind }: TableDraft
       if (cells.length !== columns.length) throw new RangeError(`row ${index + 1} of '${caption}' has ${cells.length} cells for ${columns.length} columns`)
       return { isMarked, cells: cells.map(cell => ({ small: '', tone: 'plain' as const, target: '', drawing: null, isHead: false, isMono: false, ...cell })) }
     }),
+    isShort: rows.length <= rowsOfShortTable,
     notes,
     kind,
   }
