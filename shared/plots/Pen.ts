@@ -40,7 +40,7 @@ export class Pen {
 
   /** A stroked path; nothing is added for an empty one. */
   stroke(d: string, stroke: string, width: number, more: Attributes = {}): void {
-    if (d) this.add('path', { d, fill: 'none', stroke, 'stroke-width': width, ...more })
+    if (d) this.add('path', { d, 'fill': 'none', stroke, 'stroke-width': width, ...more })
   }
 
   fill(d: string, fill: string, more: Attributes = {}): void {

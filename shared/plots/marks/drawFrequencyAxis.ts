@@ -3,7 +3,7 @@ import type { Rectangle } from '../curves/Rectangle'
 import type { Pen } from '../Pen'
 import type { AxisScale } from '../scales/AxisScale'
 import { logTicks } from '../scales/logTicks'
-import { formatTick } from '../text/formatNumber'
+import { formatTick } from '../text/formatTick'
 import { textWidth } from '../text/textWidth'
 import type { PlotTheme } from '../theme'
 
@@ -28,7 +28,12 @@ export function drawFrequencyNumbers(pen: Pen, scale: AxisScale, panel: Rectangl
   }
   const title = `frequency, ${unit}`
   const titleBaseline = below ? baseline + size + 4 : baseline - size - 4
-  pen.text(title, panel.x + panel.width - textWidth(title, size), titleBaseline, { size, fill: theme.slate })
+  pen.text(title, panel.x + panel.width, titleBaseline, { size, fill: theme.slate, anchor: 'end' })
+}
+
+/** px that the last number of an axis reaches beyond its panel */
+export function numberOverhang(theme: PlotTheme): number {
+  return Math.ceil(textWidth('10000', theme.size.tick) / 2) + 1
 }
 
 /** px a panel's frequency axis needs under it (or over it) */

@@ -14,7 +14,8 @@ export function logTicks(from: number, to: number, most: number): LogTick[] {
   const inside = (value: number) => value >= from * (1 - 1e-9) && value <= to * (1 + 1e-9)
   const at = (exponent: number, digit: number) => Number(`${digit}e${exponent}`)
 
-  for (const majors of [[1, 2, 3, 5, 7], [1, 2, 5], [1, 3], [1]]) {
+  const finest = to / from < 20 ? [[1, 2, 3, 5, 7]] : []
+  for (const majors of [...finest, [1, 2, 5], [1, 3], [1]]) {
     const ticks: LogTick[] = []
     for (let exponent = low; exponent <= high; exponent++) {
       for (let digit = 1; digit <= 9; digit++) {

@@ -1,0 +1,17 @@
+import type { LoopFigureData } from '../FigureData'
+import { hasMargins } from '../text/markWords'
+import { countWords, measuredWords, sentences, stabilityWords } from './captionWords'
+
+/** What there is to see in gain and phase over frequency. */
+export function captionOfMagnitudePhase({ title, curves: [main] }: LoopFigureData): string {
+  const { analysis } = main
+  const bars = hasMargins(analysis)
+    ? 'Vertical bars are margins: of phase at each gain crossover, to an odd multiple of 180 deg; of gain at each phase crossover, to 0 dB.'
+    : ''
+  return sentences(
+    `${title}, ${main.name}: gain and phase of the loop gain over frequency, with ${countWords(analysis.gainCrossovers.length, 'gain crossover')} and ${countWords(analysis.phaseCrossovers.length, 'phase crossover')}, each marked on both. Bands of buff tint: gain above one.`,
+    stabilityWords(analysis),
+    bars,
+    measuredWords(main.samples !== undefined, main.untrusted?.length ?? 0, false),
+  )
+}

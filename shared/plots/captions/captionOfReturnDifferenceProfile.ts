@@ -1,0 +1,15 @@
+import type { LoopFigureData } from '../FigureData'
+import { countWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
+
+/** What there is to see in a return difference profile. */
+export function captionOfReturnDifferenceProfile({ title, curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
+  const tint = requiredVectorMargin === null
+    ? 'In the tinted part the closed loop amplifies disturbances.'
+    : 'In the tinted part the closed loop amplifies disturbances; the curve must stay above the dashed line.'
+  return sentences(
+    `${title}, ${main.name}: the return difference |1 + L|, the distance of the loop gain to −1, over frequency, with ${countWords(main.analysis.closestApproaches.length, 'closest approach')}. ${tint}`,
+    stabilityWords(main.analysis),
+    nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
+    measuredWords(main.samples !== undefined, main.untrusted?.length ?? 0, false),
+  )
+}

@@ -1,0 +1,45 @@
+import { formatDistance } from '../../formatting/formatDistance'
+import { formatFrequency } from '../../formatting/formatFrequency'
+import type { FrequencyUnit, LoopAnalysis } from '../../types/analysis'
+import { hasMargins } from '../text/markWords'
+
+/** '3 gain crossovers', '1 phase crossover', 'no closest approach'. */
+export function countWords(count: number, noun: string): string {
+  const plural = noun.endsWith('h') ? `${noun}es` : `${noun}s`
+  if (count === 0) return `no ${noun}`
+  return `${count} ${count === 1 ? noun : plural}`
+}
+
+/** 'The loop gain comes nearest to -1 at 81.50 rad/s, at a distance of 0.435.', with how that stands to the criterion. */
+export function nearestWords(analysis: LoopAnalysis, required: number | null, unit: FrequencyUnit): string {
+  const { vectorMargin } = analysis
+  if (!vectorMargin) return ''
+  const place = vectorMargin.frequency === 'infinity'
+    ? 'towards infinite frequency'
+    : vectorMargin.frequency === 0 ? 'at zero frequency' : `at ${formatFrequency(vectorMargin.frequency, unit)}`
+  const nearest = `The loop gain comes nearest to −1 ${place}, at a distance of ${formatDistance(vectorMargin.distance)}`
+  if (required === null || !hasMargins(analysis)) return `${nearest}.`
+  return `${nearest}; required: ${formatDistance(required)}.`
+}
+
+/** A sentence for a loop whose closed loop is not stable, or of which that cannot be told; nothing for a stable one. */
+export function stabilityWords(analysis: LoopAnalysis): string {
+  switch (analysis.stability.verdict) {
+    case 'stable': return ''
+    case 'unstable': return 'The closed loop is unstable: distances to −1 are shown, and no margins.'
+    case 'marginal': return 'The loop gain passes through −1: the closed loop is on the boundary of stability and has no margins.'
+    case 'undetermined': return 'Whether the closed loop is stable cannot be told from the data: distances to −1 are shown, and no margins.'
+  }
+}
+
+/** How measured data are drawn, where there are any. */
+export function measuredWords(measured: boolean, gaps: number, inPlane: boolean): string {
+  if (!measured) return ''
+  const points = inPlane ? 'Points are the measured samples, with their 95 % confidence discs where coherence was recorded.' : 'Points are the measured samples.'
+  return gaps > 0 ? `${points} The line is dotted${inPlane ? '' : ' and the band hatched'} where the data cannot be trusted between samples.` : points
+}
+
+/** Sentences joined, empty ones left out. */
+export function sentences(...parts: string[]): string {
+  return parts.filter(part => part !== '').join(' ')
+}

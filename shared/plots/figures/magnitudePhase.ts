@@ -1,0 +1,208 @@
+import type { DrawFigure, FigureMark, FigureOptions } from '../Figure'
+import type { FigureCurve, LoopFigureData } from '../FigureData'
+import type { Pen } from '../Pen'
+import type { CurveViews } from '../curves/curveViews'
+import type { Rectangle } from '../curves/Rectangle'
+import { formatGainMargin } from '../../formatting/formatGainMargin'
+import { formatPhaseMargin } from '../../formatting/formatPhaseMargin'
+import { curveViews } from '../curves/curveViews'
+import type { PhaseWindow } from '../curves/phaseWindow'
+import { phaseWindow, shownPhase } from '../curves/phaseWindow'
+import { stretchesAboveOne } from '../curves/stretchesAboveOne'
+import { valueOfView } from '../curves/valueOfView'
+import { wrapPhase } from '../curves/wrapPhase'
+import { LabelField } from '../labels/LabelField'
+import { drawCurve } from '../marks/drawCurve'
+import { drawCurveKey } from '../marks/drawCurveKey'
+import { drawFrequencyGrid, drawFrequencyNumbers, frequencyAxisHeight, numberOverhang } from '../marks/drawFrequencyAxis'
+import { drawLabel } from '../marks/drawLabel'
+import { drawLevel, drawLevels } from '../marks/drawLevels'
+import { drawApproachMark, drawGainMark, drawPhaseMark, markGroup } from '../marks/drawMark'
+import { drawSamples } from '../marks/drawSamples'
+import { drawHalfSampleRate, drawUntrusted } from '../marks/drawUntrusted'
+import type { LoopMark } from '../marks/loopMarks'
+import { loopMarks, nearestApproach } from '../marks/loopMarks'
+import { gainWindow } from '../scales/gainWindow'
+import type { AxisScale } from '../scales/AxisScale'
+import { linearScale } from '../scales/linearScale'
+import { linearTicks } from '../scales/linearTicks'
+import { logScale } from '../scales/logScale'
+import { hasMargins } from '../text/markWords'
+
+interface Panels {
+  x: AxisScale
+  gain: AxisScale
+  phase: AxisScale
+  upper: Rectangle
+  lower: Rectangle
+}
+
+/**
+ * Gain and phase over frequency, one over the other on one frequency axis, with every crossing marked on both: a gain crossover on the line of 0 dB and,
+ * below it, how far the phase there is from -180 deg; a phase crossover on that line and, above it, how far the gain there is from 0 dB.
+ */
+export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, options) => {
+  const { theme, width } = options
+  const main = data.curves[0]
+  const views = data.curves.map(({ curve }) => curveViews(curve))
+  const window = phaseWindow(views.map(view => view.phase))
+  const keyHeight = drawCurveKey(pen, data.curves, 0, 0, width, theme)
+  const height = options.height ?? Math.round(Math.min(width * 0.82, 620)) + keyHeight
+  const panels = layOut(data, views, window, width, height, keyHeight, options)
+  const { x, gain, phase, upper, lower } = panels
+
+  drawGround(pen, data, panels, options)
+  const fields = { upper: new LabelField(upper), lower: new LabelField(lower) }
+  fields.upper.blockPolylines([[upper.x, gain.toPixel(0), upper.x + upper.width, gain.toPixel(0)]])
+  fields.lower.blockPolylines(criticalPhases(phase).map(value => [lower.x, phase.toPixel(value), lower.x + lower.width, phase.toPixel(value)]))
+  for (let index = data.curves.length - 1; index >= 0; index--) {
+    const figureCurve = data.curves[index]!
+    const xs = figureCurve.curve.frequency.map(x.toPixel)
+    fields.upper.blockPolylines(drawCurve(pen, figureCurve, index, xs, views[index]!.gain.map(gain.toPixel), upper, theme))
+    const wrapped = wrapPhase(figureCurve.curve.frequency, views[index]!, window)
+    const shown: FigureCurve = { ...figureCurve, curve: { ...figureCurve.curve, frequency: wrapped.frequency } }
+    fields.lower.blockPolylines(drawCurve(pen, shown, index, wrapped.frequency.map(x.toPixel), wrapped.phase.map(phase.toPixel), lower, theme))
+  }
+  drawSamples(pen, main.samples, ({ frequency, re, im }) => [x.toPixel(frequency), gain.toPixel(20 * Math.log10(Math.hypot(re, im)))], upper, theme)
+
+  const marks: FigureMark[] = []
+  const labels: (() => void)[] = []
+  for (const mark of loopMarks(main.analysis, data.frequencyUnit)) {
+    if (typeof mark.frequency !== 'number' || mark.frequency < data.range.from || mark.frequency > data.range.to) continue
+    const at = markPlaces(mark, mark.frequency, main, views[0]!, panels, window)
+    if (!at) continue
+    for (const [field, place] of [[fields.upper, at.upper], [fields.lower, at.lower]] as const) field.blockRectangle({ x: at.x - 6, y: place - 6, width: 12, height: 12 })
+    blockBars(fields, mark, at, panels)
+    drawMarkOnBoth(pen, mark, at, data, panels, options)
+    marks.push({ id: mark.id, kind: mark.kind, label: mark.label, x: at.x, y: mark.kind === 'phase' ? at.lower : at.upper })
+    labels.push(() => labelMark(pen, mark, at, fields, main, options))
+  }
+  for (const draw of labels) draw()
+
+  return {
+    width,
+    height,
+    panels: [{ ...upper, xScale: x, yScale: gain }, { ...lower, xScale: x, yScale: phase }],
+    marks,
+    locate: (px, py) => {
+      const inside = [upper, lower].some(panel => px >= panel.x && px <= panel.x + panel.width && py >= panel.y && py <= panel.y + panel.height)
+      return inside ? { frequency: x.toValue(px) } : null
+    },
+  }
+}
+
+function layOut(data: LoopFigureData, views: CurveViews[], window: PhaseWindow, width: number, height: number, top: number, { theme }: FigureOptions): Panels {
+  const size = theme.size.tick
+  const left = size * 4
+  const between = size + 18
+  const room = height - top - size - 10 - between - frequencyAxisHeight(theme)
+  const upper = { x: left, y: top + size + 10, width: width - left - numberOverhang(theme), height: Math.round(room * 0.54) }
+  const lower = { ...upper, y: upper.y + upper.height + between, height: room - upper.height }
+  const { from, to } = gainWindow(views.map(view => view.gain))
+  return {
+    upper,
+    lower,
+    x: logScale(data.range.from, data.range.to, upper.x, upper.x + upper.width),
+    gain: linearScale(from, to, upper.y + upper.height, upper.y),
+    phase: linearScale(window.from, window.to, lower.y + lower.height, lower.y),
+  }
+}
+
+function drawGround(pen: Pen, data: LoopFigureData, { x, gain, phase, upper, lower }: Panels, { theme }: FigureOptions): void {
+  const main = data.curves[0]
+  for (const stretch of stretchesAboveOne(main.analysis.gainCrossovers, (main.curve.re[0] ?? 0) ** 2 + (main.curve.im[0] ?? 0) ** 2 > 1)) {
+    const [from, to] = [x.toPixel(Math.max(stretch.from ?? x.from, x.from)), x.toPixel(Math.min(stretch.to ?? x.to, x.to))]
+    if (to > from) for (const panel of [upper, lower]) pen.rect(from, panel.y, Math.max(1, to - from), panel.height, { fill: theme.buff })
+  }
+  for (const panel of [upper, lower]) {
+    drawFrequencyGrid(pen, x, panel, theme)
+    drawUntrusted(pen, main, x, panel, theme)
+    drawHalfSampleRate(pen, main, x, panel, theme)
+  }
+  drawLevels(pen, gain, linearTicks(gain.from, gain.to, upper.height / 24, [5, 10, 20, 40]), upper, '|L|, dB', theme)
+  drawLevels(pen, phase, linearTicks(phase.from, phase.to, lower.height / 20, [30, 45, 90, 180, 360]), lower, 'phase of L, deg', theme)
+  drawLevel(pen, gain, 0, upper, theme.ink, theme.stroke.axis)
+  for (const critical of criticalPhases(phase)) drawLevel(pen, phase, critical, lower, theme.ink, theme.stroke.axis)
+  drawFrequencyNumbers(pen, x, lower, data.frequencyUnit, theme, 'below')
+}
+
+/** Odd multiples of half a turn within an axis. */
+function criticalPhases({ from, to }: AxisScale): number[] {
+  const list: number[] = []
+  for (let angle = Math.ceil((from - 180) / 360) * 360 + 180; angle <= to; angle += 360) list.push(angle)
+  return list
+}
+
+interface MarkPlaces {
+  x: number
+  /** px in the gain panel, and in the phase panel */
+  upper: number
+  lower: number
+  /** px of the nearest odd multiple of half a turn */
+  critical: number
+}
+
+function markPlaces(mark: LoopMark, frequency: number, main: FigureCurve, views: CurveViews, { x, gain, phase, upper }: Panels, window: PhaseWindow): MarkPlaces | null {
+  const decibels = mark.kind === 'gain' ? 0 : valueOfView(main.curve, views.gain, frequency)
+  const degrees = valueOfView(main.curve, views.phase, frequency)
+  if (decibels === null || degrees === null) return null
+  const shown = shownPhase(degrees, window)
+  const critical = 360 * Math.round((shown - 180) / 360) + 180
+  return {
+    x: x.toPixel(frequency),
+    upper: Math.max(upper.y, Math.min(upper.y + upper.height, gain.toPixel(decibels))),
+    lower: phase.toPixel(mark.kind === 'phase' ? critical : shown),
+    critical: phase.toPixel(critical),
+  }
+}
+
+/** Labels keep off the bars of the margins, too. */
+function blockBars(fields: { upper: LabelField, lower: LabelField }, mark: LoopMark, at: MarkPlaces, { gain }: Panels): void {
+  if (mark.kind === 'gain') fields.lower.blockPolylines([[at.x, at.lower, at.x, at.critical]])
+  else if (mark.kind === 'phase') fields.upper.blockPolylines([[at.x, at.upper, at.x, gain.toPixel(0)]])
+}
+
+function drawMarkOnBoth(pen: Pen, mark: LoopMark, at: MarkPlaces, data: LoopFigureData, { gain }: Panels, options: FigureOptions): void {
+  const { theme } = options
+  const { analysis } = data.curves[0]
+  const primary = mark.kind === 'phase' ? at.lower : at.upper
+  const group = markGroup(pen, { ...mark, x: at.x, y: primary }, options)
+  const vertical = (from: number, to: number) => `M${tenth(at.x)} ${tenth(from)}V${tenth(to)}`
+  const margins = hasMargins(analysis)
+  if (options.interactive) {
+    group.circle(at.x, mark.kind === 'phase' ? at.upper : at.lower, 9, { 'class': 'plot-halo', 'fill': 'none', 'stroke': theme.magenta, 'stroke-width': 2, 'opacity': 0 })
+  }
+  if (mark.kind === 'gain') {
+    if (margins) group.stroke(vertical(at.lower, at.critical), theme.ink, theme.stroke.curve)
+    drawGainMark(group, at.x, at.upper, mark.crossing.slope, theme)
+    drawGainMark(group, at.x, at.lower, mark.crossing.slope, theme)
+  }
+  else if (mark.kind === 'phase') {
+    if (margins) group.stroke(vertical(at.upper, gain.toPixel(0)), theme.sea, theme.stroke.curve)
+    drawPhaseMark(group, at.x, at.upper, theme)
+    drawPhaseMark(group, at.x, at.lower, theme)
+  }
+  else {
+    const nearest = mark.id === `approach-${nearestApproach(analysis)}`
+    const under = data.requiredVectorMargin !== null && mark.crossing.distance < data.requiredVectorMargin
+    const style = nearest ? 'nearest' : under ? 'under' : 'clear'
+    drawApproachMark(group, at.x, at.upper, style, theme)
+    drawApproachMark(group, at.x, at.lower, style, theme)
+  }
+}
+
+/** The margin at a crossing in words, in the panel in which it is measured, where there is room. */
+function labelMark(pen: Pen, mark: LoopMark, at: MarkPlaces, fields: { upper: LabelField, lower: LabelField }, main: FigureCurve, { theme }: FigureOptions): void {
+  if (!hasMargins(main.analysis)) return
+  const size = theme.size.tick
+  if (mark.kind === 'gain') {
+    drawLabel(pen, fields.lower, [{ text: formatPhaseMargin(mark.crossing.phaseMargin), size, fill: theme.ink }], { x: at.x, y: at.lower, gap: 7, reach: 34, prefer: 20 }, theme)
+  }
+  else if (mark.kind === 'phase') {
+    drawLabel(pen, fields.upper, [{ text: formatGainMargin(mark.crossing.gainMargin), size, fill: theme.sea }], { x: at.x, y: at.upper, gap: 7, reach: 34, prefer: 20 }, theme)
+  }
+}
+
+function tenth(value: number): number {
+  return Math.round(value * 10) / 10
+}
