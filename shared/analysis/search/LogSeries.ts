@@ -1,0 +1,151 @@
+import type { AxisLoop } from './AxisLoop'
+import { AXIS_VALUE_SIZE, evaluateAxisLoop } from './evaluateAxisLoop'
+
+/** Degree of all series of the search. */
+export const SERIES_DEGREE = 10
+
+const N = SERIES_DEGREE
+const U = 2 ** -53
+/** Below these |q| that many terms leave less than 1e-18 of a term, which goes into the steady bound. */
+const FEW = [
+  { below: 1e-6, terms: 3 },
+  { below: 1e-3, terms: 6 },
+  { below: 1e-2, terms: 9 },
+]
+
+/**
+ * The complex Taylor series of log L about a point of the axis, with its remainder:
+ *
+ *   log L(j(c + hy)) = sum_{n <= N} (re_n + j im_n) y^n + r(y),   |y| <= 1
+ *   |r^(k)(y)| <= steady[k] + tail[k] |y|^(N + 1 - k),            k = 0..3
+ *
+ * With zeta_k = (c - Im r_k) + j Re r_k and q_k = h/zeta_k a factor adds weight (-1)^(n-1) q_k^n / n to term n; c - Im r_k is a
+ * difference of doubles, so nothing cancels however light the damping. The tail is the sum of the terms left out, with rho = |q|:
+ *   tail0 = sum w rho^(N+1)/((N+1)(1-rho)),  tail1 = sum w rho^(N+1)/(1-rho),  tail2, tail3 its derivatives at y = 1.
+ *
+ * Rounding, u = 2^-53, K factors, P = sum |w| rho/(1-rho), rho <= 1/2: q is right to 8u (two differences, a complex
+ * reciprocal), q^n to 11nu, the sum over the factors adds K + 2, so that the value errs by u(K+13)P, and with sum n rho^n <= 2 rho/(1-rho)
+ * and its like for the derivatives by u(K+24)P, u(K+46)P, u(2K+140)P. The constant term errs by 5u(K+2) + 2u|ln|L|| and the dead
+ * time's 2u(vτ + 2πν). Working on the series later (Taylor shift) errs by (4N+4)u sum |term_n|; it is added here once.
+ * Errors of the model (the corrections of the factors) add sum W/|zeta| 2, 2, 4, 12 to the four (log(1+e), geometric series at rho = 1/2).
+ */
+export class LogSeries {
+  readonly re = new Float64Array(N + 1)
+  readonly im = new Float64Array(N + 1)
+  readonly tail = new Float64Array(4)
+  readonly steady = new Float64Array(4)
+  centre = 0
+  half = 1
+  /** Sum over n >= 1 of |re_n| and |im_n|: how far ln|L| and the phase can stray from the centre, tails included. */
+  spreadRe = 0
+  spreadIm = 0
+
+  private readonly value = new Float64Array(AXIS_VALUE_SIZE)
+
+  /** Expands about jc over |v - c| <= h; every root must be at least 2h from jc. */
+  expand(axis: AxisLoop, c: number, h: number): void {
+    evaluateAxisLoop(axis, c, this.value)
+    this.expandAbout(axis, c, h, Number.NaN)
+  }
+
+  /**
+   * The same with the undamped factors at j `without` left out, so that c may be their very place; the constant term is
+   * then that of the last evaluation and means nothing.
+   */
+  expandAbout(axis: AxisLoop, c: number, h: number, without: number): void {
+    const { re, im, tail } = this
+    this.centre = c
+    this.half = h
+    re.fill(0)
+    im.fill(0)
+    tail.fill(0)
+    const model = axis.hasCorrection && axis.sampleTime !== undefined ? Math.hypot(1, c + h) : 1
+    let absolute = 0
+    let small = 0
+    let error = 0
+    const count = axis.count + (axis.originWeight === 0 ? 0 : 1)
+    for (let k = 0; k < count; k++) {
+      const origin = k === axis.count
+      const x = origin ? c : c - axis.im[k]!
+      const a = origin ? 0 : axis.re[k]!
+      if (x === 0 && a === 0 && c === without) continue
+      const weight = origin ? axis.originWeight : axis.weight[k]!
+      const scale = h / (x * x + a * a)
+      const qRe = x * scale
+      const qIm = -a * scale
+      const rho2 = qRe * qRe + qIm * qIm
+      const rho = Math.sqrt(rho2)
+      let terms = N
+      if (rho < 1e-2) terms = rho < FEW[0]!.below ? 3 : rho < FEW[1]!.below ? 6 : 9
+      let pRe = weight * qRe
+      let pIm = weight * qIm
+      re[1] = re[1]! + pRe
+      im[1] = im[1]! + pIm
+      for (let n = 2; n <= terms; n++) {
+        const t = -(pRe * qRe - pIm * qIm)
+        pIm = -(pRe * qIm + pIm * qRe)
+        pRe = t
+        re[n] = re[n]! + pRe
+        im[n] = im[n]! + pIm
+      }
+      const size = Math.abs(weight)
+      const geometric = 1 / (1 - rho)
+      absolute += size * rho * geometric
+      if (terms === N) {
+        const rho4 = rho2 * rho2
+        // size rho^(N+1), N = 10
+        const last = size * rho4 * rho4 * rho2 * rho
+        const g = last * geometric
+        tail[0] = tail[0]! + g
+        tail[2] = tail[2]! + g * (N + rho * geometric)
+        tail[3] = tail[3]! + g * (N * (N - 1) + 2 * N * rho * geometric + 2 * rho2 * geometric * geometric)
+      }
+      else {
+        small += size * rho ** (terms + 1) * geometric
+      }
+      if (axis.hasCorrection && !origin) error += axis.correction[k]! * rho / h
+    }
+    tail[1] = tail[0]!
+    tail[0] = tail[0]! / (N + 1)
+    for (let n = 2; n <= N; n++) {
+      re[n] = re[n]! / n
+      im[n] = im[n]! / n
+    }
+    im[1] = im[1]! - h * axis.deadTime
+    re[0] = this.value[0]!
+    im[0] = this.value[1]!
+    this.bound(axis, absolute, small, error * model, c + h)
+  }
+
+  /** Fills `steady` and the spreads from the sums of the factors. */
+  bound(axis: AxisLoop, absolute: number, small: number, error: number, reach: number): void {
+    const { re, im, tail, steady } = this
+    const k = axis.count + 2
+    let sum0 = 0
+    let sum1 = 0
+    let sum2 = 0
+    let sum3 = 0
+    let spreadRe = 0
+    let spreadIm = 0
+    for (let n = 1; n <= N; n++) {
+      const sizeRe = Math.abs(re[n]!)
+      const sizeIm = Math.abs(im[n]!)
+      spreadRe += sizeRe
+      spreadIm += sizeIm
+      const size = sizeRe + sizeIm
+      sum0 += size
+      sum1 += n * size
+      sum2 += n * (n - 1) * size
+      sum3 += n * (n - 1) * (n - 2) * size
+    }
+    const slack = (4 * N + 4) * U
+    steady[0] = U * ((k + 13) * absolute + 5 * k + 2 * Math.abs(re[0]!) + 8
+      + 2 * reach * axis.deadTime + 13 * axis.delayInSamples) + small + 2.1 * error + slack * sum0
+    steady[1] = U * ((k + 24) * absolute) + 4 * small + 2.1 * error + slack * sum1
+    steady[2] = U * ((k + 46) * absolute) + 40 * small + 4.2 * error + slack * sum2
+    steady[3] = U * ((2 * k + 140) * absolute) + 400 * small + 12.6 * error + slack * sum3
+    const rest = tail[0]! + steady[0]!
+    this.spreadRe = spreadRe + rest
+    this.spreadIm = spreadIm + rest
+  }
+}
