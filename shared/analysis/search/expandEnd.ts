@@ -1,5 +1,6 @@
 import type { AxisLoop } from './AxisLoop'
-import { LogSeries, SERIES_DEGREE } from './LogSeries'
+import type { LogSeries } from './LogSeries'
+import { SERIES_DEGREE } from './LogSeries'
 
 const N = SERIES_DEGREE
 const HALF_PI = Math.PI / 2

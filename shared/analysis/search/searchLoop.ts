@@ -42,7 +42,7 @@ export function searchLoop(axis: AxisLoop, options: SearchOptions): SearchResult
   const search = new AxisSearch(axis)
   const { floorLog } = options
   const constant = ties.constantGain && ties.real
-  const wanted = { floorLog, gain: !ties.constantGain, phase: !ties.real, distance: !constant }
+  const wanted = { floorLog, gain: !ties.constantGain, phase: !ties.real, distance: !constant && !ties.constantDistance }
   const origin = settleEnd(axis, 'origin', wanted)
   const turning = axis.deadTime > 0
   const infinity = settleEnd(axis, 'infinity', turning && axis.degree >= 0 ? { ...wanted, phase: false, distance: false } : wanted)
@@ -97,8 +97,8 @@ function tellFlatEnds(exceptions: SearchException[], origin: SettledEnd, infinit
     [infinity, infinity.edge, Number.POSITIVE_INFINITY, 'the high end of the axis'],
   ] as const) {
     if (end.unity) {
-      const at = end === origin ? 0 : Number.POSITIVE_INFINITY
-      exceptions.push({ from: at, to: at, code: 'unity at an end', reason: `|L| is exactly 1 at ${name}: no crossing, but its limit` })
+      const [start, stop] = end === origin ? [0, 0] : [infinity.edge, Number.POSITIVE_INFINITY]
+      exceptions.push({ from: start, to: stop, code: 'unity at an end', reason: `|L| is exactly 1 at ${name}: no crossing, but its limit` })
     }
     for (const what of end.flat) {
       if (what === 'gain' && end.unity) continue

@@ -1,0 +1,16 @@
+import type { LoopAnalysis, LoopInput } from '../types/analysis'
+import { AnalysisInputError } from './AnalysisInputError'
+import { analyseFactored } from './analyseFactored'
+import { factorsOfInput } from './factorsOfInput'
+
+/**
+ * The complete analysis of one loop: every gain and phase crossover, every closest approach to -1, the vector margin, the closed-loop verdict,
+ * the summary of margins, and what of it is proven. Pure: the same input gives the same result anywhere.
+ * Frequencies in and out are in the input's unit; conventions in README.md of this folder.
+ *
+ * @throws AnalysisInputError where the input cannot be analysed; `readLoopInput` makes a LoopInput of unknown data
+ */
+export function analyseLoop(input: LoopInput): LoopAnalysis {
+  if ('numerator' in input || 'zeros' in input) return analyseFactored(factorsOfInput(input), input)
+  throw new AnalysisInputError('This source form is not analysed yet.', 'expression' in input ? 'expression' : 'measured')
+}
