@@ -98,6 +98,8 @@ export interface PhaseCrossover {
   slope: CrossingSlope
   /** |1 + L| at this frequency */
   distance?: number
+  /** measured: the 95 % confidence circle of a sample beside it holds L = 0, so its phase is noise */
+  withinNoise?: boolean
 }
 
 export interface ClosestApproach {
