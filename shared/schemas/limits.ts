@@ -17,5 +17,5 @@ export const limits = {
   /** loops, or operating conditions, of one system */
   rows: 1000,
   /** bytes of one uploaded measurement */
-  uploadBytes: 20_000_000,
+  uploadBytes: 20 * 1024 * 1024,
 } as const

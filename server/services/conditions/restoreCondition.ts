@@ -1,0 +1,22 @@
+import { AppError } from '#shared/errors/AppError'
+import type { OperatingCondition } from '#shared/types/system'
+import { recordAudit } from '../../audit/recordAudit'
+import { writeTransaction } from '../../database/database'
+import { ConditionRow } from '../../database/models/ConditionRow'
+import { presentCondition } from '../../presenters/presentCondition'
+import { assertCodeFree } from '../assertCodeFree'
+import type { ServiceContext } from '../context'
+
+/** Brings a deleted operating condition back to its place. Throws 'conflict' where its code has been taken since. */
+export function restoreCondition(conditionId: number, context: ServiceContext): Promise<OperatingCondition> {
+  return writeTransaction(async () => {
+    const condition = await ConditionRow.unscoped().findByPk(conditionId)
+    if (condition === null) throw new AppError('notFound', 'There is no such operating condition.')
+    if (condition.deletedAt !== null) {
+      await assertCodeFree(ConditionRow, condition.systemId, condition.code)
+      await condition.update({ deletedAt: null })
+      await recordAudit(context, 'condition restored', { systemId: condition.systemId, subjectId: conditionId })
+    }
+    return presentCondition(condition)
+  })
+}

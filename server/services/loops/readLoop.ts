@@ -1,0 +1,39 @@
+import type { Criterion } from '#shared/types/criterion'
+import type { Source } from '#shared/types/source'
+import type { BoardCell, Loop, OperatingCondition, Parameter, System } from '#shared/types/system'
+import { SourceRow } from '../../database/models/SourceRow'
+import { presentLoop } from '../../presenters/presentLoop'
+import { presentSource } from '../../presenters/presentSource'
+import { presentSystem } from '../../presenters/presentSystem'
+import { listConditions } from '../conditions/listConditions'
+import type { OpenContext } from '../context'
+import { listCriteria } from '../criteria/listCriteria'
+import { listParameters } from '../parameters/listParameters'
+import { findSystem } from '../systems/findSystem'
+import { judgeCells } from '../systems/judgeCells'
+import { findLoop } from './findLoop'
+
+export interface LoopContent {
+  loop: Loop
+  system: System
+  conditions: OperatingCondition[]
+  parameters: Parameter[]
+  criteria: Criterion[]
+  /** all of them, also those set aside */
+  sources: Source[]
+  /** one for each condition, by the source of record */
+  cells: BoardCell[]
+}
+
+/** A loop with all that its page shows. */
+export async function readLoop(loopId: number, context: OpenContext): Promise<LoopContent> {
+  const loop = await findLoop(loopId)
+  const [systemRow, conditions, parameters, criteria] = await Promise.all([
+    findSystem(loop.systemId), listConditions(loop.systemId), listParameters(loop.systemId), listCriteria(loop.systemId),
+  ])
+  const system = presentSystem(systemRow)
+  const conditionIds = conditions.map(condition => condition.id)
+  const sources = await SourceRow.findAll({ where: { loopId, conditionId: conditionIds }, order: ['id'] })
+  const cells = await judgeCells(system, [loopId], conditionIds, criteria, context)
+  return { loop: presentLoop(loop), system, conditions, parameters, criteria, sources: sources.map(presentSource), cells }
+}

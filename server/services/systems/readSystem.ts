@@ -1,0 +1,24 @@
+import type { Criterion } from '#shared/types/criterion'
+import type { Loop, OperatingCondition, System } from '#shared/types/system'
+import { ReportRow } from '../../database/models/ReportRow'
+import { presentSystem } from '../../presenters/presentSystem'
+import { listConditions } from '../conditions/listConditions'
+import { listCriteria } from '../criteria/listCriteria'
+import { listLoops } from '../loops/listLoops'
+import { findSystem } from './findSystem'
+
+export interface SystemContent {
+  system: System
+  loops: Loop[]
+  conditions: OperatingCondition[]
+  criteria: Criterion[]
+  reportCount: number
+}
+
+/** A system with its loops and conditions in their order. */
+export async function readSystem(systemId: number): Promise<SystemContent> {
+  const [system, loops, conditions, criteria, reportCount] = await Promise.all([
+    findSystem(systemId), listLoops(systemId), listConditions(systemId), listCriteria(systemId), ReportRow.count({ where: { systemId } }),
+  ])
+  return { system: presentSystem(system), loops, conditions, criteria, reportCount }
+}
