@@ -53,6 +53,8 @@ export interface DrawnFigure {
   marks: FigureMark[]
   /** The frequency that a place (px) stands for, null beside the panels. */
   locate: (x: number, y: number) => FigurePlace | null
+  /** Where the main curve is at a frequency (px), in each panel that shows it there. */
+  pointsAt: (frequency: number) => { x: number, y: number }[]
 }
 
 /** A figure: a pure function from data and options to drawn elements. */

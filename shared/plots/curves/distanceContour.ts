@@ -6,7 +6,7 @@ export interface GainPhasePoint {
   gain: number
 }
 
-const steps = 120
+const steps = 80
 
 /**
  * The line of equal distance to -1 in the plane of gain over phase: L = -1 + d exp(j a), closed for d < 1. The circle of d = 1 passes through L = 0 and

@@ -1,4 +1,4 @@
-import type { DrawFigure, DrawnFigure, FigureMark, FigureOptions } from '../Figure'
+import type { DrawFigure, FigureMark, FigureOptions } from '../Figure'
 import type { FigureCurve, LoopFigureData } from '../FigureData'
 import type { Pen } from '../Pen'
 import type { Rectangle } from '../curves/Rectangle'
@@ -7,24 +7,29 @@ import { formatFrequency } from '../../formatting/formatFrequency'
 import { formatGainMargin } from '../../formatting/formatGainMargin'
 import { formatPhaseMargin } from '../../formatting/formatPhaseMargin'
 import { circlePath } from '../curves/circlePath'
+import { curveUpTo } from '../curves/curveUpTo'
+import { curveViews } from '../curves/curveViews'
 import { interpolateCurve } from '../curves/interpolateCurve'
 import { nearestOnCurve } from '../curves/nearestOnCurve'
+import { pointsInside } from '../curves/pointsInside'
 import { shoalDistances } from '../curves/shoalDistances'
+import { windingStart } from '../curves/windingStart'
 import { LabelField } from '../labels/LabelField'
 import { drawCurve } from '../marks/drawCurve'
 import { drawCurveKey } from '../marks/drawCurveKey'
 import { drawDirection, drawFrequencyMarks } from '../marks/drawFrequencyMarks'
 import { drawLabel } from '../marks/drawLabel'
 import { drawApproachMark, drawGainMark, drawPhaseMark, markGroup } from '../marks/drawMark'
+import { drawStanding } from '../marks/drawStanding'
 import type { LoopMark } from '../marks/loopMarks'
 import { loopMarks, nearestApproach } from '../marks/loopMarks'
+import { withoutCovered } from '../marks/withoutCovered'
 import type { AxisScale } from '../scales/AxisScale'
 import { linearScale } from '../scales/linearScale'
 import { linearTicks } from '../scales/linearTicks'
 import { changeWords, hasMargins } from '../text/markWords'
 import { formatSounding } from '../text/formatSounding'
 import { formatTick } from '../text/formatTick'
-import { textWidth } from '../text/textWidth'
 import type { PlotTheme } from '../theme'
 
 /** Half the height of the neighbourhood of -1 that is shown, and its right edge: the same for every loop, so that loops compare at a glance. */
@@ -53,10 +58,10 @@ export const drawBerthChart: DrawFigure<LoopFigureData> = (pen, data, options) =
   const plane = layOut(width, options.height ?? Math.round(Math.min(width * 0.74, 600)) + keyHeight, keyHeight, theme)
   const { panel } = plane
   const field = new LabelField(panel)
-  field.blockRectangle({ x: panel.x, y: panel.y, width: textWidth(imaginaryTitle, theme.size.tick) + 12, height: theme.size.tick + 10 })
   const main = data.curves[0]
 
   drawGround(pen, plane, data.requiredVectorMargin, theme)
+  drawStanding(pen, main.analysis, panel, theme)
   drawDiscs(pen, plane, main, theme)
 
   // The curves, the main one last so that it lies on top.
@@ -64,24 +69,29 @@ export const drawBerthChart: DrawFigure<LoopFigureData> = (pen, data, options) =
   for (let index = data.curves.length - 1; index >= 0; index--) {
     const figureCurve = data.curves[index]!
     const { xs, ys } = project(figureCurve, plane)
-    const pieces = drawCurve(pen, figureCurve, index, xs, ys, panel, theme)
+    const end = windingEnd(figureCurve, plane)
+    const pieces = drawCurve(pen, figureCurve, index, xs.subarray(0, end), ys.subarray(0, end), panel, theme)
     field.blockPolylines(pieces)
-    if (index === 0) mainPieces = pieces
+    if (index === 0) {
+      mainPieces = pieces
+      drawWinding(pen, field, figureCurve, end, plane, theme)
+    }
   }
   const marks = placeMarks(main, data, plane)
   const berth = drawBerth(pen, plane, main, marks, data, theme)
   blockMarks(field, plane, marks, data.requiredVectorMargin, berth)
-  for (const mark of marks) drawLoopMark(pen, mark, data, options)
+  const shown = withoutCovered(marks)
+  for (const mark of marks) drawLoopMark(pen, mark, shown.has(mark), data, options)
   drawCriticalPoint(pen, field, plane, theme)
   drawNearestLabel(pen, field, marks, main, data, theme)
   drawRingLabels(pen, field, plane, data.requiredVectorMargin, theme)
-  drawSoundings(pen, field, marks, main, data, theme)
+  drawSoundings(pen, field, [...shown], main, data, theme)
   drawDirection(pen, mainPieces, marks, theme)
   const { xs, ys } = project(main, plane)
-  drawFrequencyMarks(pen, field, main, xs, ys, panel, theme)
-  drawMarginLabels(pen, field, marks, main, theme)
+  drawFrequencyMarks(pen, field, curveUpTo(main.curve, windingEnd(main, plane)), xs, ys, panel, theme)
+  drawMarginLabels(pen, field, [...shown], main, theme)
 
-  const drawn: DrawnFigure = {
+  return {
     width,
     height: panel.y + panel.height + theme.size.tick + 22,
     panels: [{ ...panel, xScale: plane.x, yScale: plane.y }],
@@ -90,15 +100,19 @@ export const drawBerthChart: DrawFigure<LoopFigureData> = (pen, data, options) =
       const frequency = nearestOnCurve(main.curve, xs, ys, x, y, 40)
       return frequency === null ? null : { frequency }
     },
+    pointsAt: (frequency) => {
+      const value = interpolateCurve(main.curve, frequency)
+      return value ? pointsInside([[plane.x.toPixel(value.re), plane.y.toPixel(value.im), panel]]) : []
+    },
   }
-  return drawn
 }
 
 type PlacedMark = LoopMark & FigureMark
 
 function layOut(width: number, height: number, top: number, theme: PlotTheme): Plane {
   const left = theme.size.tick * 3
-  const panel = { x: left, y: top + 4, width: width - left - 2, height: height - top - 4 - theme.size.tick - 22 }
+  const above = theme.size.tick + 10
+  const panel = { x: left, y: top + above, width: width - left - 2, height: height - top - above - theme.size.tick - 22 }
   const unit = panel.height / (2 * halfHeight)
   const spanX = panel.width / unit
   return {
@@ -129,7 +143,26 @@ function drawGround(pen: Pen, { panel, x, y, unit }: Plane, required: number | n
   for (const value of linearTicks(x.from, x.to, 9, [0.5, 1])) pen.text(formatTick(value), x.toPixel(value), baseline, { size, fill: theme.slate, anchor: 'middle' })
   for (const value of linearTicks(y.from, y.to, 6, [0.5, 1])) pen.text(formatTick(value), panel.x - 6, y.toPixel(value) + size * 0.36, { size, fill: theme.slate, anchor: 'end' })
   pen.text('real part of L', panel.x + panel.width, baseline + size + 3, { size, fill: theme.slate, anchor: 'end' })
-  pen.text(imaginaryTitle, panel.x + 6, panel.y + size + 4, { size, fill: theme.slate })
+  pen.text(imaginaryTitle, panel.x, panel.y - 6, { size, fill: theme.slate })
+}
+
+/** px; turns closer than this are told by a disc. */
+const closestTurns = 2.5
+
+/** Number of samples up to where the curve winds about the origin too closely to be drawn. */
+function windingEnd({ curve }: FigureCurve, { unit }: Plane): number {
+  return windingStart(curveViews(curve).phase, curve.re.map((re, i) => Math.hypot(re, curve.im[i]!) * unit), closestTurns)
+}
+
+/** The disc in which the curve winds on. */
+function drawWinding(pen: Pen, field: LabelField, { curve }: FigureCurve, end: number, { x, y, unit }: Plane, theme: PlotTheme): void {
+  if (end >= curve.re.length) return
+  const radius = Math.hypot(curve.re[end]!, curve.im[end]!) * unit
+  const [cx, cy] = [x.toPixel(0), y.toPixel(0)]
+  pen.circle(cx, cy, radius, { fill: theme.slate })
+  field.blockCircle(cx, cy, radius)
+  const from = formatTick(Number(curve.frequency[end]!.toPrecision(2)))
+  drawLabel(pen, field, [{ text: `from ${from} on L winds in here`, size: theme.size.tick, fill: theme.ink }], { x: cx, y: cy, gap: radius + 8, reach: radius + 90, prefer: -45 }, theme)
 }
 
 /** Confidence discs of the measured samples, or their points. */
@@ -182,9 +215,10 @@ function blockMarks(field: LabelField, { x, y, unit }: Plane, marks: PlacedMark[
   if (berth?.kind === 'approach') field.blockPolylines([circle(cx, berth.crossing.distance * unit)])
 }
 
-function drawLoopMark(pen: Pen, mark: PlacedMark, data: LoopFigureData, options: FigureOptions): void {
+function drawLoopMark(pen: Pen, mark: PlacedMark, shown: boolean, data: LoopFigureData, options: FigureOptions): void {
   const { theme } = options
   const group = markGroup(pen, mark, options)
+  if (!shown) return
   if (mark.kind === 'gain') drawGainMark(group, mark.x, mark.y, mark.crossing.slope, theme)
   else if (mark.kind === 'phase') drawPhaseMark(group, mark.x, mark.y, theme)
   else {

@@ -27,7 +27,7 @@ interface Columns {
 export const drawCrossingChart: DrawFigure<CrossingChartData> = (pen, data, options) => {
   const { theme, width } = options
   const columns = measureColumns(data.rows, width, theme)
-  const rowHeight = columns.stacked ? 56 : theme.name === 'screen' ? 42 : 35
+  const rowHeight = columns.stacked ? 66 : theme.name === 'screen' ? 42 : 35
   const keyHeight = drawCrossingChartKey(pen, width, theme)
   const top = keyHeight + frequencyAxisHeight(theme) + 2
   const left = columns.stacked ? 4 : columns.code + columns.name
@@ -40,7 +40,7 @@ export const drawCrossingChart: DrawFigure<CrossingChartData> = (pen, data, opti
   const marks: FigureMark[] = []
   data.rows.forEach((row, i) => {
     const rowTop = top + i * rowHeight
-    const middle = columns.stacked ? rowTop + 38 : Math.round(rowTop + rowHeight * 0.52)
+    const middle = columns.stacked ? rowTop + 46 : Math.round(rowTop + rowHeight * 0.52)
     drawRowWords(pen, row, columns, panel, rowTop, middle, options)
     marks.push(...drawCrossingRow(pen, row, data.frequencyUnit, scale, panel, middle, options))
   })
@@ -50,6 +50,7 @@ export const drawCrossingChart: DrawFigure<CrossingChartData> = (pen, data, opti
     height: top + panel.height + 4,
     panels: [{ ...panel, xScale: scale, yScale: scale }],
     marks,
+    pointsAt: () => [],
     locate: (x, y) => {
       if (x < panel.x || x > panel.x + panel.width || y < panel.y || y >= panel.y + panel.height) return null
       const row = data.rows[Math.floor((y - panel.y) / rowHeight)]

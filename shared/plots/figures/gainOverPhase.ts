@@ -1,7 +1,9 @@
 import type { DrawFigure, FigureMark, FigureOptions } from '../Figure'
 import type { FigureCurve, LoopFigureData } from '../FigureData'
 import type { Pen } from '../Pen'
+import { curveUpTo } from '../curves/curveUpTo'
 import { clipPolyline } from '../curves/clipPolyline'
+import type { CurveViews } from '../curves/curveViews'
 import { curveViews } from '../curves/curveViews'
 import { distanceContour } from '../curves/distanceContour'
 import { nearestOnCurve } from '../curves/nearestOnCurve'
@@ -9,8 +11,10 @@ import { pathData } from '../curves/pathData'
 import type { PhaseWindow } from '../curves/phaseWindow'
 import { phaseWindow, shownPhase } from '../curves/phaseWindow'
 import type { Rectangle } from '../curves/Rectangle'
+import { pointsInside } from '../curves/pointsInside'
 import { shoalDistances } from '../curves/shoalDistances'
 import { valueOfView } from '../curves/valueOfView'
+import { windingStart } from '../curves/windingStart'
 import { wrapPhase } from '../curves/wrapPhase'
 import { formatGainMargin } from '../../formatting/formatGainMargin'
 import { formatPhaseMargin } from '../../formatting/formatPhaseMargin'
@@ -18,12 +22,15 @@ import { LabelField } from '../labels/LabelField'
 import { drawCurve } from '../marks/drawCurve'
 import { drawCurveKey } from '../marks/drawCurveKey'
 import { drawDirection, drawFrequencyMarks } from '../marks/drawFrequencyMarks'
+import { drawHatching } from '../marks/drawHatching'
 import { drawLabel } from '../marks/drawLabel'
 import { drawLevel, drawLevels } from '../marks/drawLevels'
 import { drawApproachMark, drawGainMark, drawPhaseMark, markGroup } from '../marks/drawMark'
 import { drawSamples } from '../marks/drawSamples'
+import { drawStanding } from '../marks/drawStanding'
 import type { LoopMark } from '../marks/loopMarks'
 import { loopMarks, nearestApproach } from '../marks/loopMarks'
+import { withoutCovered } from '../marks/withoutCovered'
 import { gainWindow } from '../scales/gainWindow'
 import type { AxisScale } from '../scales/AxisScale'
 import { linearScale } from '../scales/linearScale'
@@ -67,18 +74,21 @@ export const drawGainOverPhase: DrawFigure<LoopFigureData> = (pen, data, options
   const criticals = criticalPlaces(plane)
 
   drawGround(pen, plane, criticals, data.requiredVectorMargin, options)
+  drawStanding(pen, main.analysis, panel, theme)
   let mainPieces: number[][] = []
-  let mainShown = { xs: new Float64Array(0), ys: new Float64Array(0), shown: main }
+  let mainShown = { xs: new Float64Array(0), ys: new Float64Array(0), shown: main, end: 0 }
   for (let index = data.curves.length - 1; index >= 0; index--) {
     const figureCurve = data.curves[index]!
-    const wrapped = wrapPhase(figureCurve.curve.frequency, views[index]!, window)
+    const end = windingStart(views[index]!.phase, views[index]!.gain.map(plane.y.toPixel), closestTurns)
+    const wrapped = wrapPhase(figureCurve.curve.frequency, viewsUpTo(views[index]!, end), window)
     const shown: FigureCurve = { ...figureCurve, curve: { ...figureCurve.curve, frequency: wrapped.frequency } }
     const [xs, ys] = [wrapped.phase.map(plane.x.toPixel), wrapped.gain.map(plane.y.toPixel)]
     const pieces = drawCurve(pen, shown, index, xs, ys, panel, theme)
     field.blockPolylines(pieces)
     if (index === 0) {
       mainPieces = pieces
-      mainShown = { xs, ys, shown }
+      mainShown = { xs, ys, shown, end }
+      drawWinding(pen, field, figureCurve, views[0]!, end, plane, options)
     }
   }
   drawSamples(pen, main.samples, sample => samplePlace(sample, main, views[0]!.phase, window, plane), panel, theme)
@@ -87,15 +97,16 @@ export const drawGainOverPhase: DrawFigure<LoopFigureData> = (pen, data, options
   for (const { x, y } of marks) field.blockRectangle({ x: x - 6, y: y - 6, width: 12, height: 12 })
   blockGround(field, plane, criticals, data.requiredVectorMargin)
   for (const x of criticals) field.blockRectangle({ x: x - 7, y: plane.y.toPixel(0) - 7, width: 14, height: 14 })
-  for (const mark of marks) drawPlaneMark(pen, mark, data, options)
+  const shownMarks = withoutCovered(marks)
+  for (const mark of marks) drawPlaneMark(pen, mark, shownMarks.has(mark), data, options)
   for (const x of criticals) {
     const y = plane.y.toPixel(0)
     pen.stroke(`M${tenth(x - 6)} ${tenth(y)}h12M${tenth(x)} ${tenth(y - 6)}v12`, theme.ink, 2)
-    drawLabel(pen, field, [{ text: '−1', size: theme.size.label, fill: theme.ink, face: 'semibold' }], { x, y, gap: 10, reach: 40, prefer: 45 }, theme)
+    drawLabel(pen, field, [{ text: '−1', size: theme.size.label, fill: theme.ink, face: 'semibold' }], { x, y, gap: 13, reach: 40, prefer: 45 }, theme)
   }
-  for (const mark of marks) labelPlaneMark(pen, field, mark, data, options)
+  for (const mark of shownMarks) labelPlaneMark(pen, field, mark, data, options)
   drawDirection(pen, mainPieces, marks, theme)
-  drawFrequencyMarks(pen, field, main, views[0]!.phase.map(phase => plane.x.toPixel(shownPhase(phase, window))), views[0]!.gain.map(plane.y.toPixel), panel, theme)
+  drawFrequencyMarks(pen, field, curveUpTo(main.curve, mainShown.end), views[0]!.phase.map(phase => plane.x.toPixel(shownPhase(phase, window))), views[0]!.gain.map(plane.y.toPixel), panel, theme)
 
   return {
     width,
@@ -106,7 +117,33 @@ export const drawGainOverPhase: DrawFigure<LoopFigureData> = (pen, data, options
       const frequency = nearestOnCurve(mainShown.shown.curve, mainShown.xs, mainShown.ys, x, y, 40)
       return frequency === null ? null : { frequency }
     },
+    pointsAt: (frequency) => {
+      const gain = valueOfView(main.curve, views[0]!.gain, frequency)
+      const phase = valueOfView(main.curve, views[0]!.phase, frequency)
+      return gain === null || phase === null ? [] : pointsInside([[plane.x.toPixel(shownPhase(phase, window)), plane.y.toPixel(gain), panel]])
+    },
   }
+}
+
+/** px; turns closer than this are told by a band. */
+const closestTurns = 2.5
+
+function viewsUpTo({ gain, phase, distance }: CurveViews, end: number): CurveViews {
+  return { gain: gain.subarray(0, end), phase: phase.subarray(0, end), distance: distance.subarray(0, end) }
+}
+
+/** The band of gain in which the curve winds on. */
+function drawWinding(pen: Pen, field: LabelField, { curve }: FigureCurve, { gain }: CurveViews, end: number, { panel, y }: Plane, { theme }: FigureOptions): void {
+  if (end >= gain.length) return
+  const top = Math.max(panel.y, Math.min(y.toPixel(gain[end]!), y.toPixel(gain[gain.length - 1]!)))
+  const bottom = Math.min(panel.y + panel.height, Math.max(y.toPixel(gain[end]!), y.toPixel(gain[gain.length - 1]!)))
+  if (bottom <= top) return
+  const band = { x: panel.x, y: top, width: panel.width, height: bottom - top }
+  drawHatching(pen, band.x, band.x + band.width, band, theme)
+  field.blockRectangle(band)
+  const from = formatTick(Number(curve.frequency[end]!.toPrecision(2)))
+  const size = theme.size.tick
+  pen.text(`from ${from} on L winds in this band`, panel.x + panel.width - 6, Math.min(bottom + size + 3, panel.y + panel.height - 4), { size, fill: theme.ink, anchor: 'end' })
 }
 
 function criticalPlaces({ x }: Plane): number[] {
@@ -119,7 +156,8 @@ function drawGround(pen: Pen, { panel, x, y }: Plane, criticals: number[], requi
   // The shoals of every critical point in sight, and of those just beyond the edges.
   const ground = pen.window(panel.x, panel.y, panel.width, panel.height)
   const turn = x.toPixel(360) - x.toPixel(0)
-  const centres = criticals.length > 0 ? [criticals[0]! - turn, ...criticals, criticals[criticals.length - 1]! + turn] : []
+  const beyond = criticals.length > 0 ? [criticals[0]! - turn, ...criticals, criticals[criticals.length - 1]! + turn] : []
+  const centres = beyond.filter(centre => centre > panel.x - turn / 4 && centre < panel.x + panel.width + turn / 4)
   shoalDistances(required).forEach((distance, i) => {
     const contour = distanceContour(distance, y.from - 20)
     const pieces = centres.map(centre => contour.flatMap(({ phase, gain }) => [centre + phase * turn / 360 - panel.x, y.toPixel(gain) - panel.y]))
@@ -154,7 +192,7 @@ function samplePlace(sample: { frequency: number, re: number, im: number }, main
   return [x.toPixel(shownPhase(phase, window)), y.toPixel(20 * Math.log10(Math.hypot(sample.re, sample.im)))]
 }
 
-function placeMarks(main: FigureCurve, views: ReturnType<typeof curveViews>, data: LoopFigureData, window: PhaseWindow, { panel, x, y }: Plane): PlacedMark[] {
+function placeMarks(main: FigureCurve, views: CurveViews, data: LoopFigureData, window: PhaseWindow, { panel, x, y }: Plane): PlacedMark[] {
   const placed: PlacedMark[] = []
   for (const mark of loopMarks(main.analysis, data.frequencyUnit)) {
     if (typeof mark.frequency !== 'number') continue
@@ -167,9 +205,10 @@ function placeMarks(main: FigureCurve, views: ReturnType<typeof curveViews>, dat
   return placed
 }
 
-function drawPlaneMark(pen: Pen, mark: PlacedMark, data: LoopFigureData, options: FigureOptions): void {
+function drawPlaneMark(pen: Pen, mark: PlacedMark, shown: boolean, data: LoopFigureData, options: FigureOptions): void {
   const { theme } = options
   const group = markGroup(pen, mark, options)
+  if (!shown) return
   if (mark.kind === 'gain') drawGainMark(group, mark.x, mark.y, mark.crossing.slope, theme)
   else if (mark.kind === 'phase') drawPhaseMark(group, mark.x, mark.y, theme)
   else {

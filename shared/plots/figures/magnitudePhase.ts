@@ -8,20 +8,25 @@ import { formatPhaseMargin } from '../../formatting/formatPhaseMargin'
 import { curveViews } from '../curves/curveViews'
 import type { PhaseWindow } from '../curves/phaseWindow'
 import { phaseWindow, shownPhase } from '../curves/phaseWindow'
+import { pointsInside } from '../curves/pointsInside'
 import { stretchesAboveOne } from '../curves/stretchesAboveOne'
 import { valueOfView } from '../curves/valueOfView'
+import { windingStart } from '../curves/windingStart'
 import { wrapPhase } from '../curves/wrapPhase'
 import { LabelField } from '../labels/LabelField'
 import { drawCurve } from '../marks/drawCurve'
 import { drawCurveKey } from '../marks/drawCurveKey'
 import { drawFrequencyGrid, drawFrequencyNumbers, frequencyAxisHeight, numberOverhang } from '../marks/drawFrequencyAxis'
+import { drawHatching } from '../marks/drawHatching'
 import { drawLabel } from '../marks/drawLabel'
 import { drawLevel, drawLevels } from '../marks/drawLevels'
 import { drawApproachMark, drawGainMark, drawPhaseMark, markGroup } from '../marks/drawMark'
 import { drawSamples } from '../marks/drawSamples'
 import { drawHalfSampleRate, drawUntrusted } from '../marks/drawUntrusted'
+import { drawStanding } from '../marks/drawStanding'
 import type { LoopMark } from '../marks/loopMarks'
 import { loopMarks, nearestApproach } from '../marks/loopMarks'
+import { withoutCovered } from '../marks/withoutCovered'
 import { gainWindow } from '../scales/gainWindow'
 import type { AxisScale } from '../scales/AxisScale'
 import { linearScale } from '../scales/linearScale'
@@ -52,6 +57,7 @@ export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, option
   const { x, gain, phase, upper, lower } = panels
 
   drawGround(pen, data, panels, options)
+  drawStanding(pen, main.analysis, upper, theme)
   const fields = { upper: new LabelField(upper), lower: new LabelField(lower) }
   fields.upper.blockPolylines([[upper.x, gain.toPixel(0), upper.x + upper.width, gain.toPixel(0)]])
   fields.lower.blockPolylines(criticalPhases(phase).map(value => [lower.x, phase.toPixel(value), lower.x + lower.width, phase.toPixel(value)]))
@@ -59,25 +65,27 @@ export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, option
     const figureCurve = data.curves[index]!
     const xs = figureCurve.curve.frequency.map(x.toPixel)
     fields.upper.blockPolylines(drawCurve(pen, figureCurve, index, xs, views[index]!.gain.map(gain.toPixel), upper, theme))
-    const wrapped = wrapPhase(figureCurve.curve.frequency, views[index]!, window)
+    const end = windingStart(views[index]!.phase, xs, closestTurns)
+    const wrapped = wrapPhase(figureCurve.curve.frequency, { ...views[index]!, phase: views[index]!.phase.subarray(0, end) }, window)
+    if (index === 0 && end < xs.length) drawWinding(pen, fields.lower, xs[end]!, panels, options)
     const shown: FigureCurve = { ...figureCurve, curve: { ...figureCurve.curve, frequency: wrapped.frequency } }
     fields.lower.blockPolylines(drawCurve(pen, shown, index, wrapped.frequency.map(x.toPixel), wrapped.phase.map(phase.toPixel), lower, theme))
   }
   drawSamples(pen, main.samples, ({ frequency, re, im }) => [x.toPixel(frequency), gain.toPixel(20 * Math.log10(Math.hypot(re, im)))], upper, theme)
 
-  const marks: FigureMark[] = []
-  const labels: (() => void)[] = []
+  const placed: { mark: LoopMark, kind: LoopMark['kind'], at: MarkPlaces, x: number, y: number }[] = []
   for (const mark of loopMarks(main.analysis, data.frequencyUnit)) {
     if (typeof mark.frequency !== 'number' || mark.frequency < data.range.from || mark.frequency > data.range.to) continue
     const at = markPlaces(mark, mark.frequency, main, views[0]!, panels, window)
     if (!at) continue
     for (const [field, place] of [[fields.upper, at.upper], [fields.lower, at.lower]] as const) field.blockRectangle({ x: at.x - 6, y: place - 6, width: 12, height: 12 })
     blockBars(fields, mark, at, panels)
-    drawMarkOnBoth(pen, mark, at, data, panels, options)
-    marks.push({ id: mark.id, kind: mark.kind, label: mark.label, x: at.x, y: mark.kind === 'phase' ? at.lower : at.upper })
-    labels.push(() => labelMark(pen, mark, at, fields, main, options))
+    placed.push({ mark, kind: mark.kind, at, x: at.x, y: mark.kind === 'phase' ? at.lower : at.upper })
   }
-  for (const draw of labels) draw()
+  const shown = withoutCovered(placed)
+  for (const one of placed) drawMarkOnBoth(pen, one.mark, one.at, shown.has(one), data, panels, options)
+  for (const { mark, at } of shown) labelMark(pen, mark, at, fields, main, options)
+  const marks: FigureMark[] = placed.map(({ mark: { id, kind, label }, x: px, y: py }) => ({ id, kind, label, x: px, y: py }))
 
   return {
     width,
@@ -87,6 +95,12 @@ export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, option
     locate: (px, py) => {
       const inside = [upper, lower].some(panel => px >= panel.x && px <= panel.x + panel.width && py >= panel.y && py <= panel.y + panel.height)
       return inside ? { frequency: x.toValue(px) } : null
+    },
+    pointsAt: (frequency) => {
+      const decibels = valueOfView(main.curve, views[0]!.gain, frequency)
+      const degrees = valueOfView(main.curve, views[0]!.phase, frequency)
+      if (decibels === null || degrees === null) return []
+      return pointsInside([[x.toPixel(frequency), gain.toPixel(decibels), upper], [x.toPixel(frequency), phase.toPixel(shownPhase(degrees, window)), lower]])
     },
   }
 }
@@ -126,6 +140,17 @@ function drawGround(pen: Pen, data: LoopFigureData, { x, gain, phase, upper, low
   drawFrequencyNumbers(pen, x, lower, data.frequencyUnit, theme, 'below')
 }
 
+/** px; turns closer than this are told by hatching. */
+const closestTurns = 3
+
+/** The part of the phase panel in which the phase turns too fast to be drawn. */
+function drawWinding(pen: Pen, field: LabelField, from: number, { lower }: Panels, { theme }: FigureOptions): void {
+  drawHatching(pen, from, lower.x + lower.width, lower, theme)
+  field.blockRectangle({ ...lower, x: from, width: lower.x + lower.width - from })
+  const size = theme.size.tick
+  pen.text('hatched: turns too fast to draw', lower.x + lower.width, lower.y - 6, { size, fill: theme.slate, anchor: 'end' })
+}
+
 /** Odd multiples of half a turn within an axis. */
 function criticalPhases({ from, to }: AxisScale): number[] {
   const list: number[] = []
@@ -162,7 +187,7 @@ function blockBars(fields: { upper: LabelField, lower: LabelField }, mark: LoopM
   else if (mark.kind === 'phase') fields.upper.blockPolylines([[at.x, at.upper, at.x, gain.toPixel(0)]])
 }
 
-function drawMarkOnBoth(pen: Pen, mark: LoopMark, at: MarkPlaces, data: LoopFigureData, { gain }: Panels, options: FigureOptions): void {
+function drawMarkOnBoth(pen: Pen, mark: LoopMark, at: MarkPlaces, shown: boolean, data: LoopFigureData, { gain }: Panels, options: FigureOptions): void {
   const { theme } = options
   const { analysis } = data.curves[0]
   const primary = mark.kind === 'phase' ? at.lower : at.upper
@@ -172,6 +197,7 @@ function drawMarkOnBoth(pen: Pen, mark: LoopMark, at: MarkPlaces, data: LoopFigu
   if (options.interactive) {
     group.circle(at.x, mark.kind === 'phase' ? at.upper : at.lower, 9, { 'class': 'plot-halo', 'fill': 'none', 'stroke': theme.magenta, 'stroke-width': 2, 'opacity': 0 })
   }
+  if (!shown) return
   if (mark.kind === 'gain') {
     if (margins) group.stroke(vertical(at.lower, at.critical), theme.ink, theme.stroke.curve)
     drawGainMark(group, at.x, at.upper, mark.crossing.slope, theme)

@@ -3,6 +3,8 @@ import type { LoopFigureData } from '../FigureData'
 import type { Polyline } from '../curves/clipPolyline'
 import type { Rectangle } from '../curves/Rectangle'
 import { curveViews } from '../curves/curveViews'
+import { interpolateCurve } from '../curves/interpolateCurve'
+import { pointsInside } from '../curves/pointsInside'
 import { LabelField } from '../labels/LabelField'
 import { drawCurve } from '../marks/drawCurve'
 import { drawCurveKey } from '../marks/drawCurveKey'
@@ -12,12 +14,17 @@ import { drawLevel, drawLevels } from '../marks/drawLevels'
 import { drawApproachMark, markGroup } from '../marks/drawMark'
 import { drawSamples } from '../marks/drawSamples'
 import { drawHalfSampleRate, drawUntrusted } from '../marks/drawUntrusted'
+import { drawStanding } from '../marks/drawStanding'
 import { loopMarks, nearestApproach } from '../marks/loopMarks'
+import { withoutCovered } from '../marks/withoutCovered'
 import { logScale } from '../scales/logScale'
 import { logTicks } from '../scales/logTicks'
 import { formatFrequency } from '../../formatting/formatFrequency'
 import { formatSounding } from '../text/formatSounding'
 import { textWidth } from '../text/textWidth'
+
+/** In a crowd, approaches further off are marked, but not numbered. */
+const plainDistance = 0.97
 
 /** Greatest |1 + L| shown: far from -1 there is nothing to see. */
 const highest = 10
@@ -45,6 +52,7 @@ export const drawReturnDifferenceProfile: DrawFigure<LoopFigureData> = (pen, dat
   drawFrequencyGrid(pen, x, panel, theme)
   drawLevels(pen, y, logTicks(y.from, y.to, Math.floor(panel.height / 22)).filter(tick => tick.major).map(tick => tick.value), panel, '|1 + L|, distance to −1', theme)
   drawFrequencyNumbers(pen, x, panel, data.frequencyUnit, theme, 'below')
+  drawStanding(pen, main.analysis, panel, theme)
   drawUntrusted(pen, main, x, panel, theme)
   drawHalfSampleRate(pen, main, x, panel, theme)
   drawLevel(pen, y, 1, panel, theme.slate, theme.stroke.axis)
@@ -67,20 +75,21 @@ export const drawReturnDifferenceProfile: DrawFigure<LoopFigureData> = (pen, dat
     .filter(mark => mark.kind === 'approach')
     .map(mark => ({ ...mark, x: x.toPixel(mark.crossing.frequency), y: y.toPixel(mark.crossing.distance) }))
     .filter(mark => mark.x >= panel.x - 0.5 && mark.x <= panel.x + panel.width + 0.5)
+  const shown = withoutCovered(approaches)
   for (const mark of approaches) {
     const under = required !== null && mark.crossing.distance < required
     const style = mark.id === nearest ? 'nearest' : under ? 'under' : 'clear'
     const colour = { nearest: theme.magenta, under: theme.unmet, clear: theme.sea }[style]
     const group = markGroup(pen, mark, options)
     group.stroke(`M${Math.round(mark.x * 10) / 10} ${Math.round(y.toPixel(1) * 10) / 10}V${Math.round(mark.y * 10) / 10}`, colour, theme.stroke.mark)
-    drawApproachMark(group, mark.x, mark.y, style, theme)
+    if (shown.has(mark)) drawApproachMark(group, mark.x, mark.y, style, theme)
     field.blockRectangle({ x: mark.x - 5, y: mark.y - 5, width: 10, height: 10 })
     field.blockPolylines([[mark.x, y.toPixel(1), mark.x, mark.y]])
     const { id, kind, label } = mark
     marks.push({ id, kind, label, x: mark.x, y: mark.y })
   }
   // The least first: where there is no room for all, the deepest are told.
-  for (const mark of [...approaches].sort((a, b) => a.crossing.distance - b.crossing.distance)) {
+  for (const mark of [...shown].filter(({ crossing }) => crossing.distance < plainDistance || approaches.length < 12).sort((a, b) => a.crossing.distance - b.crossing.distance)) {
     const under = required !== null && mark.crossing.distance < required
     const isNearest = mark.id === nearest
     const text = formatSounding(mark.crossing.distance)
@@ -105,6 +114,10 @@ export const drawReturnDifferenceProfile: DrawFigure<LoopFigureData> = (pen, dat
     panels: [{ ...panel, xScale: x, yScale: y }],
     marks,
     locate: (px, py) => px < panel.x || px > panel.x + panel.width || py < panel.y || py > panel.y + panel.height ? null : { frequency: x.toValue(px) },
+    pointsAt: (frequency) => {
+      const value = interpolateCurve(main.curve, frequency)
+      return value ? pointsInside([[x.toPixel(frequency), y.toPixel(Math.hypot(1 + value.re, value.im)), panel]]) : []
+    },
   }
 }
 

@@ -1,6 +1,6 @@
 import { frequencyMarks } from '../curves/frequencyMarks'
 import type { Rectangle } from '../curves/Rectangle'
-import type { FigureCurve } from '../FigureData'
+import type { SampledCurve } from '../FigureData'
 import type { LabelField } from '../labels/LabelField'
 import type { Pen } from '../Pen'
 import { formatTick } from '../text/formatTick'
@@ -12,8 +12,8 @@ const tickLength = 4
 /**
  * Round frequencies as small ticks across a curve in a plane, each with its number where there is room.
  */
-export function drawFrequencyMarks(pen: Pen, field: LabelField, figureCurve: FigureCurve, xs: Float64Array, ys: Float64Array, panel: Rectangle, theme: PlotTheme): void {
-  const marks = frequencyMarks(figureCurve.curve, xs, ys, panel, theme.size.tick * 3.6, 16)
+export function drawFrequencyMarks(pen: Pen, field: LabelField, curve: SampledCurve, xs: Float64Array, ys: Float64Array, panel: Rectangle, theme: PlotTheme): void {
+  const marks = frequencyMarks(curve, xs, ys, panel, theme.size.tick * 3.6, 16)
   let d = ''
   for (const { x, y, dx, dy } of marks) {
     const [nx, ny] = [-dy * tickLength, dx * tickLength]
