@@ -1,6 +1,7 @@
 import type { LoopAnalysis, LoopInput } from '../types/analysis'
 import { AnalysisInputError } from './AnalysisInputError'
 import { analyseFactored } from './analyseFactored'
+import { lowerExpression } from './expressions/lowerExpression'
 import { factorsOfInput } from './factorsOfInput'
 
 /**
@@ -12,5 +13,9 @@ import { factorsOfInput } from './factorsOfInput'
  */
 export function analyseLoop(input: LoopInput): LoopAnalysis {
   if ('numerator' in input || 'zeros' in input) return analyseFactored(factorsOfInput(input), input)
+  if ('expression' in input) {
+    const lowered = lowerExpression(input)
+    if (lowered.kind === 'factored') return analyseFactored(lowered.loop, input)
+  }
   throw new AnalysisInputError('This source form is not analysed yet.', 'expression' in input ? 'expression' : 'measured')
 }
