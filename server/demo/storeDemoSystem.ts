@@ -1,0 +1,38 @@
+import type { OperatingCondition, System } from '#shared/types/system'
+import { createCondition } from '../services/conditions/createCondition'
+import type { ServiceContext } from '../services/context'
+import { createLoop } from '../services/loops/createLoop'
+import { replaceMembers } from '../services/members/replaceMembers'
+import { replaceParameters } from '../services/parameters/replaceParameters'
+import { createSources } from '../services/sources/createSources'
+import { createSystem } from '../services/systems/createSystem'
+import accounts from './accounts.json'
+import type { DemoLoop, DemoSystem } from './DemoSystem'
+import { storeDemoSweeps } from './storeDemoSweeps'
+import { valuesIn } from './valuesIn'
+
+/** Stores a system of the demo through the same services as the screens: members, conditions, parameters, loops, sources. */
+export async function storeDemoSystem(demo: DemoSystem, context: ServiceContext): Promise<System> {
+  const { name, customer, documentNumber, frequencyUnit, description } = demo
+  const system = await createSystem({ name, customer, documentNumber, frequencyUnit, description }, context)
+  const members = accounts.people.filter(person => person.roles.length > 0 && (demo.hasCustomerAccount || !person.roles.includes('customer')))
+  await replaceMembers(system.id, members.map(({ email, roles }) => ({ email, roles: roles as ('engineer' | 'checker' | 'approver' | 'customer')[] })), context)
+  const conditions: OperatingCondition[] = []
+  for (const condition of demo.conditions) conditions.push(await createCondition(system.id, condition, context))
+  await replaceParameters(system.id, demo.parameters.map(({ values, ...parameter }) => ({
+    ...parameter,
+    values: Object.fromEntries(conditions.map((condition, index) => [condition.id, values[index] ?? Number.NaN])),
+  })), context)
+  for (const loop of demo.loops) await storeDemoLoop(system, demo, loop, conditions, context)
+  return system
+}
+
+async function storeDemoLoop(system: System, demo: DemoSystem, loop: DemoLoop, conditions: OperatingCondition[], context: ServiceContext): Promise<void> {
+  const { code, name, axis, breakPoint, otherLoops, notes, model } = loop
+  const { id } = await createLoop(system.id, { code, name, axis, breakPoint, otherLoops, notes }, context)
+  const store = (conditionIds: number[], source: { name: string, definition: Exclude<DemoLoop['model'], (...values: never[]) => unknown>['definition'] }) =>
+    createSources(id, { conditionIds, name: source.name, definition: source.definition, ofRecord: true, setAsideReason: '' }, context)
+  if (typeof model !== 'function') await store(conditions.map(condition => condition.id), model)
+  else for (const [index, condition] of conditions.entries()) await store([condition.id], model(valuesIn(demo, index)))
+  if (loop.sweeps !== undefined) await storeDemoSweeps(system, demo, loop, loop.sweeps, id, conditions, context)
+}
