@@ -25,7 +25,7 @@ export default defineNuxtConfig({
   nitro: {
     compressPublicAssets: true,
     serverAssets: [{ baseName: 'templates', dir: inRoot('./templates') }],
-    typescript: { tsConfig: { include: [inRoot('./tests/**/*.ts'), inRoot('./scripts/**/*.ts')] } },
+    typescript: { tsConfig: { include: ['unit', 'reference', 'integration', 'api', 'e2e', 'oracle', 'factories'].map(kind => inRoot(`./tests/${kind}/**/*.ts`)).concat(inRoot('./scripts/**/*.ts')) } },
   },
   vite: {
     optimizeDeps: { include: ['@svgdotjs/svg.js', 'comlink', 'mathjs', 'papaparse'] },
