@@ -13,7 +13,7 @@ import { tableOf } from './tableOf'
 import { verdictTone } from './verdictTone'
 
 /** Pairs named one by one on the summary's page; the matrix shows all. */
-const namedPairs = 8
+const namedPairs = 5
 
 const pairs = (count: number) => `${count} ${count === 1 ? 'pair' : 'pairs'}`
 const targetOf = ({ loop, loopIndex, conditionIndex }: PlacedCell) => conditionAnchor(loopAnchor(loopIndex, loop.code), conditionIndex)
@@ -101,7 +101,7 @@ function attentionTable(snapshot: ReportSnapshot, cells: readonly PlacedCell[]):
     rows: open.slice(0, namedPairs).map(placed => ({
       cells: [
         { text: `${placed.loop.code} ${placed.loop.name}`, isHead: true, target: targetOf(placed) },
-        { text: placed.condition.code, small: placed.condition.name },
+        { text: `${placed.condition.code} ${placed.condition.name}` },
         { text: placed.cell.judgement.verdict, tone: verdictTone(placed.cell.judgement.verdict) },
         { text: reasonOf(placed, snapshot.system.frequencyUnit) },
       ],
