@@ -1,7 +1,7 @@
 import { cssString } from './text/cssString'
 import type { ReportView } from './view/ReportView'
 
-const box = (name: string, content: string, more = '') => `@${name}{content:${content};font:400 7.5pt 'Noto Sans';color:#51607a;${more}}`
+const box = (name: string, content: string, more = '') => `@${name}{content:${content};font:400 7.5pt 'Noto Sans','Noto Sans Math',sans-serif;color:#51607a;${more}}`
 
 /**
  * The page boxes of one document: size, margins, running head with document number and revision, 'page n of m' at the foot,

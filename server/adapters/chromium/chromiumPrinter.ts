@@ -9,7 +9,7 @@ import { AppError } from '#shared/errors/AppError'
 import type { PdfPrinter, PrintRequest } from './PdfPrinter'
 import { findChromium } from './findChromium'
 import { serveOnce } from './serveOnce'
-import { setPdfDates } from './setPdfDates'
+import { settlePdf } from './settlePdf'
 
 export interface ChromiumOptions {
   /** @default the one found */
@@ -110,7 +110,7 @@ export function createChromiumPrinter(options: ChromiumOptions = {}): PdfPrinter
       if (seen !== title) throw new AppError('refused', `The document changed while it was loaded for printing: its title reads '${seen}' in place of '${title}'.`)
       const pdf = await page.pdf({ preferCSSPageSize: true, printBackground: true, tagged: true, outline: true, waitForFonts: true, timeout })
       current.printed += 1
-      return setPdfDates(pdf, time)
+      return settlePdf(pdf, time)
     }
     finally {
       signal?.removeEventListener('abort', onAbort)
