@@ -11,8 +11,8 @@ export default defineConfig({
     projects: [
       { resolve, test: { name: 'unit', include: ['tests/unit/**/*.test.ts'] } },
       { resolve, test: { name: 'reference', include: ['tests/reference/**/*.test.ts'], testTimeout: 600_000 } },
-      { resolve, test: { name: 'integration', include: ['tests/integration/**/*.test.ts'], testTimeout: 60_000 } },
-      { resolve, test: { name: 'api', include: ['tests/api/**/*.test.ts'], testTimeout: 120_000, hookTimeout: 300_000, fileParallelism: false } },
+      { resolve, test: { name: 'integration', globalSetup: ['tests/integration/globalSetup.ts'], include: ['tests/integration/**/*.test.ts'], testTimeout: 60_000 } },
+      { resolve, test: { name: 'api', globalSetup: ['tests/api/globalSetup.ts'], include: ['tests/api/**/*.test.ts'], testTimeout: 120_000, hookTimeout: 300_000, fileParallelism: false } },
       { resolve, test: { name: 'e2e', include: ['tests/e2e/**/*.test.ts'], testTimeout: 300_000, hookTimeout: 600_000, fileParallelism: false } },
       await defineVitestProject({ test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt' } }),
     ],

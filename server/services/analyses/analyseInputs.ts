@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import { engineVersion } from '../../adapters/analysisPool/engine'
+import { ENGINE_VERSION } from '#shared/analysis/engineVersion'
 import type { AnalysisFailure, LoopAnalysis, LoopInput } from '#shared/types/analysis'
 import { analyseInPool } from '../../adapters/analysisPool/analysisPool'
 import { writeTransaction } from '../../database/database'
@@ -28,14 +28,14 @@ export async function analyseInputs(inputs: LoopInput[], context: OpenContext): 
     return result
   }))
   if (fresh.size > 0) {
-    const rows = [...fresh].map(([inputHash, result]) => ({ inputHash, engineVersion, result, createdAt: nowOf(context) }))
+    const rows = [...fresh].map(([inputHash, result]) => ({ inputHash, engineVersion: ENGINE_VERSION, result, createdAt: nowOf(context) }))
     await writeTransaction(() => AnalysisRow.bulkCreate(rows, { ignoreDuplicates: true }))
   }
   return results
 }
 
 async function knownAnalyses(hashes: string[]): Promise<Map<string, LoopAnalysis>> {
-  const rows = await AnalysisRow.findAll({ where: { inputHash: [...new Set(hashes)], engineVersion } })
+  const rows = await AnalysisRow.findAll({ where: { inputHash: [...new Set(hashes)], engineVersion: ENGINE_VERSION } })
   return new Map(rows.map(row => [row.inputHash, row.result]))
 }
 
