@@ -9,8 +9,8 @@ const STEPS = 60
  * The symmetric disk margin alpha = 1/max|S - 1/2| = min 2|1 + L|/|1 - L| and its v
  * (P. Seiler, A. Packard, P. Gahinet, An introduction to disk margins, IEEE Control Systems Magazine 40, 2020).
  *
- * With m = ln|L| and phi = arg L, |1 + L|^2/|1 - L|^2 = (1 + x)/(1 - x), x = cos(phi)/cosh(m), so the least x is sought. This is a search, not a
- * proof: samples on every proven box that could hold less (x >= -1/cosh m there), at all crossings and minima, each of the lowest refined by golden section.
+ * With m = ln|L| and phi = arg L, |1 + L|^2/|1 - L|^2 = x/(2 - x), x = 1 + cos(phi)/cosh(m), so the least x is sought. This is a search, not a
+ * proof: samples on every proven box that could hold less (x >= 1 - 1/cosh m there), at all crossings and minima, each of the lowest refined by golden section.
  */
 export function findDiskMargin(result: SearchResult, from: number, to: number): { alpha: number, v: number } | null {
   const { axis, search, gain, phase, distance, origin, infinity } = result
@@ -24,25 +24,25 @@ export function findDiskMargin(result: SearchResult, from: number, to: number): 
   }
   const at = (v: number) => {
     evaluateAxisLoop(axis, v, value)
-    return Math.cos(value[PHASE]!) / Math.cosh(value[LOG_GAIN]!)
+    return nearness(value[LOG_GAIN]!, value[PHASE]!)
   }
   for (const [end, v, inside] of [[origin, 0, from === 0], [infinity, Number.POSITIVE_INFINITY, to === Number.POSITIVE_INFINITY]] as const) {
     if (!inside) continue
-    if (!Number.isFinite(end.logGain)) offer(0, v)
-    else offer(end.re / Math.exp(end.logGain) / Math.cosh(end.logGain), v)
+    if (!Number.isFinite(end.logGain)) offer(1, v)
+    else offer(nearness(end.logGain, Math.atan2(end.im, end.re)), v)
   }
   if (from > 0) offer(at(from), from)
   if (Number.isFinite(to)) offer(at(to), to)
   for (const finds of [gain, phase, distance]) {
     for (let i = 0; i < finds.v.length; i++) {
-      if (finds.v[i]! >= from && finds.v[i]! <= to) offer(Math.cos(finds.phase[i]!) / Math.cosh(finds.logGain[i]!), finds.v[i]!)
+      if (finds.v[i]! >= from && finds.v[i]! <= to) offer(nearness(finds.logGain[i]!, finds.phase[i]!), finds.v[i]!)
     }
   }
   const { laid } = search
   const found: { x: number, from: number, to: number }[] = []
   for (let i = 0; i < laid.from.length; i++) {
     const least = Math.max(0, Math.abs(laid.logGain[i]!) - laid.spread[i]!)
-    if (-1 / Math.cosh(least) >= best.x) continue
+    if (nearness(least, Math.PI) >= best.x) continue
     const left = Math.max(from, laid.from[i]!)
     const right = Math.min(to, laid.to[i]!)
     if (!(left < right)) continue
@@ -63,7 +63,14 @@ export function findDiskMargin(result: SearchResult, from: number, to: number): 
     offer(low.x, low.v)
   }
   if (!Number.isFinite(best.x)) return null
-  return { alpha: 2 * Math.sqrt(Math.max(0, 1 + best.x) / (1 - best.x)), v: best.v }
+  return { alpha: 2 * Math.sqrt(best.x / (2 - best.x)), v: best.v }
+}
+
+/** 1 + cos(phi)/cosh(m) as a sum of squares, so that nothing cancels near -1. */
+function nearness(logGain: number, phase: number): number {
+  // the hyperbolic functions overflow long after 1/cosh(m) has become less than a unit in the last place
+  if (Math.abs(logGain) > 40) return 1
+  return 2 * (Math.sinh(0.5 * logGain) ** 2 + Math.cos(0.5 * phase) ** 2) / Math.cosh(logGain)
 }
 
 /** Least value on a stretch by golden section. */

@@ -40,7 +40,8 @@ export function judgeStability(loop: FactoredLoop, result: SearchResult, lowest:
       reason: joined(`the count gives ${closedLoopUnstablePoles} unstable closed-loop poles, which cannot be`, hidden),
     }
   }
-  if (roots && roots.certain && roots.count !== closedLoopUnstablePoles) {
+  // a closed-loop pole that counts as on the boundary may lie on either side: the locus, clear of -1, tells on which
+  if (roots && roots.certain && (closedLoopUnstablePoles < roots.count || closedLoopUnstablePoles > roots.count + roots.boundary)) {
     return {
       ...counted, verdict: 'undetermined',
       reason: joined(`the encirclements give ${closedLoopUnstablePoles} unstable closed-loop poles, the roots of the closed loop ${roots.count}`, hidden),

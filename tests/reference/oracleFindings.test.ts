@@ -1,0 +1,23 @@
+import { describe, expect, it } from 'vitest'
+import { analyseLoop } from '#shared/analysis/analyseLoop'
+import { readLoopInput } from '#shared/analysis/readLoopInput'
+import { compareWithOracle } from '../oracle/compareWithOracle'
+import { generateLoop, type LoopFamily } from '../oracle/generateLoop'
+
+/** Loops on which the engine once differed from exact arithmetic: [what was wrong, family, seed, orders]. */
+const FOUND: [string, LoopFamily, number, [number, number]][] = [
+  ['a closed-loop pole 6e-10 off the axis was taken as on it, and the verdict withheld', 'undamped modes', 1079, [2, 9]],
+  ['the same', 'undamped modes', 1037, [2, 9]],
+  ['the same, of order 21', 'undamped modes', 6, [10, 24]],
+  ['the peak of |T| below the first box, beside an integrator, was missed', 'integrators', 1159, [2, 9]],
+  ['a disk margin of 5e-9 lost all its digits', 'twelve decades', 18, [2, 9]],
+]
+
+describe('what the oracle has found stays mended', () => {
+  for (const [what, family, seed, orders] of FOUND) {
+    it(`${what} (${family} ${seed})`, () => {
+      const { differences, exceptions } = compareWithOracle(generateLoop(family, seed, orders), input => analyseLoop(readLoopInput(input)))
+      expect({ differences, exceptions }).toEqual({ differences: [], exceptions: [] })
+    })
+  }
+})
