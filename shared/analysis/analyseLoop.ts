@@ -3,6 +3,7 @@ import { AnalysisInputError } from './AnalysisInputError'
 import { analyseFactored } from './analyseFactored'
 import { lowerExpression } from './expressions/lowerExpression'
 import { factorsOfInput } from './factorsOfInput'
+import { analyseMeasured } from './measured/analyseMeasured'
 
 /**
  * The complete analysis of one loop: every gain and phase crossover, every closest approach to -1, the vector margin, the closed-loop verdict,
@@ -13,9 +14,10 @@ import { factorsOfInput } from './factorsOfInput'
  */
 export function analyseLoop(input: LoopInput): LoopAnalysis {
   if ('numerator' in input || 'zeros' in input) return analyseFactored(factorsOfInput(input), input)
+  if ('measured' in input) return analyseMeasured(input)
   if ('expression' in input) {
     const lowered = lowerExpression(input)
     if (lowered.kind === 'factored') return analyseFactored(lowered.loop, input)
   }
-  throw new AnalysisInputError('This source form is not analysed yet.', 'expression' in input ? 'expression' : 'measured')
+  throw new AnalysisInputError('This source form is not analysed yet.', 'expression')
 }

@@ -3,14 +3,16 @@ import { AnalysisInputError } from './AnalysisInputError'
 import { lowerExpression } from './expressions/lowerExpression'
 import { factorsOfInput } from './factorsOfInput'
 import type { LoopGain } from './LoopGain'
+import { evaluateMeasured } from './measured/evaluateMeasured'
 import { prepareFactoredGain } from './prepareFactoredGain'
 
 /** The loop gain of an input, ready to be evaluated at any frequency (rad/s): what figures and tables sample. @throws AnalysisInputError */
 export function prepareLoopGain(input: LoopInput): LoopGain {
   if ('numerator' in input || 'zeros' in input) return prepareFactoredGain(factorsOfInput(input))
+  if ('measured' in input) return evaluateMeasured(input)
   if ('expression' in input) {
     const lowered = lowerExpression(input)
     if (lowered.kind === 'factored') return prepareFactoredGain(lowered.loop)
   }
-  throw new AnalysisInputError('This source form is not evaluated yet.', 'expression' in input ? 'expression' : 'measured')
+  throw new AnalysisInputError('This source form is not evaluated yet.', 'expression')
 }

@@ -1,9 +1,9 @@
 import type { LoopFigureData } from '../FigureData'
 import { hasMargins } from '../text/markWords'
-import { countWords, measuredWords, sentences, stabilityWords } from './captionWords'
+import { countWords, halfSampleRateWords, measuredWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in gain and phase over frequency. */
-export function captionOfMagnitudePhase({ title, curves: [main] }: LoopFigureData): string {
+export function captionOfMagnitudePhase({ title, curves: [main], frequencyUnit }: LoopFigureData): string {
   const { analysis } = main
   const bars = hasMargins(analysis)
     ? 'Vertical bars are margins: of phase at each gain crossover, to an odd multiple of 180 deg; of gain at each phase crossover, to 0 dB.'
@@ -12,6 +12,7 @@ export function captionOfMagnitudePhase({ title, curves: [main] }: LoopFigureDat
     `${title}, ${main.name}: gain and phase of the loop gain over frequency, with ${countWords(analysis.gainCrossovers.length, 'gain crossover')} and ${countWords(analysis.phaseCrossovers.length, 'phase crossover')}, each marked on both. Bands of buff tint: gain above one.`,
     stabilityWords(analysis),
     bars,
+    halfSampleRateWords(main.halfSampleRate, frequencyUnit),
     measuredWords(main.samples !== undefined, main.untrusted?.length ?? 0, false),
   )
 }

@@ -1,5 +1,5 @@
 import type { LoopFigureData } from '../FigureData'
-import { countWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
+import { countWords, halfSampleRateWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in a return difference profile. */
 export function captionOfReturnDifferenceProfile({ title, curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
@@ -10,6 +10,7 @@ export function captionOfReturnDifferenceProfile({ title, curves: [main], requir
     `${title}, ${main.name}: the return difference |1 + L|, the distance of the loop gain to −1, over frequency, with ${countWords(main.analysis.closestApproaches.length, 'closest approach')}. ${tint}`,
     stabilityWords(main.analysis),
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
+    halfSampleRateWords(main.halfSampleRate, frequencyUnit),
     measuredWords(main.samples !== undefined, main.untrusted?.length ?? 0, false),
   )
 }

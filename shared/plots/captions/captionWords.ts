@@ -39,6 +39,11 @@ export function measuredWords(measured: boolean, gaps: number, inPlane: boolean)
   return gaps > 0 ? `${points} The line is dotted${inPlane ? '' : ' and the band hatched'} where the data cannot be trusted between samples.` : points
 }
 
+/** Where the axis of a sampled loop ends. */
+export function halfSampleRateWords(frequency: number | undefined, unit: FrequencyUnit): string {
+  return frequency === undefined ? '' : `The axis ends at half the sample rate, ${formatFrequency(frequency, unit)}.`
+}
+
 /** Sentences joined, empty ones left out. */
 export function sentences(...parts: string[]): string {
   return parts.filter(part => part !== '').join(' ')

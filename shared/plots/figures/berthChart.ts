@@ -87,9 +87,11 @@ export const drawBerthChart: DrawFigure<LoopFigureData> = (pen, data, options) =
   drawRingLabels(pen, field, plane, data.requiredVectorMargin, theme)
   drawSoundings(pen, field, [...shown], main, data, theme)
   drawDirection(pen, mainPieces, marks, theme)
+  const crossings = bySmallestMargin([...shown])
+  drawMarginLabels(pen, field, crossings.slice(0, firstLabels), main, theme)
   const { xs, ys } = project(main, plane)
   drawFrequencyMarks(pen, field, curveUpTo(main.curve, windingEnd(main, plane)), xs, ys, panel, theme)
-  drawMarginLabels(pen, field, [...shown], main, theme)
+  drawMarginLabels(pen, field, crossings.slice(firstLabels), main, theme)
 
   return {
     width,
@@ -158,6 +160,7 @@ function windingEnd({ curve }: FigureCurve, { unit }: Plane): number {
 function drawWinding(pen: Pen, field: LabelField, { curve }: FigureCurve, end: number, { x, y, unit }: Plane, theme: PlotTheme): void {
   if (end >= curve.re.length) return
   const radius = Math.hypot(curve.re[end]!, curve.im[end]!) * unit
+  if (radius < closestTurns) return
   const [cx, cy] = [x.toPixel(0), y.toPixel(0)]
   pen.circle(cx, cy, radius, { fill: theme.slate })
   field.blockCircle(cx, cy, radius)
@@ -208,7 +211,7 @@ function blockMarks(field: LabelField, { x, y, unit }: Plane, marks: PlacedMark[
   if (berth) field.blockPolylines([[cx, cy, berth.x, berth.y]])
   // Labels rather stand outside the innermost shoal and off the hairlines.
   field.blockCircle(cx, cy, (required ?? 0.5) * unit, true)
-  const circle = (ox: number, radius: number) => Array.from({ length: 145 }, (_, i) => [ox + radius * Math.cos(i * Math.PI / 72), cy + radius * Math.sin(i * Math.PI / 72)]).flat()
+  const circle = (ox: number, radius: number) => Array.from({ length: 61 }, (_, i) => [ox + radius * Math.cos(i * Math.PI / 30), cy + radius * Math.sin(i * Math.PI / 30)]).flat()
   const lines = [circle(x.toPixel(0), unit), ...shoalDistances(required).map(radius => circle(cx, radius * unit))]
   field.blockPolylines([...lines, [x.toPixel(x.from), cy, x.toPixel(x.to), cy], [x.toPixel(0), y.toPixel(y.from), x.toPixel(0), y.toPixel(y.to)]], true)
   if (required !== null) field.blockPolylines([circle(cx, required * unit)])
@@ -268,6 +271,15 @@ function drawSoundings(pen: Pen, field: LabelField, marks: PlacedMark[], main: F
     drawLabel(pen, field, [{ text: formatSounding(mark.crossing.distance), size: theme.size.label, fill: under ? theme.unmet : theme.ink, face: 'semiboldItalic' }],
       { x: mark.x, y: mark.y, gap: 7, reach: 30 }, theme, under)
   }
+}
+
+/** The smallest margins are labelled before the frequencies along the curve, the others after. */
+const firstLabels = 4
+
+/** Gain and phase crossovers, those of the smallest margin first: 6 dB weigh as much as 30 deg, by common practice. */
+function bySmallestMargin(marks: PlacedMark[]): PlacedMark[] {
+  const size = (mark: PlacedMark) => mark.kind === 'gain' ? Math.abs(mark.crossing.phaseMargin) / 30 : mark.kind === 'phase' ? Math.abs(mark.crossing.gainMargin) / 6 : Infinity
+  return marks.filter(mark => mark.kind !== 'approach').sort((a, b) => size(a) - size(b))
 }
 
 /** Margins at the crossings, in words, where there is room: the table has them all. */

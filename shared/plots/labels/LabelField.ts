@@ -2,7 +2,7 @@ import type { Polyline } from '../curves/clipPolyline'
 import type { Rectangle } from '../curves/Rectangle'
 
 /** px */
-const cell = 3
+const cell = 4
 
 export interface PlacedLabel extends Rectangle {
   /** Whether it lies far enough from its mark to need a thin line to it. */
@@ -75,7 +75,7 @@ export class LabelField {
 
   /** Whether the rectangle lies inside the figure and covers nothing hard. */
   isFree(rectangle: Rectangle): boolean {
-    return this.inside(rectangle) && this.count(this.hard, rectangle) === 0
+    return this.inside(rectangle) && this.count(this.hard, rectangle, 1) === 0
   }
 
   /**
@@ -98,7 +98,7 @@ export class LabelField {
           height,
         }
         if (!this.inside(rectangle)) continue
-        const covered = this.count(this.hard, rectangle)
+        const covered = this.count(this.hard, rectangle, must ? Infinity : 1)
         if (covered > 0 && !must) continue
         const far = distance > gap + 8
         const leader = far ? this.countOnLine(x, y, rectangle, gap) : 0
@@ -124,12 +124,14 @@ export class LabelField {
     return [Math.min(most, Math.max(0, Math.floor(start / cell))), Math.max(0, Math.min(most, Math.ceil((start + length) / cell)))]
   }
 
-  private count(grid: Uint8Array, rectangle: Rectangle): number {
+  /** Taken cells under a rectangle, counted up to `enough`. */
+  private count(grid: Uint8Array, rectangle: Rectangle, enough = Infinity): number {
     const [c0, c1] = this.span(rectangle.x - this.bounds.x, rectangle.width, this.columns)
     const [r0, r1] = this.span(rectangle.y - this.bounds.y, rectangle.height, this.rows)
     let taken = 0
     for (let r = r0; r < r1; r++) {
       for (let i = r * this.columns + c0; i < r * this.columns + c1; i++) taken += grid[i]!
+      if (taken >= enough) break
     }
     return taken
   }

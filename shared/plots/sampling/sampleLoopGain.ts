@@ -15,7 +15,7 @@ export interface SampleOptions {
   seeds?: ArrayLike<number>
   /** px; greatest distance between curve and chords in a figure of usual size (96 px to the inch). @default 0.3 */
   tolerance?: number
-  /** @default 4000 */
+  /** @default 8000 */
   mostPoints?: number
 }
 
@@ -27,6 +27,10 @@ const effort = 60_000
 const longestPhaseStep = 60
 /** rad; dead time may turn the phase by no more between neighbours, or whole turns would pass unseen. */
 const longestDeadTimeTurn = 1.2
+/** px of a figure of usual size; turns of the phase that lie closer are not drawn one by one. */
+const closestTurns = 3
+/** How many times the tolerance is good enough there. */
+const windingTolerance = 8
 const decadePixels = Math.LN10
 
 /**
@@ -39,7 +43,7 @@ export function sampleLoopGain(gain: LoopGain, options: SampleOptions): SampledC
   const from = Math.max(options.from, gain.axisStart)
   const to = Math.min(options.to, gain.axisEnd)
   const tolerance = options.tolerance ?? 0.3
-  const most = options.mostPoints ?? 4000
+  const most = options.mostPoints ?? 8000
   if (!(from > 0) || !(to > from)) return { frequency: new Float64Array(0), re: new Float64Array(0), im: new Float64Array(0) }
 
   const xScale = 600 / Math.max(1, Math.log(to / from) / decadePixels) / decadePixels
@@ -88,9 +92,10 @@ export function sampleLoopGain(gain: LoopGain, options: SampleOptions): SampledC
     previous = point
   }
 
-  // Stage 2: drop what the drawing does not need, coarser where there would be too many.
-  let kept = thinPieces(dense, tolerance / 2)
-  for (let coarser = tolerance; kept.length > most && coarser < 1000; coarser *= 2) kept = thinPieces(dense, coarser)
+  // Stage 2: drop what the drawing does not need; more of it where dead time turns L faster than a figure can show.
+  const windsFrom = xScale * 2 * Math.PI / (closestTurns * gain.deadTime)
+  let kept = thinPieces(dense, tolerance / 2, windsFrom)
+  for (let coarser = tolerance; kept.length > most && coarser < 1000; coarser *= 2) kept = thinPieces(dense, coarser, windsFrom)
 
   return {
     frequency: Float64Array.from(kept, point => point.w),
@@ -155,15 +160,18 @@ function startingPoints(gain: LoopGain, options: SampleOptions, from: number, to
   return [...pinned].map(([w, pin]) => ({ w, pinned: pin })).sort((a, b) => a.w - b.w)
 }
 
-/** Unwraps and thins each piece between the breaks. */
-function thinPieces(points: SamplePoint[], tolerance: number): SamplePoint[] {
+/** Unwraps and thins each piece between the breaks, coarsely from `windsFrom` (rad/s) on. */
+function thinPieces(points: SamplePoint[], tolerance: number, windsFrom: number): SamplePoint[] {
   const kept: SamplePoint[] = []
   let piece: SamplePoint[] = []
   const close = () => {
     for (let i = 1; i < piece.length; i++) {
       piece[i]!.phase = piece[i - 1]!.phase + wrapDegrees(piece[i]!.phase - piece[i - 1]!.phase)
     }
-    kept.push(...thinSamples(piece, tolerance))
+    let winding = piece.findIndex(point => point.w >= windsFrom)
+    if (winding < 0) winding = piece.length
+    for (const point of thinSamples(piece.slice(0, winding), tolerance)) kept.push(point)
+    for (const point of thinSamples(piece.slice(winding), tolerance * windingTolerance)) kept.push(point)
     piece = []
   }
   for (const point of points) {

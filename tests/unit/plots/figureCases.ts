@@ -47,24 +47,30 @@ function figureData(title: string, gain: LoopGain, analysis: LoopAnalysis, requi
   return buildLoopFigureData({ title, requiredVectorMargin: required, curves: [{ name: 'Extended, sea state 5', analysis, gain }] })
 }
 
-export const slewPosition = () => figureData('SL-P Slew position', slewGain, analysisByScan(slewGain, 0.5, 3000))
-export const crowded = () => figureData('RO-R Roll rate', crowdedGain, analysisByScan(crowdedGain, 0.5, 1000))
-export const conditional = () => figureData('LU-P Luff position', conditionalGain, analysisByScan(conditionalGain, 0.05, 3000))
-export const unstable = () => figureData('TE-P Telescope position', unstableGain, analysisByScan(unstableGain, 0.5, 1000, 'unstable'))
-export const delayed = () => figureData('TH-1 Thermal', delayedGain, analysisByScan(delayedGain, 0.05, 300), null)
+/** Made once: the scan is slow. Figures never change their data, which a test holds. */
+function once<Value>(make: () => Value): () => Value {
+  let made: Value | undefined
+  return () => made ??= make()
+}
+
+export const slewPosition = once(() => figureData('SL-P Slew position', slewGain, analysisByScan(slewGain, 0.5, 3000)))
+export const crowded = once(() => figureData('RO-R Roll rate', crowdedGain, analysisByScan(crowdedGain, 0.5, 1000)))
+export const conditional = once(() => figureData('LU-P Luff position', conditionalGain, analysisByScan(conditionalGain, 0.05, 3000)))
+export const unstable = once(() => figureData('TE-P Telescope position', unstableGain, analysisByScan(unstableGain, 0.5, 1000, 'unstable')))
+export const delayed = once(() => figureData('TH-1 Thermal', delayedGain, analysisByScan(delayedGain, 0.05, 300), null))
 
 /** The same loop in three conditions in one set of axes. */
-export function overlaid(): LoopFigureData {
+export const overlaid = once((): LoopFigureData => {
   const names = ['Extended, sea state 5', 'Mid-stroke, calm', 'Payload 600 kg']
   const curves = [1, 0.7, 1.3].map((factor, i) => {
     const gain = scaled(slewGain, factor, 1 + 0.06 * i)
     return { name: names[i]!, gain, analysis: analysisByScan(gain, 0.5, 3000) }
   })
   return buildLoopFigureData({ title: 'SL-P Slew position', requiredVectorMargin: 0.5, curves: [curves[0]!, curves[1]!, curves[2]!] })
-}
+})
 
 /** A measured response from 2 to 60 Hz with a gap that cannot be trusted, and confidence discs. */
-export function measured(): LoopFigureData {
+export const measured = once((): LoopFigureData => {
   const from = 2 * 2 * Math.PI
   const to = 60 * 2 * Math.PI
   const gain: LoopGain = { ...slewGain, axisStart: from, axisEnd: to }
@@ -84,9 +90,9 @@ export function measured(): LoopFigureData {
     exceptions: [{ from: 44, to: 46.4, reason: 'the phase may turn by more than half a turn between the samples' }],
   }
   return buildLoopFigureData({ title: 'SL-P Slew position', requiredVectorMargin: 0.5, curves: [{ name: 'sweep 2', analysis, gain, sampleFrequencies: discs.map(disc => disc.frequency) }] })
-}
+})
 
-export function crossingRows(): CrossingChartData {
+export const crossingRows = once((): CrossingChartData => {
   const row = (code: string, name: string, gain: LoopGain | null, verdict: string, standing: CrossingChartRow['standing'], stability: 'stable' | 'unstable' = 'stable'): CrossingChartRow => ({
     key: code, code, name, verdict, standing, requiredVectorMargin: 0.5, gainAboveOne: false,
     analysis: gain && analysisByScan(gain, 0.5, 3000, stability),
@@ -109,4 +115,4 @@ export function crossingRows(): CrossingChartData {
       row('RO-P', 'Roll position', null, 'no data', 'no data'),
     ],
   }
-}
+})
