@@ -1,6 +1,9 @@
 import { wrapDegrees } from '../sampling/wrapDegrees'
 import type { SampledCurve } from '../FigureData'
 
+/** deg */
+const tieTowardsLag = 10
+
 /** A sampled loop gain in the quantities that are drawn over frequency; NaN where the line is broken. */
 export interface CurveViews {
   /** dB */
@@ -41,9 +44,9 @@ function unwrappedPhase(re: Float64Array, im: Float64Array, gain: Float64Array, 
     if (Number.isNaN(last)) {
       const next = i + 1 < re.length && !Number.isNaN(re[i + 1]!) ? i + 1 : i
       const slope = next > i ? (gain[next]! - gain[i]!) / (20 * Math.log10(frequency[next]! / frequency[i]!)) : 0
-      const usual = 90 * slope
-      // A tie between half a turn of lag and of lead is told as lag.
-      phase[i] = argument + 360 * Math.ceil((usual - argument) / 360 - 0.5 - 1e-6)
+      // Half a turn of lag and half a turn of lead are nearly a tie, which goes to lag.
+      const usual = 90 * slope - tieTowardsLag
+      phase[i] = argument + 360 * Math.round((usual - argument) / 360)
     }
     else {
       let step = wrapDegrees(argument - last)

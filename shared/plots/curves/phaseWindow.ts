@@ -21,7 +21,8 @@ export function phaseWindow(phases: readonly Float64Array[]): PhaseWindow {
       if (value > high) high = value
     }
   }
-  if (!(high - low <= longestUnwrapped)) return Number.isFinite(low) ? { from: -360, to: 0, wrapped: true } : { from: -270, to: 0, wrapped: false }
+  if (low > high) return { from: -270, to: 0, wrapped: false }
+  if (high - low > longestUnwrapped) return { from: -360, to: 0, wrapped: true }
   let from = 90 * Math.floor((low - 8) / 90)
   let to = 90 * Math.ceil((high + 8) / 90)
   // The nearest odd multiple of half a turn is always in sight, with something beyond it.

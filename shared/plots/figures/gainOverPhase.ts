@@ -37,6 +37,7 @@ import { linearScale } from '../scales/linearScale'
 import { linearTicks } from '../scales/linearTicks'
 import { formatSounding } from '../text/formatSounding'
 import { formatTick } from '../text/formatTick'
+import { textWidth } from '../text/textWidth'
 import { hasMargins } from '../text/markWords'
 
 interface Plane {
@@ -143,7 +144,10 @@ function drawWinding(pen: Pen, field: LabelField, { curve }: FigureCurve, { gain
   field.blockRectangle(band)
   const from = formatTick(Number(curve.frequency[end]!.toPrecision(2)))
   const size = theme.size.tick
-  pen.text(`from ${from} on L winds in this band`, panel.x + panel.width - 6, Math.min(bottom + size + 3, panel.y + panel.height - 4), { size, fill: theme.ink, anchor: 'end' })
+  const text = `from ${from} on L winds in this band`
+  const [right, baseline] = [panel.x + panel.width - 6, Math.min(bottom + size + 3, panel.y + panel.height - 4)]
+  pen.text(text, right, baseline, { size, fill: theme.ink, anchor: 'end' })
+  field.blockRectangle({ x: right - textWidth(text, size), y: baseline - size, width: textWidth(text, size), height: size + 3 })
 }
 
 function criticalPlaces({ x }: Plane): number[] {

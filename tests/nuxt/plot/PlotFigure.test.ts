@@ -1,6 +1,10 @@
 import { mountSuspended } from '@nuxt/test-utils/runtime'
 import { describe, expect, it } from 'vitest'
+import { readFileSync } from 'node:fs'
+import { SVG } from '@svgdotjs/svg.js'
 import PlotFigure from '~/components/plot/PlotFigure.vue'
+import { drawFigure } from '#shared/plots/drawFigure'
+import { plotThemes } from '#shared/plots/theme'
 import { crossingRows, slewPosition } from '../../unit/plots/figureCases'
 
 const data = slewPosition()
@@ -61,5 +65,16 @@ describe('a figure on the screen', () => {
   it('gives each row of the crossing chart ids of its own', async () => {
     const figure = await mountSuspended(PlotFigure, { props: { name: 'crossingChart', data: crossingRows() } })
     expect(figure.find('[data-mark="SL-P/gain-0"]').attributes('aria-label')).toBe('gain crossover at 16.53 rad/s, falling, lag 75.1 deg')
+  })
+})
+
+describe('a figure drawn in a page', () => {
+  it('is the same as that drawn on the server', () => {
+    const drawing = SVG(document.createElementNS('http://www.w3.org/2000/svg', 'svg'))
+    drawFigure(drawing, 'gainOverPhase', data, { width: 642, theme: plotThemes.print })
+    const onServer = readFileSync('tests/golden/plots/gain-over-phase-plain.svg', 'utf8')
+    const elements = (svg: string) => svg.replace(/\s*\n/g, '').replace(/^.*?<\/desc>|^<svg[^>]*>/, '').replaceAll('/>', '>').replace(/<\/(?:path|rect|circle)>/g, '')
+    expect(elements(onServer).length).toBeGreaterThan(5000)
+    expect(elements(drawing.node.outerHTML)).toBe(elements(onServer))
   })
 })
