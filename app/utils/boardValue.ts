@@ -47,6 +47,8 @@ function barOf(row: CriterionRow): BoardValue['bar'] {
 
 function standingOf(cell: BoardCell, shown: CriterionRow | null): string {
   const { verdict, rows } = cell.judgement
+  // The text says why already.
+  if (cell.failure !== null) return ''
   if (shown === null || shown.verdict === verdict || !['not met', 'not shown'].includes(verdict)) return verdict
   const others = [...new Set(rows.filter(row => row.verdict === verdict).map(row => quantityNames[row.quantity].short))]
   return others.length === 0 ? verdict : `${verdict}: ${others.join(', ')}`
