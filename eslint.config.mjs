@@ -15,4 +15,11 @@ export default withNuxt(
     'shared/analysis knows no file, row or pixel.'),
   floor(['app/**/*.{ts,vue}'], ['#server/**', 'node:*'], 'app and server meet only in shared.'),
   floor(['server/**/*.ts'], ['~/**'], 'app and server meet only in shared.'),
+  {
+    files: ['server/**/*.ts'],
+    ignores: ['server/database/database.ts'],
+    rules: {
+      'no-restricted-syntax': ['error', { selector: 'CallExpression[callee.property.name="transaction"]', message: 'writeTransaction is the one place where a transaction is begun.' }],
+    },
+  },
 )

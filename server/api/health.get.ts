@@ -1,8 +1,8 @@
-import { access, constants } from 'node:fs/promises'
 import { AppError } from '#shared/errors/AppError'
+import { findChromium } from '../adapters/chromium/findChromium'
 import { database } from '../database/database'
 
-/** GET /api/health: whether the database answers and Chromium is where it is expected. */
+/** GET /api/health: whether the database answers and there is a Chromium to print with. */
 export default defineApiHandler('GET /api/health', {}, async () => {
   try {
     await database().query('SELECT 1')
@@ -10,6 +10,5 @@ export default defineApiHandler('GET /api/health', {}, async () => {
   catch (cause) {
     throw new AppError('unavailable', 'The database does not answer.', { cause })
   }
-  const chromium = await access(process.env.WIDEBERTH_CHROMIUM || '/usr/bin/chromium', constants.X_OK).then(() => 'ok', () => 'missing')
-  return { ok: true, database: 'ok', chromium }
+  return { ok: true, database: 'ok', chromium: findChromium() === null ? 'missing' : 'ok' }
 })

@@ -1,20 +1,22 @@
+import PQueue from 'p-queue'
 import { RateLimiterMemory } from 'rate-limiter-flexible'
 import { AppError } from '#shared/errors/AppError'
 
-/** Failures are forgotten an hour after the last. */
+/** s; failures are forgotten this long after the last */
 const memory = 3600
 /** s; the longest wait: long enough to make guessing hopeless, short enough that nobody is locked out for good */
 const longestWait = 300
 
-/** Five tries are free; after each further failure the next try must wait twice as long as before it: 1, 2, 4 ... 300 s. */
+/** Some tries are free; after each further one the next must wait twice as long as before it: 1, 2, 4 ... 300 s. */
 export class SignInLimiter {
-  readonly #failures: RateLimiterMemory
+  readonly #tries: RateLimiterMemory
   readonly #waits: RateLimiterMemory
   readonly #freeTries: number
+  readonly #steps = new PQueue({ concurrency: 1 })
 
-  constructor(freeTries = 5) {
+  constructor(freeTries: number) {
     this.#freeTries = freeTries
-    this.#failures = new RateLimiterMemory({ points: Number.MAX_SAFE_INTEGER, duration: memory })
+    this.#tries = new RateLimiterMemory({ points: Number.MAX_SAFE_INTEGER, duration: memory })
     this.#waits = new RateLimiterMemory({ points: 1, duration: memory })
   }
 
@@ -26,14 +28,24 @@ export class SignInLimiter {
     throw new AppError('tooManyTries', `Too many tries. Wait ${waitSeconds} ${waitSeconds === 1 ? 'second' : 'seconds'} and try again.`, { details: { waitSeconds } })
   }
 
-  async noteFailure(key: string): Promise<void> {
-    const { consumedPoints } = await this.#failures.penalty(key)
+  /** Counts a try; with those before it, it may make the next one wait. */
+  async count(key: string): Promise<void> {
+    const { consumedPoints } = await this.#tries.penalty(key)
     const over = consumedPoints - this.#freeTries
     if (over >= 0) await this.#waits.block(key, Math.min(longestWait, 2 ** over))
   }
 
-  async noteSuccess(key: string): Promise<void> {
-    await this.#failures.delete(key)
+  /** Both in one step, so that of many tries sent at once only the free ones get through. */
+  take(key: string): Promise<void> {
+    return this.#steps.add(async () => {
+      await this.assertMayTry(key)
+      await this.count(key)
+    })
+  }
+
+  /** Forgets the tries of a key that has shown to be in order. */
+  async forget(key: string): Promise<void> {
+    await this.#tries.delete(key)
     await this.#waits.delete(key)
   }
 }

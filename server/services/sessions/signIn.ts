@@ -20,15 +20,16 @@ const byAddress = new SignInLimiter(50)
 export async function signIn(fields: { email: string, password: string }, address: string, context: OpenContext): Promise<{ secret: string, maxAge: number }> {
   const account = `${fields.email} ${address}`
   await byAddress.assertMayTry(address)
-  await byAccount.assertMayTry(account)
+  // Counted before the password is looked at, so that many guesses sent at once are no way round the wait.
+  await byAccount.take(account)
   const person = await PersonRow.findOne({ where: { email: fields.email } })
   const fits = person?.passwordHash ? await verifyPassword(person.passwordHash, fields.password) : await verifyAgainstNobody(fields.password)
   if (!fits || person === null || person.disabledAt !== null) {
-    await Promise.all([byAccount.noteFailure(account), byAddress.noteFailure(address)])
+    await byAddress.count(address)
     await writeTransaction(() => recordAudit(context, 'sign-in refused', { payload: { address, knownPersonId: person?.id ?? null } }))
     throw new AppError('signedOut', 'The e-mail address and the password do not fit together.')
   }
-  await byAccount.noteSuccess(account)
+  await byAccount.forget(account)
   const secret = newSecret()
   await writeTransaction(async () => {
     await SessionRow.create({
