@@ -28,7 +28,7 @@ import type { AxisScale } from '../scales/AxisScale'
 import { linearScale } from '../scales/linearScale'
 import { linearTicks } from '../scales/linearTicks'
 import { changeWords, hasMargins } from '../text/markWords'
-import { formatSounding } from '../text/formatSounding'
+import { formatSounding, plainDistance } from '../text/formatSounding'
 import { formatTick } from '../text/formatTick'
 import type { PlotTheme } from '../theme'
 
@@ -36,8 +36,6 @@ import type { PlotTheme } from '../theme'
 const halfHeight = 1.28
 const rightEdge = 1.12
 
-/** Approaches further off are marked, but not numbered: there is hardly any loop gain. */
-const plainDistance = 0.97
 const imaginaryTitle = 'imaginary part of L'
 
 interface Plane {

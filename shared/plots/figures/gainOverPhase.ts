@@ -35,7 +35,7 @@ import { gainWindow } from '../scales/gainWindow'
 import type { AxisScale } from '../scales/AxisScale'
 import { linearScale } from '../scales/linearScale'
 import { linearTicks } from '../scales/linearTicks'
-import { formatSounding } from '../text/formatSounding'
+import { formatSounding, plainDistance } from '../text/formatSounding'
 import { formatTick } from '../text/formatTick'
 import { textWidth } from '../text/textWidth'
 import { hasMargins } from '../text/markWords'
@@ -45,9 +45,6 @@ interface Plane {
   x: AxisScale
   y: AxisScale
 }
-
-/** Approaches further off are marked, but not numbered: there is hardly any loop gain. */
-const plainDistance = 0.97
 
 type PlacedMark = LoopMark & FigureMark
 

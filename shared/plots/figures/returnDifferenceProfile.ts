@@ -20,11 +20,8 @@ import { withoutCovered } from '../marks/withoutCovered'
 import { logScale } from '../scales/logScale'
 import { logTicks } from '../scales/logTicks'
 import { formatFrequency } from '../../formatting/formatFrequency'
-import { formatSounding } from '../text/formatSounding'
+import { formatSounding, plainDistance } from '../text/formatSounding'
 import { textWidth } from '../text/textWidth'
-
-/** In a crowd, approaches further off are marked, but not numbered. */
-const plainDistance = 0.97
 
 /** Greatest |1 + L| shown: far from -1 there is nothing to see. */
 const highest = 10

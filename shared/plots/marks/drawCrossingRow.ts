@@ -6,7 +6,7 @@ import type { Rectangle } from '../curves/Rectangle'
 import { stretchesAboveOne } from '../curves/stretchesAboveOne'
 import { spreadLabels } from '../labels/spreadLabels'
 import type { AxisScale } from '../scales/AxisScale'
-import { formatSounding } from '../text/formatSounding'
+import { formatSounding, plainDistance } from '../text/formatSounding'
 import { hasMargins } from '../text/markWords'
 import { textWidth } from '../text/textWidth'
 import { drawHatching } from './drawHatching'
@@ -58,7 +58,7 @@ function drawRowMarks(pen: Pen, row: CrossingChartRow, analysis: LoopAnalysis, u
 
   const gains = all.filter(mark => mark.kind === 'gain')
   const triangles = spreadLabels(gains.map(({ x }) => ({ x, width: triangle, weight: 1 })), low - 4, high + 4, 0.5, 9)
-  const approaches = all.filter(mark => mark.kind === 'approach')
+  const approaches = all.filter(mark => mark.kind === 'approach').filter(({ crossing }) => crossing.distance <= plainDistance)
   const size = theme.size.label
   const soundings = approaches.map(mark => formatSounding(mark.crossing.distance))
   const middles = spreadLabels(approaches.map(({ x, crossing }, i) =>
@@ -83,11 +83,11 @@ function drawRowMarks(pen: Pen, row: CrossingChartRow, analysis: LoopAnalysis, u
       const i = approaches.indexOf(mark)
       const under = row.requiredVectorMargin !== null && mark.crossing.distance < row.requiredVectorMargin && hasMargins(analysis)
       drawApproachMark(group, mark.x, middle, under ? 'under' : 'clear', theme)
-      const x = middles[i]
+      const x = i < 0 ? null : middles[i]
       if (x === null || x === undefined) continue
       const y = middle - bar / 2 - 5
       if (Math.abs(x - mark.x) > 4) group.stroke(`M${tenth(mark.x)} ${tenth(middle - 4)}L${tenth(x)} ${tenth(y + 1)}`, under ? theme.unmet : theme.ink, 0.7)
-      group.text(soundings[i]!, x, y, { size, fill: under ? theme.unmet : theme.ink, face: 'semiboldItalic', anchor: 'middle' })
+      pen.text(soundings[i]!, x, y, { size, fill: under ? theme.unmet : theme.ink, face: 'semiboldItalic', anchor: 'middle' })
     }
   }
   return all.map(({ id, kind, label, x, y }) => ({ id, kind, label, x, y }))

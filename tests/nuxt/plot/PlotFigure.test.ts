@@ -27,6 +27,13 @@ describe('a figure on the screen', () => {
     expect(figure.findAll('.is-lit')).toEqual([])
   })
 
+  it('shows where a crossing lies on its curve when it has no mark for it', async () => {
+    const figure = await mount({ name: 'returnDifferenceProfile', litCrossing: 'gain-2' })
+    expect(figure.findAll('.is-lit')).toEqual([])
+    expect(figure.findAll('svg[aria-hidden] circle')).toHaveLength(1)
+    expect(figure.find('p').text()).toBe('gain crossover at 77.92 rad/s, falling, lag 32.7 deg')
+  })
+
   it('tells the crossing under the pointer, in words too, and forgets it when the pointer leaves', async () => {
     const figure = await mount()
     await figure.find('[data-mark="gain-2"]').trigger('pointermove')

@@ -23,7 +23,7 @@ export function analysisByScan(gain: LoopGain, from: number, to: number, verdict
     return Math.sqrt(a * b)
   }
   const grid = new Set<number>()
-  const steps = 20_000
+  const steps = 6_000
   for (let i = 0; i <= steps; i++) grid.add(from * (to / from) ** (i / steps))
   for (const { frequency, width } of gain.features) for (let k = -40; k <= 40; k++) grid.add(frequency + k * width / 4)
   const ws = [...grid].filter(w => w >= from && w <= to).sort((a, b) => a - b)
@@ -40,9 +40,10 @@ export function analysisByScan(gain: LoopGain, from: number, to: number, verdict
   }
   const slope = (w: number) => at(w * 1.0001).distance - at(w / 1.0001).distance
   let least = { distance: Infinity, frequency: 0 }
+  const values = ws.map(at)
   for (let i = 1; i < ws.length; i++) {
     const [a, b] = [ws[i - 1]!, ws[i]!]
-    const [va, vb] = [at(a), at(b)]
+    const [va, vb] = [values[i - 1]!, values[i]!]
     if ((va.size - 1) * (vb.size - 1) < 0) {
       const w = bisect(a, b, x => at(x).size - 1)
       const v = at(w)
@@ -54,7 +55,9 @@ export function analysisByScan(gain: LoopGain, from: number, to: number, verdict
       const v = at(w)
       if (v.size > 1e-3) analysis.phaseCrossovers.push({ frequency: w / unit, gainMargin: -20 * Math.log10(v.size), slope: va.im < 0 ? 'falling' : 'rising', distance: v.distance })
     }
-    if (slope(a) < 0 && slope(b) > 0) {
+    const [before, after] = [values[i - 2], values[i + 1]]
+    const mayTurn = before && after && (va.distance <= before.distance || vb.distance <= after.distance)
+    if (mayTurn && slope(a) < 0 && slope(b) > 0) {
       const w = bisect(a, b, slope)
       const v = at(w)
       if (v.size > 1e-3) {
