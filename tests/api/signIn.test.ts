@@ -98,6 +98,19 @@ describe('signing in', () => {
   })
 })
 
+describe('the cookie of a server reached by https', () => {
+  it('is bound to its host and to https', async () => {
+    const secure = await startServer({ seed: seedTeam, environment: { WIDEBERTH_URL: 'https://margins.example.org' } })
+    try {
+      const reply = await secure.stranger().post('/api/auth/sign-in', { email: teamEmails.engineer, password: testPassword })
+      expect(reply.headers.getSetCookie().find(cookie => cookie.includes('wideberth-session'))).toMatch(/^__Host-wideberth-session=[\w-]{43}; Max-Age=43200; Path=\/; HttpOnly; Secure; SameSite=Lax$/)
+    }
+    finally {
+      await secure.stop()
+    }
+  })
+})
+
 describe('a change asked for by a page of another site', () => {
   it.each([
     ['says that it comes from elsewhere', { 'sec-fetch-site': 'cross-site' }],
@@ -116,6 +129,8 @@ describe('every answer', () => {
     const page = await server.stranger().get<string>('/sign-in')
     const policy = page.headers.get('content-security-policy') ?? ''
     expect(page.headers.get('access-control-allow-origin')).toBeNull()
+    expect(page.headers.get('cache-control')).toBe('no-store')
+    expect(page.headers.get('referrer-policy')).toBe('no-referrer')
     expect(policy).toMatch(/script-src 'self' 'strict-dynamic' 'nonce-[\w+/=]{16,}'/)
     expect(policy).not.toMatch(/https?:|\*|unsafe-eval/)
     expect(policy.match(/script-src [^;]*/)?.[0]).not.toContain('unsafe-inline')

@@ -18,6 +18,8 @@ export interface TestServer {
   /** a caller signed in with this address and the password of all test people */
   signedIn: (email: string) => Promise<ApiCaller>
   stop: () => Promise<void>
+  /** Ends the server as a power cut would, and starts it again on the same data. */
+  killAndRestart: () => Promise<void>
   /** all that the server has written to its log */
   log: () => string
 }
@@ -59,28 +61,31 @@ export async function startServer<Seed = undefined>(options: ServerOptions<Seed>
   }
   const port = await freePort()
   const url = `http://localhost:${port}`
-  const child = spawn(process.execPath, [inject('serverEntry')], {
-    env: { ...process.env, NODE_ENV: 'production', PORT: String(port), WIDEBERTH_DATA: folder, WIDEBERTH_URL: url, WIDEBERTH_SMTP_URL: '', UV_THREADPOOL_SIZE: '16', ...options.environment },
-    stdio: ['ignore', 'pipe', 'pipe'],
-  })
   let output = ''
-  child.stdout.on('data', (chunk: Buffer) => output += chunk.toString())
-  child.stderr.on('data', (chunk: Buffer) => output += chunk.toString())
-  const stop = async () => {
-    child.kill('SIGTERM')
+  const start = async () => {
+    const child = spawn(process.execPath, [inject('serverEntry')], {
+      env: { ...process.env, NODE_ENV: 'production', PORT: String(port), WIDEBERTH_DATA: folder, WIDEBERTH_URL: url, WIDEBERTH_SMTP_URL: '', UV_THREADPOOL_SIZE: '16', ...options.environment },
+      stdio: ['ignore', 'pipe', 'pipe'],
+    })
+    child.stdout.on('data', (chunk: Buffer) => output += chunk.toString())
+    child.stderr.on('data', (chunk: Buffer) => output += chunk.toString())
+    const deadline = Date.now() + 60_000
+    while (!await fetch(`${url}/api/health`).then(reply => reply.ok, () => false)) {
+      if (child.exitCode !== null || Date.now() > deadline) {
+        child.kill('SIGKILL')
+        throw new Error(`The server did not start:\n${output}`)
+      }
+      await new Promise(resolve => setTimeout(resolve, 100))
+    }
+    return child
+  }
+  const end = async (signal: 'SIGTERM' | 'SIGKILL') => {
+    child.kill(signal)
     const timer = setTimeout(() => child.kill('SIGKILL'), 10_000)
     await ended(child)
     clearTimeout(timer)
-    await rm(folder, { recursive: true, force: true })
   }
-  const deadline = Date.now() + 60_000
-  while (!await fetch(`${url}/api/health`).then(reply => reply.ok, () => false)) {
-    if (child.exitCode !== null || Date.now() > deadline) {
-      await stop()
-      throw new Error(`The server did not start:\n${output}`)
-    }
-    await new Promise(resolve => setTimeout(resolve, 100))
-  }
+  let child = await start()
   const stranger = () => new ApiCaller(url)
   return {
     url,
@@ -92,7 +97,14 @@ export async function startServer<Seed = undefined>(options: ServerOptions<Seed>
       await caller.signIn(email)
       return caller
     },
-    stop,
+    stop: async () => {
+      await end('SIGTERM')
+      await rm(folder, { recursive: true, force: true })
+    },
+    killAndRestart: async () => {
+      await end('SIGKILL')
+      child = await start()
+    },
     log: () => output,
   }
 }
