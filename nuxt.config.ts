@@ -24,7 +24,13 @@ export default defineNuxtConfig({
   compatibilityDate: '2026-11-01',
   nitro: {
     compressPublicAssets: true,
-    serverAssets: [{ baseName: 'templates', dir: inRoot('./templates') }],
+    serverAssets: [
+      { baseName: 'templates', dir: inRoot('./templates') },
+      // what a report may embed; only the files of the styles it uses go into the build
+      { baseName: 'noto-sans', dir: inRoot('./node_modules/@fontsource/noto-sans/files'), pattern: 'noto-sans-!(devanagari)-{400,600}-{normal,italic}.woff2' },
+      { baseName: 'noto-sans-mono', dir: inRoot('./node_modules/@fontsource/noto-sans-mono/files'), pattern: 'noto-sans-mono-{latin,greek}-400-normal.woff2' },
+      { baseName: 'noto-sans-math', dir: inRoot('./node_modules/@fontsource/noto-sans-math/files'), pattern: '*.woff2' },
+    ],
     typescript: { tsConfig: { include: ['unit', 'reference', 'integration', 'api', 'e2e', 'oracle', 'factories'].map(kind => inRoot(`./tests/${kind}/**/*.ts`)).concat(inRoot('./scripts/**/*.ts')) } },
   },
   vite: {

@@ -1,0 +1,100 @@
+import { ENGINE_VERSION } from '#shared/analysis/engineVersion'
+import { judgeAnalysis } from '#shared/analysis/criteria/judgeAnalysis'
+import type { ReportSnapshot, SnapshotCell } from '#shared/types/snapshot'
+import type { AnalysedSource, SourceDefinition } from '#shared/types/source'
+import type { Criterion } from '#shared/types/criterion'
+import type { Loop, OperatingCondition, Parameter } from '#shared/types/system'
+import type { ReportRow } from '../database/models/ReportRow'
+import { RevisionRow } from '../database/models/RevisionRow'
+import { UploadRow } from '../database/models/UploadRow'
+import { readBrandForPrint } from '../services/brand/readBrandForPrint'
+import type { ServiceContext } from '../services/context'
+import { nowOf } from '../services/context'
+import { listParameters } from '../services/parameters/listParameters'
+import { analyseSources } from '../services/sources/analyseSources'
+import { listSourcesOfRecord } from '../services/sources/listSourcesOfRecord'
+import { readSystem } from '../services/systems/readSystem'
+
+/** Rows in the order of the ids given; ids of rows that are gone are left out. */
+function inOrder<Row extends { id: number }>(rows: readonly Row[], ids: readonly number[]): Row[] {
+  return ids.flatMap(id => rows.filter(row => row.id === id))
+}
+
+async function fileOf(definition: SourceDefinition): Promise<{ name: string, sha256: string } | null> {
+  if (definition.kind !== 'measured') return null
+  const upload = await UploadRow.findByPk(definition.uploadId, { attributes: ['fileName', 'sha256'] })
+  return upload === null ? null : { name: upload.fileName, sha256: upload.sha256 }
+}
+
+async function cellOf(loop: Loop, condition: OperatingCondition, entry: AnalysedSource | undefined, criteria: Criterion[]): Promise<SnapshotCell> {
+  const analysis = entry?.analysis ?? null
+  return {
+    loopCode: loop.code,
+    conditionCode: condition.code,
+    source: entry ? { name: entry.source.name, kind: entry.source.kind, definition: entry.source.definition, file: await fileOf(entry.source.definition) } : null,
+    input: entry?.input ?? null,
+    analysis,
+    failure: entry?.failure ?? null,
+    judgement: judgeAnalysis(analysis, criteria),
+  }
+}
+
+function parametersOf(parameters: readonly Parameter[], conditions: readonly OperatingCondition[]): ReportSnapshot['parameters'] {
+  return parameters.map(({ name, unit, notes, values }) => ({
+    name,
+    unit,
+    notes,
+    values: Object.fromEntries(conditions.flatMap(({ id, code }) => (values[id] === undefined ? [] : [[code, values[id]]]))),
+  }))
+}
+
+async function historyOf(reportId: number): Promise<ReportSnapshot['history']> {
+  const rows = await RevisionRow.findAll({ where: { reportId }, order: [['id', 'ASC']] })
+  return rows.flatMap(({ letter, changeNote, frozenByName, issuedByName, issuedAt }) => (
+    issuedByName === null || issuedAt === null ? [] : [{ letter, changeNote, frozenBy: frozenByName, issuedBy: issuedByName, issuedAt }]
+  ))
+}
+
+export interface DraftFacts {
+  letter: string
+  draftNumber: number
+  changeNote: string
+}
+
+/** The loops and conditions a report covers, in the order it prints them. */
+export async function coverageOf(report: ReportRow): Promise<{ loops: Loop[], conditions: OperatingCondition[] }> {
+  const { loops, conditions } = await readSystem(report.systemId)
+  return { loops: inOrder(loops, report.loopIds), conditions: inOrder(conditions, report.conditionIds) }
+}
+
+/**
+ * Everything a report says at this moment, as plain data: inputs, results, criteria, brand. Analyses that are not known yet are
+ * computed, so this is never called inside a write transaction.
+ */
+export async function collectSnapshot(report: ReportRow, draft: DraftFacts, context: ServiceContext): Promise<ReportSnapshot> {
+  const [{ system, criteria }, { loops, conditions }, parameters, brand, history] = await Promise.all([
+    readSystem(report.systemId), coverageOf(report), listParameters(report.systemId), readBrandForPrint(), historyOf(report.id),
+  ])
+  const sources = await listSourcesOfRecord(loops.map(({ id }) => id), conditions.map(({ id }) => id))
+  const analysed = await analyseSources(sources, system, context)
+  const cells = await Promise.all(loops.flatMap(loop => conditions.map(condition => cellOf(
+    loop, condition, analysed.find(({ source }) => source.loopId === loop.id && source.conditionId === condition.id), criteria,
+  ))))
+  return {
+    format: 'wideberth report snapshot',
+    formatVersion: 1,
+    engineVersion: ENGINE_VERSION,
+    frozenAt: nowOf(context),
+    frozenBy: context.actor.name,
+    ...draft,
+    brand,
+    system: { name: system.name, customer: system.customer, documentNumber: system.documentNumber, frequencyUnit: system.frequencyUnit, description: system.description },
+    report: { title: report.title, documentNumber: report.documentNumber, remarks: report.remarks },
+    criteria,
+    conditions: conditions.map(({ code, name, coordinates, tags, notes }) => ({ code, name, coordinates, tags, notes })),
+    loops: loops.map(({ id, code, name, axis, breakPoint, otherLoops, notes }) => ({ code, name, axis, breakPoint, otherLoops, notes, remarks: report.loopRemarks[id] ?? '' })),
+    parameters: parametersOf(parameters, conditions),
+    cells,
+    history,
+  }
+}

@@ -1,0 +1,33 @@
+import type { WindowLike } from 'dompurify'
+import { AppError } from '#shared/errors/AppError'
+
+/** Elements that may run, load, or reach outside the drawing, beside those DOMPurify's SVG profile leaves out anyway. */
+const forbiddenElements = ['style', 'a', 'image', 'feImage', 'foreignObject', 'script', 'animate', 'animateMotion', 'animateTransform', 'set', 'mpath']
+
+const isForeign = (value: string) => /url\(\s*["']?(?!#)|@import|expression\(/i.test(value)
+
+/**
+ * An SVG drawing with everything taken out that could run, load or point outside it. It is still only ever shown as an image from data.
+ * Throws 'invalid input' where nothing that can be drawn is left.
+ */
+export async function sanitiseSvg(text: string): Promise<string> {
+  // Loaded when it is needed: a document model takes a fifth of a second and much memory to set up.
+  const [{ JSDOM }, { default: createPurifier }] = await Promise.all([import('jsdom'), import('dompurify')])
+  const { window } = new JSDOM('')
+  const purifier = createPurifier(window as unknown as WindowLike)
+  purifier.addHook('uponSanitizeAttribute', (_, data) => {
+    const isReference = data.attrName === 'href' || data.attrName === 'xlink:href'
+    if ((isReference && !data.attrValue.startsWith('#')) || isForeign(data.attrValue)) data.keepAttr = false
+  })
+  try {
+    const root = purifier.sanitize(text, { USE_PROFILES: { svg: true, svgFilters: true }, FORBID_TAGS: forbiddenElements, RETURN_DOM: true, ADD_TAGS: ['use'] }).querySelector('svg')
+    if (!root || root.children.length === 0) throw new AppError('invalidInput', 'There is no drawing in this SVG file that may be printed.')
+    if (!root.hasAttribute('viewBox') && !(root.hasAttribute('width') && root.hasAttribute('height'))) {
+      throw new AppError('invalidInput', 'This SVG file does not say how large it is: give it a viewBox, or a width and a height.')
+    }
+    return new window.XMLSerializer().serializeToString(root)
+  }
+  finally {
+    window.close()
+  }
+}
