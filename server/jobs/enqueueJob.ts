@@ -1,6 +1,7 @@
 import { AppError } from '#shared/errors/AppError'
 import type { Edition } from '#shared/types/report'
 import { JobRow } from '../database/models/JobRow'
+import { afterCommit } from './afterCommit'
 import { recordJob } from './recordJob'
 import { jobSignals } from './jobSignals'
 
@@ -13,6 +14,6 @@ export async function enqueueJob(request: { revisionId: number, edition: Edition
   if (open > 0) throw new AppError('conflict', 'This document is being rendered already.')
   const job = await JobRow.create({ ...request, kind: 'renderRevision', state: 'queued', step: 'Waiting its turn', done: 0, total: 0, attempts: 0, createdAt: now.toISOString() })
   await recordJob(job, {}, now)
-  setTimeout(() => jobSignals.emit('queued'), 20).unref()
+  afterCommit(() => jobSignals.emit('queued'))
   return job
 }

@@ -20,10 +20,13 @@ export async function sanitiseSvg(text: string): Promise<string> {
     if ((isReference && !data.attrValue.startsWith('#')) || isForeign(data.attrValue)) data.keepAttr = false
   })
   try {
-    const root = purifier.sanitize(text, { USE_PROFILES: { svg: true, svgFilters: true }, FORBID_TAGS: forbiddenElements, RETURN_DOM: true, ADD_TAGS: ['use'] }).querySelector('svg')
-    if (!root || root.children.length === 0) throw new AppError('invalidInput', 'There is no drawing in this SVG file that may be printed.')
+    // Read as XML, which SVG is: a reader of HTML would take what follows an unclosed foreign element for text.
+    const drawing = new window.DOMParser().parseFromString(text, 'image/svg+xml').documentElement
+    if (drawing.nodeName !== 'svg') throw new AppError('invalidInput', 'This SVG file is not well-formed, or its root is no <svg>.', { path: 'mark' })
+    const root = purifier.sanitize(drawing, { USE_PROFILES: { svg: true, svgFilters: true }, FORBID_TAGS: forbiddenElements, RETURN_DOM: true, ADD_TAGS: ['use'] }).querySelector('svg')
+    if (!root || root.children.length === 0) throw new AppError('invalidInput', 'There is no drawing in this SVG file that may be printed.', { path: 'mark' })
     if (!root.hasAttribute('viewBox') && !(root.hasAttribute('width') && root.hasAttribute('height'))) {
-      throw new AppError('invalidInput', 'This SVG file does not say how large it is: give it a viewBox, or a width and a height.')
+      throw new AppError('invalidInput', 'This SVG file does not say how large it is: give it a viewBox, or a width and a height.', { path: 'mark' })
     }
     return new window.XMLSerializer().serializeToString(root)
   }
