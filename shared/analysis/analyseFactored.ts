@@ -182,7 +182,7 @@ function listExceptions(result: SearchResult, scale: FrequencyScale, band: Band,
   }
   for (const [finds, name] of [[gain, 'gain crossovers'], [phase, 'phase crossovers'], [distance, 'closest approaches']] as const) {
     const inside = finds.v.filter(v => isListed(v, band))
-    if (inside.length <= limits.maxListed || (result.endless && finds === phase)) continue
+    if (inside.length <= limits.maxListed || (result.endless && finds !== gain)) continue
     all.push({
       from: inside[limits.maxListed - 1]!, to: Number.POSITIVE_INFINITY, code: 'list limit',
       reason: `more than ${limits.maxListed} ${name}: the list stops here`,

@@ -1,16 +1,23 @@
 import { AxisSearch } from '../search/AxisSearch'
 import { AXIS_VALUE_SIZE, IM, LOG_GAIN, RE, evaluateAxisLoop } from '../search/evaluateAxisLoop'
 import type { SearchResult } from '../search/searchLoop'
+import { leastOnStretch } from './leastOnStretch'
+import { listStretches } from './listStretches'
+
+/** No stretch is searched for a peak higher than the best by less than this part. */
+const RESOLUTION = 1e-10
 
 /** The peak of |T| = |L/(1 + L)| and where: 1/min |1 + 1/L|. */
 export interface ComplementaryPeak { peak: number, v: number }
 
 /**
- * The greatest |T| over from <= v <= to, by the same proven search for minima, of |1 + 1/L|. With m = ln|L|,
- * |1 + 1/L| >= |1 - exp(-m)|, so only the boxes where that is not above the least found so far are searched.
+ * The greatest |T| over from <= v <= to, by the same search for minima as for |1 + L|, of |1 + 1/L|. With m = ln|L|,
+ * |1 + 1/L| >= |1 - exp(-m)|, so only the stretches where that is not above the least found so far are searched.
+ * What it cannot decide (a peak at the very joint of two stretches) is covered by the values at the joints, and beside the ends, where L nears its
+ * limit smoothly, golden section takes its place: the peak is searched with the proven boxes, but not proven itself.
  */
 export function findComplementaryPeak(result: SearchResult, from: number, to: number): ComplementaryPeak {
-  const { axis, search, gain, distance, origin, infinity } = result
+  const { axis, gain, distance, origin, infinity } = result
   const best = { inverse: Number.POSITIVE_INFINITY, v: Number.NaN }
   const value = new Float64Array(AXIS_VALUE_SIZE)
   const offer = (inverse: number, v: number) => {
@@ -30,7 +37,8 @@ export function findComplementaryPeak(result: SearchResult, from: number, to: nu
   }
   for (const [end, v, inside] of [[origin, 0, from === 0], [infinity, Number.POSITIVE_INFINITY, to === Number.POSITIVE_INFINITY]] as const) {
     if (!inside) continue
-    if (end.logGain === Number.POSITIVE_INFINITY) offer(1, v)
+    if (v > 0 && axis.deadTime > 0 && axis.degree === 0) offer(Math.abs(Math.expm1(-end.logGain)), v)
+    else if (end.logGain === Number.POSITIVE_INFINITY) offer(1, v)
     else if (Number.isFinite(end.logGain)) offer(Math.hypot(1 + end.re, end.im) / Math.exp(end.logGain), v)
   }
   for (const root of result.boundary) {
@@ -42,8 +50,20 @@ export function findComplementaryPeak(result: SearchResult, from: number, to: nu
     for (let i = 0; i < finds.v.length; i++) offerFind(finds.logGain[i]!, finds.phase[i]!, finds.v[i]!)
   }
   const again = new AxisSearch(axis)
-  const searchStretch = (start: number, stop: number) => {
-    if (!(start < stop)) return
+  const inverseAt = (v: number) => {
+    evaluateAxisLoop(axis, v, value)
+    return Math.hypot(1 + value[RE]!, value[IM]!) / Math.exp(value[LOG_GAIN]!)
+  }
+  for (const { from: start, to: stop, least, outer } of listStretches(result, from, to)) {
+    const bound = least > 0 ? -Math.expm1(-least) : Math.expm1(-least)
+    if (bound >= best.inverse * (1 - RESOLUTION)) continue
+    if (outer) {
+      const low = leastOnStretch(inverseAt, start, stop)
+      offer(low.value, low.v)
+      offer(inverseAt(start), start)
+      offer(inverseAt(stop), stop)
+      continue
+    }
     again.leastInverse = best.inverse
     const mark = again.inverseDistance.v.length
     offerAt(start)
@@ -56,56 +76,5 @@ export function findComplementaryPeak(result: SearchResult, from: number, to: nu
       offerFind(again.inverseDistance.logGain[k]!, again.inverseDistance.phase[k]!, again.inverseDistance.v[k]!)
     }
   }
-  const { laid } = search
-  for (let i = 0; i < laid.from.length; i++) {
-    const least = Math.abs(laid.logGain[i]!) - laid.spread[i]!
-    const bound = least <= 0 ? 0 : laid.logGain[i]! > 0 ? -Math.expm1(-least) : Math.expm1(least)
-    if (bound > best.inverse || laid.to[i]! < from || laid.from[i]! > to) continue
-    searchStretch(Math.max(from, laid.from[i]!), Math.min(to, laid.to[i]!))
-  }
-  for (const stretch of settledStretches(result)) {
-    const least = stretch.logGain === Number.POSITIVE_INFINITY ? 0 : Math.abs(stretch.logGain)
-    const bound = stretch.logGain > 0 ? -Math.expm1(-least) : Math.expm1(least)
-    if (bound < best.inverse) searchStretch(Math.max(from, stretch.from), Math.min(to, stretch.to))
-  }
   return { peak: best.inverse === Number.POSITIVE_INFINITY ? 0 : 1 / best.inverse, v: best.v }
-}
-
-/** How near the ends and undamped roots are searched: relative to the settled region there, for a T that no longer changes by 1e-13. */
-const NEAR_END = 1e-7
-/** 1/|L| beside a pole on the boundary that moves |T| = 1 no more. */
-const LEAST_INVERSE_GAIN = 1e-10
-
-/**
- * The stretches beside ends and undamped roots that the main search settled without boxes: what was shown there is of |1 + L|, not of |1 + 1/L|.
- * `logGain`: a bound of ln|L|, least where it is above 0 (|L| grows monotonely towards a pole), greatest where it is below; 0 none.
- */
-function settledStretches({ axis, origin, infinity, boundary, endless }: SearchResult): { from: number, to: number, logGain: number }[] {
-  const value = new Float64Array(AXIS_VALUE_SIZE)
-  const gainAt = (v: number) => {
-    evaluateAxisLoop(axis, v, value)
-    return value[LOG_GAIN]!
-  }
-  /** Share of the region beside a pole beyond which 1/|L| is below the least that counts. */
-  const depth = (edge: number, order: number) => Math.max(1e-30, Math.min(0.5, Math.exp((gainAt(edge) + Math.log(LEAST_INVERSE_GAIN)) / order)))
-  const stretches: { from: number, to: number, logGain: number }[] = []
-  if (origin.edge > 0 && origin.logGain !== Number.NEGATIVE_INFINITY) {
-    const pole = origin.logGain === Number.POSITIVE_INFINITY
-    const share = pole ? depth(origin.edge, Math.max(1, -axis.originWeight)) : NEAR_END
-    stretches.push({ from: origin.edge * share, to: origin.edge, logGain: pole ? Math.max(0, gainAt(origin.edge)) : 0 })
-  }
-  if (Number.isFinite(infinity.edge) && infinity.logGain !== Number.NEGATIVE_INFINITY && !endless) {
-    const pole = infinity.logGain === Number.POSITIVE_INFINITY
-    const share = pole ? depth(infinity.edge, Math.max(1, axis.degree)) : NEAR_END
-    stretches.push({ from: infinity.edge, to: infinity.edge / share, logGain: pole ? Math.max(0, gainAt(infinity.edge)) : 0 })
-  }
-  for (const { v, weight, half, skippedBelow } of boundary) {
-    const pole = weight < 0
-    const least = Math.min(gainAt(v - half), gainAt(v + half))
-    const share = pole ? depth(v + half, -weight) : NEAR_END
-    const inner = Math.max(half * share, 8 * 2 ** -52 * v)
-    const logGain = pole ? Math.max(0, least) : Math.min(0, skippedBelow)
-    stretches.push({ from: v - half, to: v - inner, logGain }, { from: v + inner, to: v + half, logGain })
-  }
-  return stretches
 }

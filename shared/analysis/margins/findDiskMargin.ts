@@ -1,9 +1,9 @@
 import { AXIS_VALUE_SIZE, LOG_GAIN, LOG_GAIN_SLOPE, PHASE, PHASE_SLOPE, evaluateAxisLoop } from '../search/evaluateAxisLoop'
 import type { SearchResult } from '../search/searchLoop'
+import { leastOnStretch } from './leastOnStretch'
+import { listStretches } from './listStretches'
 
-const GOLDEN = (3 - Math.sqrt(5)) / 2
 const SAMPLES = 6
-const STEPS = 60
 
 /**
  * The symmetric disk margin alpha = 1/max|S - 1/2| = min 2|1 + L|/|1 - L| and its v
@@ -13,7 +13,7 @@ const STEPS = 60
  * proof: samples on every proven box that could hold less (x >= 1 - 1/cosh m there), at all crossings and minima, each of the lowest refined by golden section.
  */
 export function findDiskMargin(result: SearchResult, from: number, to: number): { alpha: number, v: number } | null {
-  const { axis, search, gain, phase, distance, origin, infinity } = result
+  const { axis, gain, phase, distance, origin, infinity } = result
   const value = new Float64Array(AXIS_VALUE_SIZE)
   const best = { x: Number.POSITIVE_INFINITY, v: Number.NaN }
   const offer = (x: number, v: number) => {
@@ -28,7 +28,8 @@ export function findDiskMargin(result: SearchResult, from: number, to: number): 
   }
   for (const [end, v, inside] of [[origin, 0, from === 0], [infinity, Number.POSITIVE_INFINITY, to === Number.POSITIVE_INFINITY]] as const) {
     if (!inside) continue
-    if (!Number.isFinite(end.logGain)) offer(1, v)
+    if (v > 0 && axis.deadTime > 0 && axis.degree === 0) offer(nearness(end.logGain, Math.PI), v)
+    else if (!Number.isFinite(end.logGain)) offer(1, v)
     else offer(nearness(end.logGain, Math.atan2(end.im, end.re)), v)
   }
   if (from > 0) offer(at(from), from)
@@ -38,14 +39,9 @@ export function findDiskMargin(result: SearchResult, from: number, to: number): 
       if (finds.v[i]! >= from && finds.v[i]! <= to) offer(nearness(finds.logGain[i]!, finds.phase[i]!), finds.v[i]!)
     }
   }
-  const { laid } = search
   const found: { x: number, from: number, to: number }[] = []
-  for (let i = 0; i < laid.from.length; i++) {
-    const least = Math.max(0, Math.abs(laid.logGain[i]!) - laid.spread[i]!)
+  for (const { from: left, to: right, least } of listStretches(result, from, to)) {
     if (nearness(least, Math.PI) >= best.x) continue
-    const left = Math.max(from, laid.from[i]!)
-    const right = Math.min(to, laid.to[i]!)
-    if (!(left < right)) continue
     evaluateAxisLoop(axis, 0.5 * (left + right), value)
     const turn = Math.hypot(value[LOG_GAIN_SLOPE]!, value[PHASE_SLOPE]!) * (right - left)
     const count = Math.min(4000, SAMPLES + Math.ceil(4 * turn))
@@ -59,8 +55,8 @@ export function findDiskMargin(result: SearchResult, from: number, to: number): 
   }
   for (const candidate of found) {
     if (candidate.x > best.x + 0.05) continue
-    const low = minimise(at, candidate.from, candidate.to)
-    offer(low.x, low.v)
+    const low = leastOnStretch(at, candidate.from, candidate.to)
+    offer(low.value, low.v)
   }
   if (!Number.isFinite(best.x)) return null
   return { alpha: 2 * Math.sqrt(best.x / (2 - best.x)), v: best.v }
@@ -71,31 +67,4 @@ function nearness(logGain: number, phase: number): number {
   // the hyperbolic functions overflow long after 1/cosh(m) has become less than a unit in the last place
   if (Math.abs(logGain) > 40) return 1
   return 2 * (Math.sinh(0.5 * logGain) ** 2 + Math.cos(0.5 * phase) ** 2) / Math.cosh(logGain)
-}
-
-/** Least value on a stretch by golden section. */
-function minimise(at: (v: number) => number, from: number, to: number): { x: number, v: number } {
-  let a = from
-  let b = to
-  let c = a + GOLDEN * (b - a)
-  let d = b - GOLDEN * (b - a)
-  let atC = at(c)
-  let atD = at(d)
-  for (let i = 0; i < STEPS && b - a > 1e-9 * b; i++) {
-    if (atC < atD) {
-      b = d
-      d = c
-      atD = atC
-      c = a + GOLDEN * (b - a)
-      atC = at(c)
-    }
-    else {
-      a = c
-      c = d
-      atC = atD
-      d = b - GOLDEN * (b - a)
-      atD = at(d)
-    }
-  }
-  return atC < atD ? { x: atC, v: c } : { x: atD, v: d }
 }

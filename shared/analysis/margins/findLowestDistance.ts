@@ -90,7 +90,7 @@ function searchBelowFloor(result: SearchResult, from: number, to: number, best: 
   }
   for (const stretch of search.skipped) {
     // Beyond the end of an endless list the limit at infinity stands for the rest.
-    if (stretch.logGain > threshold() && stretch.from < result.stopAt) look(stretch.from, stretch.to)
+    if (stretch.bound < Math.min(best.distance, 1 - 1e-11) && stretch.from < result.stopAt) look(stretch.from, stretch.to)
   }
   const value = new Float64Array(AXIS_VALUE_SIZE)
   const gainAt = (v: number) => {

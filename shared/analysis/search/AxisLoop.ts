@@ -20,6 +20,8 @@ export interface AxisLoop {
   /** Relative error of L allowed for: at most sum_k correction_k / |jv - root_k|, times sqrt(1 + v^2) for a sampled loop. */
   correction: Float64Array
   hasCorrection: boolean
+  /** For a pole and a zero close together compared to their distance from the axis, the index of the other; else -1. */
+  partner: Int32Array
   /** The same roots for evaluation: real ones, and pairs by their upper half, each as often as it counts. */
   reals: Float64Array
   realKinds: Int8Array
@@ -30,6 +32,8 @@ export interface AxisLoop {
   deadTime: number
   /** deadTime / sampleTime of a sampled loop, else 0 */
   delayInSamples: number
+  /** The roots from this index on are those of a sampled dead time. */
+  delayStart: number
   /** s; undefined for a continuous loop */
   sampleTime: number | undefined
   /** Sum of all weights: L goes as v^degree for v -> infinity. */

@@ -31,14 +31,14 @@ export interface SearchTask {
   floorLog: number
   /** No phase crossovers and minima are searched beyond. */
   stopAt: number
-  /** Finds of a kind after which, where |L| < 1, no more phase crossovers and minima are searched. */
+  /** Finds of a kind after which phase crossovers are only counted where |L| > 1, and minima searched only about |L| = 1. */
   maxFinds: number
   /** Boxes and finds at most; then an exception says where it stopped. */
   maxEffort: number
 }
 
-/** A stretch passed over because |L| stays below the floor there, and the greatest ln|L| on it. */
-export interface SkippedStretch { from: number, to: number, logGain: number }
+/** A stretch not searched for minima of |1 + L|, and a bound that |1 + L| does not fall below there. */
+export interface SkippedStretch { from: number, to: number, bound: number }
 
 /**
  * Lays boxes from left to right over a stretch of the axis and finds everything on them. On each box the same
@@ -53,6 +53,8 @@ export class AxisSearch {
   readonly exceptions: SearchException[] = []
   readonly skipped: SkippedStretch[] = []
   boxes = 0
+  /** Phase crossovers with |L| > 1 that were counted, by the sign of their slope, but not listed: the list is full. */
+  turnsAbove = 0
   /** The search stopped at this v for want of effort; Infinity: it went through. */
   stoppedAt = Number.POSITIVE_INFINITY
   /** The boxes laid, for a second search of a part of them: left and right ends, ln|L| at the centre and how far it strays. */
@@ -82,7 +84,9 @@ export class AxisSearch {
     for (;;) {
       const left = Math.min(gainDone, phaseDone, distanceDone, inverseDone)
       if (left >= to) return
-      let half = this.boxHalf(left)
+      // A long dead time bounds a box only where its turns are still searched one by one.
+      const counting = this.phase.v.length > task.maxFinds && this.distance.v.length > task.maxFinds
+      let half = this.boxHalf(left, !counting)
       for (let shrinks = 0; ; shrinks++) {
         if (++this.boxes + this.phase.v.length + this.distance.v.length > task.maxEffort) {
           this.stoppedAt = Math.min(this.stoppedAt, left)
@@ -99,9 +103,14 @@ export class AxisSearch {
         const forced = shrinks >= MAX_SHRINKS
         const greatest = this.log.re[0]! + this.log.spreadRe
         const beyond = left >= task.stopAt || greatest < task.floorLog
-        const full = greatest < 0
-        const phaseLow = beyond || (full && this.phase.v.length > task.maxFinds)
-        const low = beyond || (full && this.distance.v.length > task.maxFinds)
+        const least = this.log.re[0]! - this.log.spreadRe
+        if (counting && greatest >= 0 && least <= 0 && half * this.axis.deadTime > 2 * LONGEST_TURN) {
+          half = LONGEST_TURN / this.axis.deadTime
+          continue
+        }
+        const phaseFull = this.phase.v.length > task.maxFinds
+        const phaseLow = beyond || (phaseFull && greatest < 0)
+        const low = beyond || (this.distance.v.length > task.maxFinds && (greatest < 0 || least > 0))
         let ok = true
         if (gainDone < right) {
           const done = this.searchGain(gainDone, right, last, forced)
@@ -109,13 +118,13 @@ export class AxisSearch {
           else gainDone = done
         }
         if (ok && phaseDone < right) {
-          const done = phaseLow ? right : this.searchPhase(phaseDone, right, last, forced)
+          const done = phaseLow ? right : this.searchPhase(phaseDone, right, last, forced, phaseFull && least > 0)
           if (done < 0) ok = false
           else phaseDone = done
         }
         if (ok && distanceDone < right) {
           if (low) {
-            this.skip(distanceDone, right)
+            this.skip(distanceDone, right, greatest < 0 ? -Math.expm1(greatest) : Math.max(0, Math.expm1(least)))
             distanceDone = right
           }
           else {
@@ -142,7 +151,7 @@ export class AxisSearch {
   }
 
   /** The half-length h of a box that starts at `left`, with h = THETA times the distance from its centre to the nearest root. */
-  private boxHalf(left: number): number {
+  private boxHalf(left: number, bounded: boolean): number {
     const { re, im, count, originWeight } = this.axis
     const t2 = THETA * THETA
     let half = originWeight === 0 ? Number.POSITIVE_INFINITY : THETA * left / (1 - THETA)
@@ -154,7 +163,7 @@ export class AxisSearch {
       const h = (b + Math.sqrt(b * b + (1 - t2) * t2 * (x * x + a * a))) / (1 - t2)
       if (h < half) half = h
     }
-    if (this.axis.deadTime > 0) half = Math.min(half, LONGEST_TURN / this.axis.deadTime)
+    if (bounded && this.axis.deadTime > 0) half = Math.min(half, LONGEST_TURN / this.axis.deadTime)
     return Math.min(half, 1e6 * left)
   }
 
@@ -166,14 +175,13 @@ export class AxisSearch {
     return Math.min(1, Math.max(-1, (v - this.log.centre) / this.log.half))
   }
 
-  private skip(from: number, to: number): void {
-    const logGain = this.log.re[0]! + this.log.spreadRe
+  private skip(from: number, to: number, bound: number): void {
     const lastStretch = this.skipped[this.skipped.length - 1]
-    if (lastStretch && lastStretch.to === from && lastStretch.logGain >= logGain - 2) {
+    if (lastStretch && lastStretch.to === from && Math.abs(bound - lastStretch.bound) <= 0.1 * (1 - bound)) {
       lastStretch.to = to
-      lastStretch.logGain = Math.max(lastStretch.logGain, logGain)
+      lastStretch.bound = Math.min(lastStretch.bound, bound)
     }
-    else this.skipped.push({ from, to, logGain })
+    else this.skipped.push({ from, to, bound })
   }
 
   private horner(coefficients: Float64Array, y: number): number {
@@ -213,7 +221,7 @@ export class AxisSearch {
     return this.collect(this.gain, 'gain', end, forced)
   }
 
-  private searchPhase(from: number, right: number, last: boolean, forced: boolean): number {
+  private searchPhase(from: number, right: number, last: boolean, forced: boolean, countOnly: boolean): number {
     const { log } = this
     const centre = log.im[0]!
     const spread = log.spreadIm
@@ -254,6 +262,10 @@ export class AxisSearch {
       if (last) {
         const nearTo = (atTo - Math.PI) - TWO_PI * Math.round((atTo - Math.PI) / TWO_PI)
         if (Math.abs(nearTo) <= this.boundAt(yTo)) return this.giveUp('phase', from, end, forced)
+      }
+      if (countOnly) {
+        this.turnsAbove += (atTo > atFrom ? 1 : -1) * Math.max(0, lastTurn - firstTurn + 1)
+        return end
       }
       return this.collectTurns(firstTurn, lastTurn, yFrom, yTo, atTo > atFrom ? 1 : -1, from, end)
     }

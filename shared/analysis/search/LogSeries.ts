@@ -6,6 +6,8 @@ export const SERIES_DEGREE = 10
 
 const N = SERIES_DEGREE
 const U = 2 ** -53
+/** Roots nearer to the origin than this part of the centre are taken by their difference from the origin. */
+const INNER = 0.1
 /** Below these |q| that many terms leave less than 1e-18 of a term, which goes into the steady bound. */
 const FEW = [
   { below: 1e-6, terms: 3 },
@@ -27,7 +29,9 @@ const FEW = [
  * reciprocal), q^n to 11nu, the sum over the factors adds K + 2, so that the value errs by u(K+13)P, and with sum n rho^n <= 2 rho/(1-rho)
  * and its like for the derivatives by u(K+24)P, u(K+46)P, u(2K+140)P. The constant term errs by 5u(K+2) + 2u|ln|L|| and the dead
  * time's 2u(vτ + 2πν). Working on the series later (Taylor shift) errs by (4N+4)u sum |term_n|; it is added here once.
- * Errors of the model (the corrections of the factors) add sum W/|zeta| 2, 2, 4, 12 to the four (log(1+e), geometric series at rho = 1/2).
+ * Errors of the model (the corrections W of the factors): e(y) = sum W/zeta/(1 + qy) in the worst case, so |log(1 + e)| adds 2 sum W/|zeta|, and
+ * its derivatives 4, 8, 24 times sum W rho/|zeta| (geometric series at rho <= 1/2). In z it is W (1 - s)/(s - r) = W ((1 - r)/(s - r) - 1):
+ * |1 - s| times as much, |1 - r| times in the derivatives.
  */
 export class LogSeries {
   readonly re = new Float64Array(N + 1)
@@ -40,6 +44,8 @@ export class LogSeries {
   spreadRe = 0
   spreadIm = 0
 
+  /** Tails 0 to 3 and P of the factors taken by their difference. */
+  private readonly sums = new Float64Array(5)
   private readonly value = new Float64Array(AXIS_VALUE_SIZE)
 
   /** Expands about jc over |v - c| <= h; every root must be at least 2h from jc. */
@@ -58,23 +64,62 @@ export class LogSeries {
     this.half = h
     re.fill(0)
     im.fill(0)
-    tail.fill(0)
-    const model = axis.hasCorrection && axis.sampleTime !== undefined ? Math.hypot(1, c + h) : 1
+    const sampled = axis.sampleTime !== undefined
+    const model = sampled && axis.hasCorrection ? Math.hypot(1, c + h) : 1
+    const sums = this.sums
+    sums.fill(0)
     let absolute = 0
     let small = 0
     let error = 0
-    const count = axis.count + (axis.originWeight === 0 ? 0 : 1)
-    for (let k = 0; k < count; k++) {
+    let bend = 0
+    let g0 = 0
+    let g2 = 0
+    let g3 = 0
+    let originWeight = axis.originWeight
+    const { partner } = axis
+    const inner = INNER * c
+    for (let k = 0; k <= axis.count; k++) {
       const origin = k === axis.count
-      const x = origin ? c : c - axis.im[k]!
+      if (origin && originWeight === 0) break
+      const b = origin ? 0 : axis.im[k]!
+      const x = c - b
       const a = origin ? 0 : axis.re[k]!
       if (x === 0 && a === 0 && c === without) continue
-      const weight = origin ? axis.originWeight : axis.weight[k]!
+      const weight = origin ? originWeight : axis.weight[k]!
       const scale = h / (x * x + a * a)
       const qRe = x * scale
       const qIm = -a * scale
       const rho2 = qRe * qRe + qIm * qIm
       const rho = Math.sqrt(rho2)
+      if (axis.hasCorrection && !origin) {
+        const shift = axis.correction[k]!
+        error += shift * rho / h * model
+        bend += shift * (sampled ? 1 + Math.abs(a) + Math.abs(b) : 1) * rho2 / h
+      }
+      if (!origin && partner[k]! >= 0) {
+        const other = partner[k]!
+        if (other < k) continue
+        // A pole and a zero close together, by their difference: q - q' = q q' ((b - b') + j(a' - a))/h.
+        const y = c - axis.im[other]!
+        const a2 = axis.re[other]!
+        const scale2 = h / (y * y + a2 * a2)
+        const baseRe = y * scale2
+        const baseIm = -a2 * scale2
+        const gapRe = (b - axis.im[other]!) / h
+        const gapIm = (a2 - a) / h
+        const productRe = qRe * baseRe - qIm * baseIm
+        const productIm = qRe * baseIm + qIm * baseRe
+        this.addDifference(weight, qRe, qIm, baseRe, baseIm, productRe * gapRe - productIm * gapIm, productRe * gapIm + productIm * gapRe)
+        continue
+      }
+      if (!origin && Math.abs(b) + Math.abs(a) < inner) {
+        // A root near the origin, as seen from here: it counts as one at the origin, and adds its difference from that.
+        // Those of a sampled dead time cancel there.
+        if (k < axis.delayStart) originWeight += weight
+        const base = h / c
+        this.addDifference(weight, qRe, qIm, base, 0, (qRe * b + qIm * a) / c, (qIm * b - qRe * a) / c)
+        continue
+      }
       let terms = N
       if (rho < 1e-2) terms = rho < FEW[0]!.below ? 3 : rho < FEW[1]!.below ? 6 : 9
       let pRe = weight * qRe
@@ -93,20 +138,21 @@ export class LogSeries {
       absolute += size * rho * geometric
       if (terms === N) {
         const rho4 = rho2 * rho2
-        // size rho^(N+1), N = 10
-        const last = size * rho4 * rho4 * rho2 * rho
-        const g = last * geometric
-        tail[0] = tail[0]! + g
-        tail[2] = tail[2]! + g * (N + rho * geometric)
-        tail[3] = tail[3]! + g * (N * (N - 1) + 2 * N * rho * geometric + 2 * rho2 * geometric * geometric)
+        // size rho^(N+1)/(1 - rho), N = 10
+        const g = size * rho4 * rho4 * rho2 * rho * geometric
+        g0 += g
+        g2 += g * (N + rho * geometric)
+        g3 += g * (N * (N - 1) + 2 * N * rho * geometric + 2 * rho2 * geometric * geometric)
       }
       else {
         small += size * rho ** (terms + 1) * geometric
       }
-      if (axis.hasCorrection && !origin) error += axis.correction[k]! * rho / h
     }
-    tail[1] = tail[0]!
-    tail[0] = tail[0]! / (N + 1)
+    tail[0] = g0 / (N + 1) + sums[0]!
+    tail[1] = g0 + sums[1]!
+    tail[2] = g2 + sums[2]!
+    tail[3] = g3 + sums[3]!
+    absolute += sums[4]!
     for (let n = 2; n <= N; n++) {
       re[n] = re[n]! / n
       im[n] = im[n]! / n
@@ -114,11 +160,48 @@ export class LogSeries {
     im[1] = im[1]! - h * axis.deadTime
     re[0] = this.value[0]!
     im[0] = this.value[1]!
-    this.bound(axis, absolute, small, error * model, c + h)
+    this.bound(axis, absolute, small, error, bend, c + h)
+  }
+
+  /**
+   * Adds the terms of weight (log(1 + qy) - log(1 + by)) from the difference d = q - b, so that they are right relative to d however near q is to
+   * b: D_n = q^n - b^n by D_n = q D_(n-1) + d b^(n-1), with |D_n| <= n |d| rho^(n-1). The tails are sums of that, and so are the roundings:
+   * 12n u of D_n, which 32|d| in P covers up to the third derivative at rho <= 1/2.
+   */
+  private addDifference(weight: number, qRe: number, qIm: number, bRe: number, bIm: number, dRe: number, dIm: number): void {
+    const { re, im, sums } = this
+    let eRe = weight * dRe
+    let eIm = weight * dIm
+    let sRe = eRe
+    let sIm = eIm
+    re[1] = re[1]! + eRe
+    im[1] = im[1]! + eIm
+    for (let n = 2; n <= N; n++) {
+      const t = -(sRe * bRe - sIm * bIm)
+      sIm = -(sRe * bIm + sIm * bRe)
+      sRe = t
+      const e = sRe - (eRe * qRe - eIm * qIm)
+      eIm = sIm - (eRe * qIm + eIm * qRe)
+      eRe = e
+      re[n] = re[n]! + eRe
+      im[n] = im[n]! + eIm
+    }
+    const rho2 = Math.max(qRe * qRe + qIm * qIm, bRe * bRe + bIm * bIm)
+    const rho = Math.sqrt(rho2)
+    const g = 1 / (1 - rho)
+    const size = Math.abs(weight) * Math.sqrt(dRe * dRe + dIm * dIm)
+    const rho4 = rho2 * rho2
+    // size rho^N/(1 - rho), N = 10
+    const last = size * rho4 * rho4 * rho2 * g
+    sums[0] = sums[0]! + last
+    sums[1] = sums[1]! + last * (N + 1 + rho * g)
+    sums[2] = sums[2]! + last * (N * (N + 1) + 2 * (N + 1) * rho * g + 2 * rho2 * g * g)
+    sums[3] = sums[3]! + last * ((N + 1) * N * (N - 1) + 3 * (N + 1) * N * rho * g + 6 * (N + 1) * rho2 * g * g + 6 * rho2 * rho * g * g * g)
+    sums[4] = sums[4]! + 32 * size
   }
 
   /** Fills `steady` and the spreads from the sums of the factors. */
-  bound(axis: AxisLoop, absolute: number, small: number, error: number, reach: number): void {
+  bound(axis: AxisLoop, absolute: number, small: number, error: number, bend: number, reach: number): void {
     const { re, im, tail, steady } = this
     const k = axis.count + 2
     let sum0 = 0
@@ -141,9 +224,9 @@ export class LogSeries {
     const slack = (4 * N + 4) * U
     steady[0] = U * ((k + 13) * absolute + 5 * k + 2 * Math.abs(re[0]!) + 8
       + 2 * reach * axis.deadTime + 13 * axis.delayInSamples) + small + 2.1 * error + slack * sum0
-    steady[1] = U * ((k + 24) * absolute) + 4 * small + 2.1 * error + slack * sum1
-    steady[2] = U * ((k + 46) * absolute) + 40 * small + 4.2 * error + slack * sum2
-    steady[3] = U * ((2 * k + 140) * absolute) + 400 * small + 12.6 * error + slack * sum3
+    steady[1] = U * ((k + 24) * absolute) + 4 * small + 4.1 * bend + slack * sum1
+    steady[2] = U * ((k + 46) * absolute) + 40 * small + 8.2 * bend + slack * sum2
+    steady[3] = U * ((2 * k + 140) * absolute) + 400 * small + 24.6 * bend + slack * sum3
     const rest = tail[0]! + steady[0]!
     this.spreadRe = spreadRe + rest
     this.spreadIm = spreadIm + rest

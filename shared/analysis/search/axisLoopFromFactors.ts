@@ -3,6 +3,8 @@ import type { AxisLoop } from './AxisLoop'
 import { mapUnitCircleRoot } from './mapUnitCircleRoot'
 
 const UNIT_ROUNDOFF = 2 ** -53
+/** A pole and a zero are partners when they are nearer to each other than this part of their distance from the axis. */
+const PARTNERSHIP = 0.02
 /** Relative distance within which a pole and a zero are told as a hidden cancellation. */
 const CANCELLATION = 1e-9
 
@@ -130,8 +132,12 @@ function assemble(loop: FactoredLoop, roots: Root[], gain: number, excess: numbe
     }
   }
   // The factor (1 - s)^excess, and the dead time of a sampled loop as ((1 - s)/(1 + s))^(deadTime/T).
-  if (excess + delayInSamples !== 0) add(1, 0, excess + delayInSamples, 0)
-  if (delayInSamples !== 0) add(-1, 0, -delayInSamples, 0)
+  if (excess !== 0) add(1, 0, excess, 0)
+  const delayStart = re.length
+  if (delayInSamples !== 0) {
+    add(1, 0, delayInSamples, 0)
+    add(-1, 0, -delayInSamples, 0)
+  }
   for (let i = 0; i < Math.abs(excess); i++) {
     reals.push(1)
     realKinds.push(Math.sign(excess))
@@ -152,6 +158,7 @@ function assemble(loop: FactoredLoop, roots: Root[], gain: number, excess: numbe
     weight: Float64Array.from(weight),
     correction: Float64Array.from(correction),
     hasCorrection: correction.some(value => value > 0),
+    partner: findPartners(re, im, weight, delayStart),
     reals: Float64Array.from(reals),
     realKinds: Int8Array.from(realKinds),
     pairsRe: Float64Array.from(pairs, root => root.re),
@@ -159,9 +166,32 @@ function assemble(loop: FactoredLoop, roots: Root[], gain: number, excess: numbe
     pairKinds: Int8Array.from(pairs, root => root.kind),
     deadTime: sampled ? 0 : loop.deadTime,
     delayInSamples,
+    delayStart,
     sampleTime: loop.sampleTime,
-    degree: originWeight + Math.round(weight.reduce((sum, value) => sum + value, 0)),
+    degree: originWeight + weight.slice(0, delayStart).reduce((sum, value) => sum + value, 0),
     boundary: [...boundary].filter(([, w]) => w !== 0).map(([v, w]) => ({ v, weight: w })).sort((x, y) => x.v - y.v),
     unstablePoles, cancelled, smallestRoot, largestRoot,
   }
+}
+
+/** Pairs poles with zeros close by, each with at most one; conjugates come out paired alike because the lists are symmetric. */
+function findPartners(re: number[], im: number[], weight: number[], count: number): Int32Array {
+  const partner = new Int32Array(re.length).fill(-1)
+  for (let k = 0; k < count; k++) {
+    if (weight[k] !== -1 || partner[k] !== -1) continue
+    let nearest = PARTNERSHIP * Math.abs(re[k]!)
+    let found = -1
+    for (let i = 0; i < count; i++) {
+      if (weight[i] !== 1 || partner[i] !== -1) continue
+      const gap = Math.hypot(re[i]! - re[k]!, im[i]! - im[k]!)
+      if (gap < nearest) {
+        nearest = gap
+        found = i
+      }
+    }
+    if (found < 0) continue
+    partner[k] = found
+    partner[found] = k
+  }
+  return partner
 }

@@ -34,6 +34,7 @@ export function expandEnd(axis: AxisLoop, end: AxisEnd, reach: number, log: LogS
   log.half = reach
   let absolute = 0
   let error = 0
+  let bend = 0
   let constant = Math.log(Math.abs(axis.gain))
   let positive = 0
   for (let k = 0; k < axis.count; k++) {
@@ -45,7 +46,7 @@ export function expandEnd(axis: AxisLoop, end: AxisEnd, reach: number, log: LogS
     const qIm = reach * (origin ? (-a / size) / size : a)
     if (origin) {
       constant += weight * Math.log(size)
-      if (b === 0 && a > 0) positive += Math.round(weight + axis.delayInSamples * (a === 1 ? -1 : 0))
+      if (b === 0 && a > 0 && k < axis.delayStart) positive += weight
     }
     let pRe = weight * qRe
     let pIm = weight * qIm
@@ -65,9 +66,12 @@ export function expandEnd(axis: AxisLoop, end: AxisEnd, reach: number, log: LogS
     tail[2] = tail[2]! + last * (N + rho * geometric)
     tail[3] = tail[3]! + last * (N * (N - 1) + 2 * N * rho * geometric + 2 * rho * rho * geometric * geometric)
     if (axis.hasCorrection) {
-      // W/|jv - r| at the origin; at infinity W u, or W sqrt(1 + v^2)/v for a sampled loop.
-      const model = axis.sampleTime === undefined ? (origin ? 1 / size : reach) : (origin ? Math.hypot(1, reach) / size : Math.hypot(1, reach))
-      error += axis.correction[k]! * model
+      const shift = axis.correction[k]!
+      const sampled = axis.sampleTime !== undefined
+      // W/|jv - r| is W/size at the origin and W/v at infinity; W |1 - jv|/|jv - r| of a sampled loop is W at infinity.
+      const there = origin ? (sampled ? Math.hypot(1, reach) : 1) / size : sampled ? Math.hypot(1, reach) : reach
+      error += shift * there
+      bend += shift * (origin ? (there + (sampled ? 1 : 0)) * rho : sampled ? (1 + size) * reach : reach)
     }
   }
   tail[1] = tail[0]!
@@ -80,7 +84,7 @@ export function expandEnd(axis: AxisLoop, end: AxisEnd, reach: number, log: LogS
   const wrapped = turns - 4 * Math.ceil((turns - 2) / 4)
   re[0] = constant
   im[0] = wrapped * HALF_PI
-  log.bound(axis, absolute, 0, error, origin ? reach : 0)
+  log.bound(axis, absolute, 0, error, bend, origin ? reach : 0)
   // Each logarithm of the constant errs by a unit of its own size.
   log.steady[0] = log.steady[0]! + 2 ** -52 * (Math.abs(Math.log(Math.abs(axis.gain))) + axis.count * 40)
   return { log, weight, reach, quarterTurns: Number.isInteger(wrapped) ? wrapped : Number.NaN }

@@ -46,7 +46,7 @@ export function searchLoop(axis: AxisLoop, options: SearchOptions): SearchResult
   const origin = settleEnd(axis, 'origin', wanted)
   const turning = axis.deadTime > 0
   const infinity = settleEnd(axis, 'infinity', turning && axis.degree >= 0 ? { ...wanted, phase: false, distance: false } : wanted)
-  const boundary = axis.boundary.map(({ v, weight }) => settleBoundaryRoot(axis, v, weight, floorLog))
+  const boundary = axis.boundary.map(({ v, weight }) => settleBoundaryRoot(axis, v, weight, floorLog, wanted.phase))
   const endless = turning && axis.degree >= 0 && infinity.logGain >= floorLog
   let stopAt = Number.POSITIVE_INFINITY
   let edge = infinity.edge

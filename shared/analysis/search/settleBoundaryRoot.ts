@@ -27,7 +27,7 @@ export interface SettledBoundaryRoot {
  * Shrinks a region about an undamped pole or zero until it holds no find. With that factor taken out, the rest has a
  * Taylor series about the root: ln|L| = weight ln|y| + series is monotone on either side where |weight| > sum n|re_n| + bound.
  */
-export function settleBoundaryRoot(axis: AxisLoop, v: number, weight: number, floorLog: number): SettledBoundaryRoot {
+export function settleBoundaryRoot(axis: AxisLoop, v: number, weight: number, floorLog: number, searchesPhase: boolean): SettledBoundaryRoot {
   const log = new LogSeries()
   const value = new Float64Array(AXIS_VALUE_SIZE)
   let half = v
@@ -82,7 +82,7 @@ export function settleBoundaryRoot(axis: AxisLoop, v: number, weight: number, fl
     const clearAbove = Math.abs(wrap(result.phaseAbove - Math.PI))
     const limitError = bound0 + 1e-14
     const clear = Math.min(clearBelow, clearAbove)
-    if (clear > log.spreadIm + limitError) {
+    if (!searchesPhase || clear > log.spreadIm + limitError) {
       result.settled = true
       break
     }

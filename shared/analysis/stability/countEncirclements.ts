@@ -35,7 +35,7 @@ export function countEncirclements(result: SearchResult): EncirclementCount {
   }
   if (ties.real) return countRealLocus(result)
 
-  let count = 0
+  let count = 2 * result.search.turnsAbove
   for (let i = 0; i < phase.v.length; i++) {
     if (phase.logGain[i]! > 0) count += 2 * phase.direction[i]!
   }

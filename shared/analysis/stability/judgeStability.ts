@@ -40,7 +40,7 @@ export function judgeStability(loop: FactoredLoop, result: SearchResult, lowest:
       reason: joined(`the count gives ${closedLoopUnstablePoles} unstable closed-loop poles, which cannot be`, hidden),
     }
   }
-  // a closed-loop pole that counts as on the boundary may lie on either side: the locus, clear of -1, tells on which
+  // A root so near the boundary that it counts as on it may lie on either side.
   if (roots && roots.certain && (closedLoopUnstablePoles < roots.count || closedLoopUnstablePoles > roots.count + roots.boundary)) {
     return {
       ...counted, verdict: 'undetermined',
