@@ -16,6 +16,8 @@ export interface ListedCrossing {
   change: { gain: number, phase: number } | null
   /** |1 + L| */
   distance: number
+  /** measured: no more than the noise of its samples would make */
+  withinNoise: boolean
 }
 
 const place = (frequency: ListedFrequency) => frequency === 'infinity' ? Number.POSITIVE_INFINITY : frequency
@@ -26,18 +28,18 @@ const place = (frequency: ListedFrequency) => frequency === 'infinity' ? Number.
  * 2 sin(|phase margin| / 2) at |L| = 1, and |1 - 10^(-gain margin / 20)| where L is real and negative.
  */
 export function listCrossings(analysis: LoopAnalysis): ListedCrossing[] {
-  const none = { slope: null, phaseMargin: null, gainMargin: null, delayMargin: null, change: null }
+  const none = { slope: null, phaseMargin: null, gainMargin: null, delayMargin: null, change: null, withinNoise: false }
   const rows: ListedCrossing[] = [
-    ...analysis.gainCrossovers.map(({ frequency, slope, phaseMargin, delayMargin, distance }, index) => ({
-      ...none, id: `gain-${index}`, kind: 'gain' as const, frequency, slope, phaseMargin, delayMargin,
+    ...analysis.gainCrossovers.map(({ frequency, slope, phaseMargin, delayMargin, distance }, index): ListedCrossing => ({
+      ...none, id: `gain-${index}`, kind: 'gain', frequency, slope, phaseMargin, delayMargin,
       distance: distance ?? 2 * Math.sin(Math.abs(phaseMargin) * Math.PI / 360),
     })),
-    ...analysis.phaseCrossovers.map(({ frequency, slope, gainMargin, distance }, index) => ({
-      ...none, id: `phase-${index}`, kind: 'phase' as const, frequency, slope, gainMargin,
+    ...analysis.phaseCrossovers.map(({ frequency, slope, gainMargin, distance, withinNoise }, index): ListedCrossing => ({
+      ...none, id: `phase-${index}`, kind: 'phase', frequency, slope, gainMargin, withinNoise: withinNoise ?? false,
       distance: distance ?? Math.abs(1 - 10 ** (-gainMargin / 20)),
     })),
-    ...analysis.closestApproaches.map(({ frequency, distance, gainChange, phaseChange }, index) => ({
-      ...none, id: `approach-${index}`, kind: 'approach' as const, frequency, distance, change: { gain: gainChange, phase: phaseChange },
+    ...analysis.closestApproaches.map(({ frequency, distance, gainChange, phaseChange, withinNoise }, index): ListedCrossing => ({
+      ...none, id: `approach-${index}`, kind: 'approach', frequency, distance, withinNoise: withinNoise ?? false, change: { gain: gainChange, phase: phaseChange },
     })),
   ]
   return rows.sort((a, b) => {
