@@ -11,5 +11,5 @@ const mostEntries = 1000
 export default defineApiHandler('POST /api/analyses', { body: z.unknown(), bodyLimit: 50_000_000 }, async ({ body }) => {
   if (!Array.isArray(body)) return analyseInPool(body)
   if (body.length > mostEntries) throw new AppError('invalidInput', `A list holds at most ${mostEntries} entries.`)
-  return Promise.all(body.map(analyseInPool))
+  return Promise.all(body.map(entry => analyseInPool(entry)))
 })

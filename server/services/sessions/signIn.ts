@@ -1,3 +1,4 @@
+import { Op } from 'sequelize'
 import { AppError } from '#shared/errors/AppError'
 import { verifyAgainstNobody, verifyPassword } from '../../adapters/passwordHash'
 import { hashOfSecret, newSecret } from '../../adapters/secretToken'
@@ -32,6 +33,7 @@ export async function signIn(fields: { email: string, password: string }, addres
   await byAccount.forget(account)
   const secret = newSecret()
   await writeTransaction(async () => {
+    await SessionRow.destroy({ where: { expiresAt: { [Op.lte]: nowOf(context) } } })
     await SessionRow.create({
       idHash: hashOfSecret(secret),
       personId: person.id,

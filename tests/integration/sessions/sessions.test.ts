@@ -55,6 +55,12 @@ describe('a session', () => {
     await writeTransaction(() => PersonRow.update({ disabledAt: null }, { where: { id: person.id } }))
   })
 
+  it('that has ended is cleared away when the next begins', async () => {
+    const { secret } = await signInAt('2026-12-01T08:00:00Z')
+    await signInAt('2026-12-02T08:00:00Z')
+    expect(await SessionRow.findByPk(hashOfSecret(secret))).toBeNull()
+  })
+
   it('leaves no secret in the database', async () => {
     const { secret } = await signInAt('2026-12-01T08:00:00Z')
     const stored = readFileSync(opened.file, 'latin1') + readFileSync(`${opened.file}-wal`, 'latin1')
