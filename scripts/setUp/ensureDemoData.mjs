@@ -8,8 +8,7 @@ import { requireStep } from './runStep.mjs'
  * start that was broken off leaves nothing half. WIDEBERTH_DEMO=0 leaves the database empty; the first visit then asks
  * for the first administrator. Returns whether the data in the folder are the demo's.
  */
-export async function ensureDemoData(entry) {
-  const folder = dataFolder()
+export async function ensureDemoData(entry, folder = dataFolder()) {
   mkdirSync(folder, { recursive: true })
   if (existsSync(join(folder, 'wideberth.sqlite'))) return existsSync(join(folder, 'demo-data'))
   if (process.env.WIDEBERTH_DEMO === '0') return false
