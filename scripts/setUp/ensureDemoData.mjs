@@ -17,7 +17,7 @@ export async function ensureDemoData(entry, folder = dataFolder()) {
   rmSync(making, { recursive: true, force: true })
   mkdirSync(making)
   await requireStep('Making the demo data', process.execPath, [entry], {
-    quiet: true,
+    quiet: 'stdout',
     env: { NODE_ENV: 'production', PORT: '0', HOST: '127.0.0.1', UV_THREADPOOL_SIZE: '16', WIDEBERTH_DATA: making, WIDEBERTH_MAKE_DEMO: '1', WIDEBERTH_SMTP_URL: '' },
   })
   for (const name of readdirSync(making).filter(entryName => entryName !== 'wideberth.sqlite')) renameSync(join(making, name), join(folder, name))

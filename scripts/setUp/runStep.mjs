@@ -3,11 +3,11 @@ import { root } from './paths.mjs'
 
 /**
  * Runs a command in the checkout with its output on ours, and resolves with its exit code.
- * `quiet` keeps the output back and shows it only when the command fails.
+ * `quiet` keeps the output back and shows it only when the command fails; 'stdout' keeps only that of the standard output back.
  */
 export function runStep(command, args, { env = {}, quiet = false } = {}) {
   return new Promise((resolve, reject) => {
-    const child = spawn(command, args, { cwd: root, env: { ...process.env, ...env }, stdio: quiet ? ['ignore', 'pipe', 'pipe'] : ['ignore', 'inherit', 'inherit'] })
+    const child = spawn(command, args, { cwd: root, env: { ...process.env, ...env }, stdio: ['ignore', quiet ? 'pipe' : 'inherit', quiet === true ? 'pipe' : 'inherit'] })
     const kept = []
     child.stdout?.on('data', chunk => kept.push(chunk))
     child.stderr?.on('data', chunk => kept.push(chunk))

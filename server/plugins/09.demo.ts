@@ -10,7 +10,7 @@ import { makeDemo } from '../demo/makeDemo'
 export default defineNitroPlugin((nitro) => {
   if (process.env.WIDEBERTH_MAKE_DEMO !== '1') return
   nitro.hooks.hook('database:open', () => {
-    makeDemo(words => console.log(words)).then(async () => {
+    makeDemo(words => console.error(words)).then(async () => {
       await writeFile(join(dirname(databaseFile()), 'demo-data'), '')
       await nitro.hooks.callHook('close')
       process.exit(0)
