@@ -54,7 +54,7 @@ export const gangway: DemoSystem = {
       code: 'LU-R', name: 'Luff rate', axis: 'luff', breakPoint: 'servo valve command of the luff cylinders', otherLoops: 'luff position loop open; slew, telescope and roll loops closed', notes: '',
       model: { name: 'design model', definition: { kind: 'expression', expression: 'kLuR*(1+s/60)/s / (s^2/whLu^2+2*zh*s/whLu+1) / (s/200+1) * (s^2/(1.12*wVer)^2+0.04*s/wVer+1)/(s^2/wVer^2+0.03*s/wVer+1) * exp(-0.005*s)' } },
       sweeps: {
-        conditionCodes: ['C1', 'C2', 'C3', 'C4', 'C5'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 0.8, to: 260, pointsPerDecade: 110, fine: [{ around: 'wVer', from: 0.9, to: 1.25, points: 90 }],
+        conditionCodes: ['C1', 'C2', 'C3', 'C4', 'C5'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 0.8, to: 140, pointsPerDecade: 110, fine: [{ around: 'wVer', from: 0.9, to: 1.25, points: 90 }],
         truth: { whLu: 0.985, wVer: 1.012, kLuR: 1.03 }, averages: 64, noise: 0.0006, seed: 4201, amplitude: 'valve command 4 % of full scale, 0 to peak',
       },
     },
@@ -66,7 +66,7 @@ export const gangway: DemoSystem = {
       code: 'TE-R', name: 'Telescope rate', axis: 'telescope', breakPoint: 'servo valve command of the telescope winch', otherLoops: 'telescope position loop open; slew, luff and roll loops closed', notes: '',
       model: rootsOfTelescopeRate,
       sweeps: {
-        conditionCodes: ['C2', 'C3'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 1, to: 420, pointsPerDecade: 120, fine: [{ around: 'wAx', from: 0.9, to: 1.1, points: 80 }],
+        conditionCodes: ['C2', 'C3'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 1, to: 220, pointsPerDecade: 120, fine: [{ around: 'wAx', from: 0.9, to: 1.1, points: 80 }],
         truth: { whTe: 0.97, wAx: 0.993 }, averages: 64, noise: 0.0005, seed: 4207, amplitude: 'valve command 5 % of full scale, 0 to peak',
       },
     },
