@@ -28,8 +28,9 @@ export function makeSweep({ loop, frequencies, averages, noise, seed }: SweepOpt
     const frequency = Number(wanted.toPrecision(7))
     if (!loop.evaluate(2 * Math.PI * frequency, value)) throw new Error(`The loop gain has no value at ${frequency} Hz.`)
     const { re, im, coherence } = estimate(value[0]!, value[1]!, averages, noise, random)
-    const cells = [20 * Math.log10(Math.hypot(re, im)), Math.atan2(im, re) * 180 / Math.PI, coherence].map(cell => cell.toFixed(4))
-    return [frequency, ...cells].join(',')
+    const cells = [20 * Math.log10(Math.hypot(re, im)), Math.atan2(im, re) * 180 / Math.PI].map(cell => cell.toFixed(4))
+    // A coherence rounded to 0 would bound nothing: it keeps its digits.
+    return [frequency, ...cells, Number(coherence.toPrecision(5))].join(',')
   })
   return [
     '# Invented data: a loop gain computed from a model, with random noise added by a script.',

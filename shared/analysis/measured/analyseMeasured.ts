@@ -5,13 +5,15 @@ import { curveAt, curveInGap } from './curveAt'
 import { distanceOf } from './distanceOf'
 import { type DistanceMinimum, findDistanceMinima } from './findDistanceMinima'
 import { findLevelCrossings, type LevelCrossings } from './findLevelCrossings'
-import { exceptionsOf, judgeGaps } from './judgeGaps'
+import { exceptionsOf, judgeGaps, leavesCountOpen } from './judgeGaps'
 import { leastDistanceBetween } from './leastDistanceBetween'
 import type { MeasuredCurve } from './MeasuredCurve'
 import { measuredStability } from './measuredStability'
 import { diskMarginOf, summariseMeasured } from './summariseMeasured'
 
 const degrees = 180 / Math.PI
+/** Longest list of one kind that is given back. */
+const listLimit = 10_000
 /** ln of a ratio in dB */
 const nepers = Math.LN10 / 20
 
@@ -39,19 +41,21 @@ export function analyseMeasured(input: MeasuredInput): LoopAnalysis {
   const vectorMargin = vectorMarginOf(curve, minima, from, to)
 
   const faults = judgeGaps(curve, floor)
-  const openFault = faults.find(fault => fault.least === 0)
+  const openFault = faults.find(fault => leavesCountOpen(curve, fault))
   const openGap = openFault === undefined ? null : { from: curve.frequency[openFault.gap]!, to: curve.frequency[openFault.gap + 1]! }
   const stability = measuredStability(input, curve, openGap)
+  const approaches = minima.filter(minimum => minimum.gain >= floor && minimum.frequency > from && minimum.frequency < to).map(minimum => approachAt(curve, minimum))
   const stable = stability.verdict === 'stable'
   const exceptions = [
     ...outsideData(input, curve), ...exceptionsOf(curve, faults, from, to), ...contactsIn(curve, gainLevels, phaseLevels, from, to),
+    ...pastListLimit(gainCrossovers, 'gain crossovers', to), ...pastListLimit(phaseCrossovers, 'phase crossovers', to), ...pastListLimit(approaches, 'closest approaches', to),
   ].sort((a, b) => a.from - b.from)
   return {
     ...(input.name !== undefined && { name: input.name }),
     frequencyUnit,
-    gainCrossovers,
-    phaseCrossovers,
-    closestApproaches: minima.filter(minimum => minimum.gain >= floor && minimum.frequency > from && minimum.frequency < to).map(minimum => approachAt(curve, minimum)),
+    gainCrossovers: gainCrossovers.slice(0, listLimit),
+    phaseCrossovers: phaseCrossovers.slice(0, listLimit),
+    closestApproaches: approaches.slice(0, listLimit),
     vectorMargin,
     summary: stable ? summariseMeasured(curve, from, to, gainCrossovers, phaseCrossovers, vectorMargin.distance) : null,
     diskMargin: stable ? diskMarginOf(curve, from, to) : null,
@@ -140,6 +144,12 @@ function contactsIn(curve: MeasuredCurve, gainLevels: LevelCrossings, phaseLevel
     ...tell(gainLevels, 'a loop gain of magnitude 1', 'gainTangency', 'unitGainOverStretch'),
     ...tell(phaseLevels, 'the negative real axis', 'phaseTangency', 'realOverStretch'),
   ]
+}
+
+function pastListLimit(list: { frequency: number | 'infinity' }[], what: string, to: number): CoverageException[] {
+  const last = list[listLimit - 1]?.frequency
+  if (list.length <= listLimit || typeof last !== 'number') return []
+  return [{ from: last, to, code: 'listLimit', reason: `There are ${list.length} ${what}; the first ${listLimit} are listed.` }]
 }
 
 function leastAtSamples({ frequency, re, im }: MeasuredCurve, from: number, to: number): number {

@@ -14,6 +14,8 @@ export interface GapFault {
   least: number
 }
 
+/** Where phase or magnitude step too far a mode may lie between: |L| is then taken to stay within this factor (20 dB) of the samples. */
+const unseenMode = 10
 /** A phase step over this is not known to be the shorter way round. rad */
 const widestPhaseStep = Math.PI / 3
 /** A magnitude step over this hides what is between: 10 dB. */
@@ -25,7 +27,7 @@ const neighbours = 5
 
 /**
  * The gaps between samples that cannot be trusted, in order, each with its foremost reason:
- * - the phase steps by more than 60 deg, or the magnitude by more than 10 dB;
+ * - the phase steps by more than 60 deg, or the magnitude by more than 10 dB, and the confidence circles do not explain it;
  * - the locus could pass -1 on its other side: -1 lies in the ellipse with the two samples as foci and 1.5 times their distance as length;
  * - a rational fit through the five samples on each side differs from the curve;
  * - the 95 % confidence circle of a sample beside it holds -1.
@@ -42,21 +44,42 @@ export function judgeGaps(curve: MeasuredCurve, floor: number): GapFault[] {
     const next = gap + 1
     if (gain[gap]! < floor && gain[next]! < floor) continue
     const least = leastDistanceBetween(re[gap]!, im[gap]!, re[next]!, im[next]!)
-    if (Math.abs(phase[next]! - phase[gap]!) > widestPhaseStep) faults.push({ gap, code: 'phaseStep', least })
+    const noisy = stepIsNoise(curve, gap)
+    if (!noisy && Math.abs(phase[next]! - phase[gap]!) > widestPhaseStep) faults.push({ gap, code: 'phaseStep', least: leastWithUnseenMode(gain[gap]!, gain[next]!) })
     else if (least === 0) faults.push({ gap, code: 'otherSide', least })
     else if (radius !== null && (radius[gap]! >= distance(gap) || radius[next]! >= distance(next))) faults.push({ gap, code: 'confidenceCircle', least: 0 })
-    else if (Math.abs(gain[next]! - gain[gap]!) > widestGainStep) faults.push({ gap, code: 'magnitudeStep', least })
+    else if (!noisy && Math.abs(gain[next]! - gain[gap]!) > widestGainStep) faults.push({ gap, code: 'magnitudeStep', least: leastWithUnseenMode(gain[gap]!, gain[next]!) })
     else {
-      const closest = hiddenByFit(curve, gap)
-      if (closest !== null) faults.push({ gap, code: 'neighbourFit', least: Math.min(least, closest) })
+      const hidden = hiddenByFit(curve, gap)
+      if (hidden !== null) faults.push({ gap, code: 'neighbourFit', least: Math.min(least, hidden) })
     }
   }
   return faults
 }
 
+/** Least |1 + L| where only the magnitude is bounded, by a factor about that of the samples. */
+function leastWithUnseenMode(gain: number, nextGain: number): number {
+  return Math.max(0, 1 - unseenMode * Math.exp(Math.max(gain, nextGain)), Math.exp(Math.min(gain, nextGain)) / unseenMode - 1)
+}
+
+/** Whether two samples may be of one loop gain: their 95 % circles meet, so a step between them is no sign of anything between. */
+function stepIsNoise({ re, im, radius }: MeasuredCurve, gap: number): boolean {
+  return radius !== null && Math.hypot(re[gap + 1]! - re[gap]!, im[gap + 1]! - im[gap]!) <= radius[gap]! + radius[gap + 1]!
+}
+
 /**
- * What the fit through the neighbours shows between two samples that the curve does not: the least |1 + L| of the fit at the places
- * compared, null where fit and curve agree. A difference counts only when it stands clear of the fit's own misfit, which is noise.
+ * Whether the number of turns about -1 in a gap is open: -1 may lie on either side, a mode unseen at |L| over 0.03 could go round it,
+ * or the locus turns outside the unit circle by an unknown angle.
+ */
+export function leavesCountOpen({ gain }: MeasuredCurve, { gap, code, least }: GapFault): boolean {
+  if (code === 'phaseStep' && Math.max(gain[gap]!, gain[gap + 1]!) > 0) return true
+  return least === 0 || (code !== 'otherSide' && code !== 'confidenceCircle' && least < 0.7)
+}
+
+/**
+ * Whether the fit through the neighbours shows something between two samples that the curve does not: null where fit and curve agree,
+ * otherwise a lower bound of |1 + L| for what hides there, 1 - 2 |L| of the fit (6 dB for what the places compared leave out), else 0.
+ * A difference counts only when it stands clear of noise: the misfit of the fit, and the confidence circles.
  */
 function hiddenByFit(curve: MeasuredCurve, gap: number): number | null {
   const { frequency, re, im } = curve
@@ -65,7 +88,7 @@ function hiddenByFit(curve: MeasuredCurve, gap: number): number | null {
   if (fit === null) return null
   const noise = Math.max(fit.misfit, 1e-7, noiseOfSamples(curve, gap))
   const value = new Float64Array(2)
-  let closest = Infinity
+  let greatest = 0
   let differs = false
   for (const at of placesToCompare(curve, gap, fit, noise)) {
     const point = curveAt(curve, at)
@@ -75,11 +98,11 @@ function hiddenByFit(curve: MeasuredCurve, gap: number): number | null {
     fit.evaluate(at, value)
     const difference = Math.hypot(value[0]! - cr, value[1]! - ci)
     const reach = Math.hypot(value[0]!, value[1]!)
-    closest = Math.min(closest, Math.hypot(1 + value[0]!, value[1]!))
+    greatest = Math.max(greatest, reach)
     if (difference <= 8 * noise * size) continue
     if (difference > largestDifference * Math.hypot(1 + cr, ci) || crossesUnity(size, reach, curve, gap)) differs = true
   }
-  return differs ? closest : null
+  return differs ? Math.max(0, 1 - 2 * greatest) : null
 }
 
 /** Relative rms error of the samples beside a gap, from their 95 % circles (sqrt(-ln 0.05) = 1.73 of it for complex normal errors). */

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { analyseMeasured } from '#shared/analysis/measured/analyseMeasured'
+import { leastDistanceBetween } from '#shared/analysis/measured/leastDistanceBetween'
 import { readMeasurement } from '#shared/importers/readMeasurement'
 import { previewMeasurement } from '#shared/importers/previewMeasurement'
 import { makeSweep } from '#server/demo/makeSweep'
@@ -64,6 +65,14 @@ describe('a gap between samples is trusted', () => {
     expect(analyseMeasured(sampleResponse(withMode(10, 0.003, 0.01), frequencies)).coverage.exceptions).toEqual([])
   })
 
+  it('when the confidence circles of its samples explain the step of phase', () => {
+    const input = through(atAngle(0.05, 0), atAngle(0.05, 90), atAngle(0.05, 95))
+    const withCoherence = (coherence: number) => ({ measured: { ...input.measured, averages: 16, points: input.measured.points.map(point => ({ ...point, coherence })) } })
+    // n = 16: radius 1.35 |L| at coherence 0.1091, 0.157 |L| at 0.9; the samples lie 1.41 |L| apart.
+    expect(analyseMeasured(withCoherence(0.1091)).coverage.exceptions).toEqual([])
+    expect(analyseMeasured(withCoherence(0.9)).coverage.exceptions).toMatchObject([{ code: 'phaseStep' }])
+  })
+
   it('with noise alone: no fit invents a feature in ten noisy sweeps of a smooth loop', () => {
     const loopGain = rational([4], [1, 1, 0], 0.05)
     const evaluate = (w: number, out: Float64Array) => {
@@ -80,9 +89,15 @@ describe('a gap between samples is trusted', () => {
 })
 
 describe('what a gap may hide', () => {
-  it('is bounded by the triangle inequality: (|1 + A| + |1 + B| - 1.5 |A - B|) / 2', () => {
-    // A = 9, B = 3: (10 + 4 - 9) / 2 = 2.5; the straight way between comes to 4.
-    expect(gapAt(through([10, 0.001], [3, 0.001], [2.9, 0.001]), 1.5)?.leastDistance).toBeCloseTo((11 + 4 - 1.5 * 7) / 2, 4)
+  it('is bounded by the triangle inequality where nothing steps far: (|1 + A| + |1 + B| - 1.5 |A - B|) / 2', () => {
+    expect(leastDistanceBetween(9, 0, 3, 0)).toBeCloseTo((10 + 4 - 1.5 * 6) / 2, 14)
+    expect(leastDistanceBetween(-1.1, 0.2, -0.9, -0.2)).toBe(0)
+  })
+
+  it('is bounded by a factor of ten in magnitude where phase or magnitude step far', () => {
+    expect(gapAt(through([100, 0.001], [30, 0.001], [29, 0.001]), 1.5)).toMatchObject({ code: 'magnitudeStep', leastDistance: expect.closeTo(2, 6) })
+    expect(gapAt(through(atAngle(0.05, 0), atAngle(0.05, 90), atAngle(0.05, 95)), 1.5)).toMatchObject({ code: 'phaseStep', leastDistance: expect.closeTo(0.5, 6) })
+    expect(gapAt(through(atAngle(0.2, 0), atAngle(0.2, 90), atAngle(0.2, 95)), 1.5)).toMatchObject({ code: 'phaseStep', leastDistance: 0 })
   })
 
   it('holds for the loop the samples were taken from, on every gap that is told', () => {
