@@ -2,6 +2,8 @@ import { Op } from 'sequelize'
 import type { Job } from '#shared/types/report'
 import { JobEvent } from '../../database/models/JobEvent'
 import { jobSignals } from '../../jobs/jobSignals'
+import { presentJob } from '../../presenters/presentJob'
+import { findJob } from './findJob'
 
 export interface JobBeat {
   sequence: number
@@ -46,14 +48,13 @@ export async function* followJob(jobId: number, after: number | null, signal: Ab
       yield { sequence, job: payload }
       if (isEnded(payload)) return
     }
+    if (events.length === 0) {
+      const job = presentJob(await findJob(jobId))
+      // A job whose events are gone, or that none were kept of, is told by its row.
+      if (seen === null) yield { sequence: 0, job }
+      if (isEnded(job)) return
+    }
     seen ??= 0
-    if (events.length === 0 && await hasEnded(jobId)) return
     await nextSignal(jobId, signal)
   }
-}
-
-/** Whether the last thing that happened was the end: a reader that has seen it need not wait. */
-async function hasEnded(jobId: number): Promise<boolean> {
-  const last = await JobEvent.findOne({ where: { jobId }, order: [['sequence', 'DESC']] })
-  return last !== null && isEnded(last.payload)
 }

@@ -1,11 +1,6 @@
-import { AppError } from '#shared/errors/AppError'
 import type { Job } from '#shared/types/report'
-import { JobRow } from '../../database/models/JobRow'
 import { presentJob } from '../../presenters/presentJob'
+import { findJob } from './findJob'
 
-/** A job by id; throws 'not found'. */
-export async function readJob(jobId: number): Promise<Job> {
-  const job = await JobRow.findByPk(jobId)
-  if (job === null) throw new AppError('notFound', 'There is no such job.')
-  return presentJob(job)
-}
+/** How far a job has come; throws 'not found'. */
+export const readJob = async (jobId: number): Promise<Job> => presentJob(await findJob(jobId))

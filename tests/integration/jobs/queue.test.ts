@@ -156,6 +156,16 @@ describe('the queue of jobs', () => {
     expect(late).toEqual(['done'])
   })
 
+  it('tells a job that has ended by its row where no events were kept', async () => {
+    const revision = await freeze()
+    const jobId = revision.job?.id ?? 0
+    await JobEvent.destroy({ where: { jobId } })
+    await JobRow.update({ state: 'cancelled' }, { where: { id: jobId } })
+    const states: string[] = []
+    for await (const { job } of followJob(jobId, null, new AbortController().signal)) states.push(job.state)
+    expect(states).toEqual(['cancelled'])
+  })
+
   it('stops telling when its reader leaves', async () => {
     const revision = await freeze()
     const reader = new AbortController()
