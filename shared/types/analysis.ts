@@ -109,7 +109,7 @@ export interface ClosestApproach {
   /** dB, and deg (lag negative): the simultaneous change that takes that point of L to -1 */
   gainChange: number
   phaseChange: number
-  /** measured: the dip is no deeper than the 95 % confidence radius of its samples, so it may be noise */
+  /** measured: the dip is no deeper than the 95 % confidence circle of its sample is wide, so it may be noise */
   withinNoise?: boolean
 }
 

@@ -1,5 +1,6 @@
 import type { ClosestApproach, CoverageException, GainCrossover, LoopAnalysis, MeasuredInput, PhaseCrossover, VectorMargin } from '../../types/analysis'
 import { AnalysisInputError } from '../AnalysisInputError'
+import { wrapDegrees } from '../margins/wrapDegrees'
 import { buildMeasuredCurve } from './buildMeasuredCurve'
 import { curveAt, curveInGap } from './curveAt'
 import { distanceOf } from './distanceOf'
@@ -88,12 +89,6 @@ function phaseCrossoverAt(curve: MeasuredCurve, { frequency, gap, t, slope }: Le
   return { frequency, gainMargin: gain === 0 ? 0 : -gain / nepers, slope, distance: Math.abs(Math.expm1(gain)), ...(withinNoise && { withinNoise }) }
 }
 
-/** Into (-180, 180]. */
-function wrapDegrees(angle: number): number {
-  const wrapped = angle - 360 * Math.round(angle / 360)
-  return wrapped === -180 ? 180 : wrapped
-}
-
 function approachAt(curve: MeasuredCurve, minimum: DistanceMinimum): ClosestApproach {
   const { frequency, distance, gain, phase, depth, sample } = minimum
   const noise = curve.radius === null ? 0 : curve.radius[sample]!
@@ -103,7 +98,8 @@ function approachAt(curve: MeasuredCurve, minimum: DistanceMinimum): ClosestAppr
     gainChange: gain === 0 ? 0 : -gain / nepers,
     // The lag or lead that turns L to the negative real axis: arg(-1) - arg L.
     phaseChange: wrapDegrees(180 - phase * degrees),
-    ...(depth < noise && { withinNoise: true }),
+    // Two samples, each somewhere in its circle, differ by up to its width.
+    ...(depth < 2 * noise && { withinNoise: true }),
   }
 }
 

@@ -1,4 +1,5 @@
 import type { DiskMargin, GainCrossover, MarginSummary, PhaseCrossover } from '../../types/analysis'
+import { summariseMargins } from '../margins/summariseMargins'
 import type { CurvePoint } from './curveAt'
 import { distanceOf } from './distanceOf'
 import { greatestInBand } from './greatestInBand'
@@ -6,25 +7,12 @@ import type { MeasuredCurve } from './MeasuredCurve'
 
 const decibels = (ratio: number) => 20 * Math.log10(ratio)
 
-/** The smallest margin of each kind over all crossings, signed as listed, with what the vector margin d implies and the peaks of |S| = 1/d and |T|. */
+/** The smallest margin of each kind over all crossings, with what the vector margin implies and the peaks of |S| and |T| over the band. */
 export function summariseMeasured(
-  curve: MeasuredCurve, from: number, to: number, gainCrossovers: GainCrossover[], phaseCrossovers: PhaseCrossover[], distance: number,
+  curve: MeasuredCurve, from: number, to: number, gainCrossovers: GainCrossover[], phaseCrossovers: PhaseCrossover[], vectorMargin: number,
 ): MarginSummary {
-  const nearestZero = (values: number[]) => values.length === 0 ? null : values.reduce((best, value) => Math.abs(value) < Math.abs(best) ? value : best)
-  const gains = phaseCrossovers.map(crossing => crossing.gainMargin)
-  const phases = gainCrossovers.map(crossing => crossing.phaseMargin)
-  return {
-    gainIncrease: nearestZero(gains.filter(value => value >= 0)),
-    gainDecrease: nearestZero(gains.filter(value => value < 0)),
-    phaseLag: nearestZero(phases.filter(value => value >= 0)),
-    phaseLead: nearestZero(phases.filter(value => value < 0)),
-    delay: nearestZero(gainCrossovers.map(crossing => crossing.delayMargin)),
-    impliedGainIncrease: distance < 1 ? -decibels(1 - distance) : null,
-    impliedGainDecrease: -decibels(1 + distance),
-    impliedPhase: distance < 2 ? 2 * Math.asin(distance / 2) * 180 / Math.PI : 180,
-    sensitivityPeak: 1 / distance,
-    complementarySensitivityPeak: greatestInBand(curve, from, to, point => Math.exp(point.gain) / distanceOf(point)).value,
-  }
+  const complementarySensitivityPeak = greatestInBand(curve, from, to, point => Math.exp(point.gain) / distanceOf(point)).value
+  return summariseMargins({ gainCrossovers, phaseCrossovers, vectorMargin, complementarySensitivityPeak, noDelayAllowed: false })
 }
 
 /**

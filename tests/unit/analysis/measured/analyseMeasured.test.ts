@@ -184,6 +184,12 @@ describe('analyseMeasured, on loops of several crossings', () => {
     expect(analysis.stability).toMatchObject({ verdict: 'stable', encirclements: 1, closedLoopUnstablePoles: 0 })
   })
 
+  it('lists the first 10,000 of a kind and says where the list stops', () => {
+    const { gainCrossovers, coverage } = analyseMeasured(sampleResponse(w => [0, w % 2 === 0 ? -1.1 : -0.9], Array.from({ length: 10_003 }, (_, index) => index + 1)))
+    expect(gainCrossovers).toHaveLength(10_000)
+    expect(coverage.exceptions.find(exception => exception.code === 'listLimit')).toMatchObject({ from: gainCrossovers.at(-1)!.frequency, to: 10_003, reason: expect.stringContaining('10002 gain crossovers') })
+  })
+
   it('turns the tie of a double integrator alone into a stretch', () => {
     const { coverage } = analyseMeasured(sampleResponse(w => [-1 / (w * w), 0], logSpaced(0.1, 0.5, 20)))
     expect(coverage.exceptions.map(exception => exception.code)).toContain('realOverStretch')

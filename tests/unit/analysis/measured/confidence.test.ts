@@ -55,7 +55,7 @@ describe('the disc about the loop gain', () => {
     expect(analyseMeasured({ ...input, measured: { ...input.measured, averages: 16 } }).discs).toBeUndefined()
   })
 
-  it('marks a dip no deeper than itself as perhaps noise', () => {
+  it('marks a dip no deeper than it is wide as perhaps noise', () => {
     const sizes = [0.5, 0.499, 0.5, 0.2, 0.5]
     const { closestApproaches } = analyseMeasured(sampleResponse(w => [sizes[w - 1]! - 1, 0.001], [1, 2, 3, 4, 5], { coherence: 0.999, averages: 100 }))
     expect(closestApproaches.map(approach => [Math.round(approach.frequency), approach.withinNoise ?? false])).toEqual([[2, true], [4, false]])
