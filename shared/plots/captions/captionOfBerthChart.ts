@@ -11,6 +11,6 @@ export function captionOfBerthChart({ title, curves: [main], requiredVectorMargi
     stabilityWords(main.analysis),
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
     'Triangles are gain crossovers (point down: gain falling), diamonds phase crossovers, circles closest approaches.',
-    measuredWords(main.samples !== undefined, main.untrusted?.length ?? 0, true),
+    measuredWords(main, true),
   )
 }

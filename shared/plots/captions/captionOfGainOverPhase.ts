@@ -10,6 +10,6 @@ export function captionOfGainOverPhase({ title, curves: [main], requiredVectorMa
     stabilityWords(main.analysis),
     hasMargins(main.analysis) ? 'The way from a cross to the curve is gain margin when vertical, phase margin when horizontal.' : '',
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
-    measuredWords(main.samples !== undefined, main.untrusted?.length ?? 0, true).replace(', with their 95 % confidence discs where coherence was recorded', ''),
+    measuredWords(main, true).replace(', with their 95 % confidence discs where coherence was recorded', ''),
   )
 }

@@ -13,6 +13,6 @@ export function captionOfMagnitudePhase({ title, curves: [main], frequencyUnit }
     stabilityWords(analysis),
     bars,
     halfSampleRateWords(main.halfSampleRate, frequencyUnit),
-    measuredWords(main.samples !== undefined, main.untrusted?.length ?? 0, false),
+    measuredWords(main, false),
   )
 }

@@ -11,6 +11,6 @@ export function captionOfReturnDifferenceProfile({ title, curves: [main], requir
     stabilityWords(main.analysis),
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
     halfSampleRateWords(main.halfSampleRate, frequencyUnit),
-    measuredWords(main.samples !== undefined, main.untrusted?.length ?? 0, false),
+    measuredWords(main, false),
   )
 }

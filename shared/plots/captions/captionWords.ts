@@ -1,6 +1,7 @@
 import { formatDistance } from '../../formatting/formatDistance'
 import { formatFrequency } from '../../formatting/formatFrequency'
 import type { FrequencyUnit, LoopAnalysis } from '../../types/analysis'
+import type { FigureCurve } from '../FigureData'
 import { hasMargins } from '../text/markWords'
 
 /** '3 gain crossovers', '1 phase crossover', 'no closest approach'. */
@@ -33,10 +34,13 @@ export function stabilityWords(analysis: LoopAnalysis): string {
 }
 
 /** How measured data are drawn, where there are any. */
-export function measuredWords(measured: boolean, gaps: number, inPlane: boolean): string {
-  if (!measured) return ''
+export function measuredWords({ samples, untrusted, analysis }: FigureCurve, inPlane: boolean): string {
+  if (!samples) return ''
+  const gaps = untrusted?.length ?? 0
+  const noise = [...analysis.closestApproaches, ...analysis.phaseCrossovers].some(({ withinNoise }) => withinNoise) ? 'Small open marks lie within the noise.' : ''
   const points = inPlane ? 'Points are the measured samples, with their 95 % confidence discs where coherence was recorded.' : 'Points are the measured samples.'
-  return gaps > 0 ? `${points} The line is dotted${inPlane ? '' : ' and the band hatched'} where the data cannot be trusted between samples.` : points
+  const trust = gaps > 0 ? `The line is dotted${inPlane ? '' : ' and the band hatched'} where the data cannot be trusted between samples.` : ''
+  return sentences(points, trust, noise)
 }
 
 /** Where the axis of a sampled loop ends. */

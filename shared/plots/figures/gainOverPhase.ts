@@ -29,7 +29,8 @@ import { drawApproachMark, drawGainMark, drawPhaseMark, markGroup } from '../mar
 import { drawSamples } from '../marks/drawSamples'
 import { drawStanding } from '../marks/drawStanding'
 import type { LoopMark } from '../marks/loopMarks'
-import { loopMarks, nearestApproach } from '../marks/loopMarks'
+import { approachColour } from '../marks/approachStyle'
+import { loopMarks } from '../marks/loopMarks'
 import { withoutCovered } from '../marks/withoutCovered'
 import { gainWindow } from '../scales/gainWindow'
 import type { AxisScale } from '../scales/AxisScale'
@@ -47,6 +48,8 @@ interface Plane {
 }
 
 type PlacedMark = LoopMark & FigureMark
+
+const title = '|L|, dB'
 
 /**
  * Gain over phase: the critical point at every odd multiple of 180 deg in sight, each with its shoals (lines of equal distance to -1) around it,
@@ -72,7 +75,7 @@ export const drawGainOverPhase: DrawFigure<LoopFigureData> = (pen, data, options
   const criticals = criticalPlaces(plane)
 
   drawGround(pen, plane, criticals, data.requiredVectorMargin, options)
-  drawStanding(pen, main.analysis, panel, theme)
+  drawStanding(pen, main.analysis, panel, title, theme)
   let mainPieces: number[][] = []
   let mainShown = { xs: new Float64Array(0), ys: new Float64Array(0), shown: main, end: 0 }
   for (let index = data.curves.length - 1; index >= 0; index--) {
@@ -168,7 +171,7 @@ function drawGround(pen: Pen, { panel, x, y }: Plane, criticals: number[], requi
   const size = theme.size.tick
   const ticks = linearTicks(x.from, x.to, panel.width / (size * 4.5), [30, 45, 90, 180, 360])
   pen.stroke(ticks.map(value => `M${tenth(x.toPixel(value))} ${tenth(panel.y)}v${tenth(panel.height)}`).join(''), theme.rule, theme.stroke.hair)
-  drawLevels(pen, y, linearTicks(y.from, y.to, panel.height / 26, [5, 10, 20, 40]), panel, '|L|, dB', theme)
+  drawLevels(pen, y, linearTicks(y.from, y.to, panel.height / 26, [5, 10, 20, 40]), panel, title, theme)
   for (const value of ticks) pen.text(formatTick(value), x.toPixel(value), panel.y + panel.height + size + 5, { size, fill: theme.slate, anchor: 'middle' })
   pen.text('phase of L, deg', panel.x + panel.width, panel.y + panel.height + 2 * size + 9, { size, fill: theme.slate, anchor: 'end' })
   drawLevel(pen, y, 0, panel, theme.slate, theme.stroke.axis)
@@ -195,7 +198,7 @@ function samplePlace(sample: { frequency: number, re: number, im: number }, main
 
 function placeMarks(main: FigureCurve, views: CurveViews, data: LoopFigureData, window: PhaseWindow, { panel, x, y }: Plane): PlacedMark[] {
   const placed: PlacedMark[] = []
-  for (const mark of loopMarks(main.analysis, data.frequencyUnit)) {
+  for (const mark of loopMarks(main.analysis, data.frequencyUnit, data.requiredVectorMargin)) {
     if (typeof mark.frequency !== 'number') continue
     const gain = valueOfView(main.curve, views.gain, mark.frequency)
     const phase = valueOfView(main.curve, views.phase, mark.frequency)
@@ -211,25 +214,18 @@ function drawPlaneMark(pen: Pen, mark: PlacedMark, shown: boolean, data: LoopFig
   const group = markGroup(pen, mark, options)
   if (!shown) return
   if (mark.kind === 'gain') drawGainMark(group, mark.x, mark.y, mark.crossing.slope, theme)
-  else if (mark.kind === 'phase') drawPhaseMark(group, mark.x, mark.y, theme)
-  else {
-    const nearest = mark.id === `approach-${nearestApproach(data.curves[0].analysis)}`
-    const under = data.requiredVectorMargin !== null && mark.crossing.distance < data.requiredVectorMargin
-    drawApproachMark(group, mark.x, mark.y, nearest ? 'nearest' : under ? 'under' : 'clear', theme)
-  }
+  else if (mark.kind === 'phase') drawPhaseMark(group, mark.x, mark.y, theme, mark.faint)
+  else drawApproachMark(group, mark.x, mark.y, mark.style, theme)
 }
 
 function labelPlaneMark(pen: Pen, field: LabelField, mark: PlacedMark, data: LoopFigureData, { theme }: FigureOptions): void {
   const { analysis } = data.curves[0]
   const { tick, label } = theme.size
   if (mark.kind === 'approach') {
-    if (mark.crossing.distance > plainDistance) return
-    const nearest = mark.id === `approach-${nearestApproach(analysis)}`
-    const under = data.requiredVectorMargin !== null && mark.crossing.distance < data.requiredVectorMargin
-    const fill = nearest ? theme.magenta : under ? theme.unmet : theme.ink
-    drawLabel(pen, field, [{ text: formatSounding(mark.crossing.distance), size: label, fill, face: 'semiboldItalic' }], { x: mark.x, y: mark.y, gap: 7, reach: 60, prefer: 20 }, theme, nearest)
+    if (mark.crossing.distance > plainDistance || mark.style === 'faint') return
+    drawLabel(pen, field, [{ text: formatSounding(mark.crossing.distance), size: label, fill: approachColour(mark.style, theme), face: 'semiboldItalic' }], { x: mark.x, y: mark.y, gap: 7, reach: 60, prefer: 20 }, theme, mark.style === 'nearest')
   }
-  else if (hasMargins(analysis)) {
+  else if (hasMargins(analysis) && !(mark.kind === 'phase' && mark.faint)) {
     const text = mark.kind === 'gain' ? formatPhaseMargin(mark.crossing.phaseMargin) : formatGainMargin(mark.crossing.gainMargin)
     drawLabel(pen, field, [{ text, size: tick, fill: mark.kind === 'gain' ? theme.ink : theme.sea }], { x: mark.x, y: mark.y, gap: 7, reach: 40, prefer: 20 }, theme)
   }

@@ -25,7 +25,7 @@ import { drawSamples } from '../marks/drawSamples'
 import { drawHalfSampleRate, drawUntrusted } from '../marks/drawUntrusted'
 import { drawStanding } from '../marks/drawStanding'
 import type { LoopMark } from '../marks/loopMarks'
-import { loopMarks, nearestApproach } from '../marks/loopMarks'
+import { loopMarks } from '../marks/loopMarks'
 import { withoutCovered } from '../marks/withoutCovered'
 import { gainWindow } from '../scales/gainWindow'
 import type { AxisScale } from '../scales/AxisScale'
@@ -42,6 +42,8 @@ interface Panels {
   lower: Rectangle
 }
 
+const title = '|L|, dB'
+
 /**
  * Gain and phase over frequency, one over the other on one frequency axis, with every crossing marked on both: a gain crossover on the line of 0 dB and,
  * below it, how far the phase there is from -180 deg; a phase crossover on that line and, above it, how far the gain there is from 0 dB.
@@ -57,7 +59,7 @@ export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, option
   const { x, gain, phase, upper, lower } = panels
 
   drawGround(pen, data, panels, options)
-  drawStanding(pen, main.analysis, upper, theme)
+  drawStanding(pen, main.analysis, upper, title, theme)
   const fields = { upper: new LabelField(upper), lower: new LabelField(lower) }
   fields.upper.blockPolylines([[upper.x, gain.toPixel(0), upper.x + upper.width, gain.toPixel(0)]])
   fields.lower.blockPolylines(criticalPhases(phase).map(value => [lower.x, phase.toPixel(value), lower.x + lower.width, phase.toPixel(value)]))
@@ -74,7 +76,7 @@ export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, option
   drawSamples(pen, main.samples, ({ frequency, re, im }) => [x.toPixel(frequency), gain.toPixel(20 * Math.log10(Math.hypot(re, im)))], upper, theme)
 
   const placed: { mark: LoopMark, kind: LoopMark['kind'], at: MarkPlaces, x: number, y: number }[] = []
-  for (const mark of loopMarks(main.analysis, data.frequencyUnit)) {
+  for (const mark of loopMarks(main.analysis, data.frequencyUnit, data.requiredVectorMargin)) {
     if (typeof mark.frequency !== 'number' || mark.frequency < data.range.from || mark.frequency > data.range.to) continue
     const at = markPlaces(mark, mark.frequency, main, views[0]!, panels, window)
     if (!at) continue
@@ -133,7 +135,7 @@ function drawGround(pen: Pen, data: LoopFigureData, { x, gain, phase, upper, low
     drawUntrusted(pen, main, x, panel, theme)
     drawHalfSampleRate(pen, main, x, panel, theme)
   }
-  drawLevels(pen, gain, linearTicks(gain.from, gain.to, upper.height / 24, [5, 10, 20, 40]), upper, '|L|, dB', theme)
+  drawLevels(pen, gain, linearTicks(gain.from, gain.to, upper.height / 24, [5, 10, 20, 40]), upper, title, theme)
   drawLevels(pen, phase, linearTicks(phase.from, phase.to, lower.height / 20, [30, 45, 90, 180, 360]), lower, 'phase of L, deg', theme)
   drawLevel(pen, gain, 0, upper, theme.ink, theme.stroke.axis)
   for (const critical of criticalPhases(phase)) drawLevel(pen, phase, critical, lower, theme.ink, theme.stroke.axis)
@@ -204,16 +206,13 @@ function drawMarkOnBoth(pen: Pen, mark: LoopMark, at: MarkPlaces, shown: boolean
     drawGainMark(group, at.x, at.lower, mark.crossing.slope, theme)
   }
   else if (mark.kind === 'phase') {
-    if (margins) group.stroke(vertical(at.upper, gain.toPixel(0)), theme.sea, theme.stroke.curve)
-    drawPhaseMark(group, at.x, at.upper, theme)
-    drawPhaseMark(group, at.x, at.lower, theme)
+    if (margins && !mark.faint) group.stroke(vertical(at.upper, gain.toPixel(0)), theme.sea, theme.stroke.curve)
+    drawPhaseMark(group, at.x, at.upper, theme, mark.faint)
+    drawPhaseMark(group, at.x, at.lower, theme, mark.faint)
   }
   else {
-    const nearest = mark.id === `approach-${nearestApproach(analysis)}`
-    const under = data.requiredVectorMargin !== null && mark.crossing.distance < data.requiredVectorMargin
-    const style = nearest ? 'nearest' : under ? 'under' : 'clear'
-    drawApproachMark(group, at.x, at.upper, style, theme)
-    drawApproachMark(group, at.x, at.lower, style, theme)
+    drawApproachMark(group, at.x, at.upper, mark.style, theme)
+    drawApproachMark(group, at.x, at.lower, mark.style, theme)
   }
 }
 
@@ -224,7 +223,7 @@ function labelMark(pen: Pen, mark: LoopMark, at: MarkPlaces, fields: { upper: La
   if (mark.kind === 'gain') {
     drawLabel(pen, fields.lower, [{ text: formatPhaseMargin(mark.crossing.phaseMargin), size, fill: theme.ink }], { x: at.x, y: at.lower, gap: 7, reach: 34, prefer: 20 }, theme)
   }
-  else if (mark.kind === 'phase') {
+  else if (mark.kind === 'phase' && !mark.faint) {
     drawLabel(pen, fields.upper, [{ text: formatGainMargin(mark.crossing.gainMargin), size, fill: theme.sea }], { x: at.x, y: at.upper, gap: 7, reach: 34, prefer: 20 }, theme)
   }
 }

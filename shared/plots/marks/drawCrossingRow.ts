@@ -9,9 +9,11 @@ import type { AxisScale } from '../scales/AxisScale'
 import { formatSounding, plainDistance } from '../text/formatSounding'
 import { hasMargins } from '../text/markWords'
 import { textWidth } from '../text/textWidth'
+import { isUnder } from './approachStyle'
 import { drawHatching } from './drawHatching'
 import { drawApproachMark, markGroup, trianglePath } from './drawMark'
 import type { LoopMark } from './loopMarks'
+import { nearestEnd } from './nearestEnd'
 import { loopMarks } from './loopMarks'
 
 /** px */
@@ -46,19 +48,31 @@ export function drawCrossingRow(pen: Pen, row: CrossingChartRow, unit: Frequency
     if (x1 < from || x0 > to) continue
     pen.rect(Math.min(x0, (x0 + x1) / 2 - 0.7), middle - bar / 2, Math.max(1.4, x1 - x0), bar, { 'fill': theme.buff, 'stroke': theme.ink, 'stroke-width': theme.stroke.axis, 'rx': Math.min(1.5, (x1 - x0) / 2) })
   }
+  drawNearestEnd(pen, row, analysis, scale, [from, to], middle, options)
   return drawRowMarks(pen, row, analysis, unit, scale, panel, middle, options)
+}
+
+/** A loop that comes nearest to -1 at an end of its axis has its sounding there. */
+function drawNearestEnd(pen: Pen, row: CrossingChartRow, analysis: LoopAnalysis, scale: AxisScale, [from, to]: [number, number], middle: number, { theme }: FigureOptions): void {
+  const end = nearestEnd(analysis)
+  if (!end) return
+  const under = row.requiredVectorMargin !== null && end.distance < row.requiredVectorMargin && hasMargins(analysis)
+  const place = end.frequency === 0 ? from : end.frequency === 'infinity' ? to : Math.min(to, Math.max(from, scale.toPixel(end.frequency)))
+  const [x, low, fill] = [place, place < (from + to) / 2, under ? theme.unmet : theme.ink]
+  drawApproachMark(pen, x, middle, under ? 'under' : 'clear', theme)
+  pen.text(formatSounding(end.distance), low ? x + 7 : x - 7, middle - bar / 2 - 5, { size: theme.size.label, fill, face: 'semiboldItalic', anchor: low ? 'start' : 'end' })
 }
 
 function drawRowMarks(pen: Pen, row: CrossingChartRow, analysis: LoopAnalysis, unit: FrequencyUnit, scale: AxisScale, panel: Rectangle, middle: number, options: FigureOptions): FigureMark[] {
   const { theme } = options
   const [low, high] = [panel.x, panel.x + panel.width]
-  const all = loopMarks(analysis, unit, `${row.key}/`)
+  const all = loopMarks(analysis, unit, row.requiredVectorMargin, `${row.key}/`)
     .map(mark => ({ ...mark, x: placeOnAxis(mark, scale, low, high), y: middle }))
     .filter(mark => mark.x >= low - 0.5 && mark.x <= high + 0.5)
 
   const gains = all.filter(mark => mark.kind === 'gain')
   const triangles = spreadLabels(gains.map(({ x }) => ({ x, width: triangle, weight: 1 })), low - 4, high + 4, 0.5, 9)
-  const approaches = all.filter(mark => mark.kind === 'approach').filter(({ crossing }) => crossing.distance <= plainDistance)
+  const approaches = all.filter(mark => mark.kind === 'approach').filter(({ crossing }) => crossing.distance <= plainDistance && !crossing.withinNoise)
   const size = theme.size.label
   const soundings = approaches.map(mark => formatSounding(mark.crossing.distance))
   const middles = spreadLabels(approaches.map(({ x, crossing }, i) =>
@@ -75,14 +89,14 @@ function drawRowMarks(pen: Pen, row: CrossingChartRow, analysis: LoopAnalysis, u
     }
     else if (mark.kind === 'phase') {
       const atEnd = typeof mark.frequency !== 'number' || mark.frequency === 0
-      group.stroke(`M${tenth(mark.x)} ${tenth(middle - 9)}v18`, theme.sea, 2.2)
+      group.stroke(`M${tenth(mark.x)} ${tenth(middle - (mark.faint ? 5 : 9))}v${mark.faint ? 10 : 18}`, theme.sea, mark.faint ? 1 : 2.2)
       // At zero or infinite frequency the tick stands at the end of the axis with a barb outwards.
       if (atEnd) group.stroke(`M${tenth(mark.x)} ${tenth(middle - 4)}l${mark.frequency === 0 ? -5 : 5} 4l${mark.frequency === 0 ? 5 : -5} 4`, theme.sea, 1.3)
     }
     else {
       const i = approaches.indexOf(mark)
-      const under = row.requiredVectorMargin !== null && mark.crossing.distance < row.requiredVectorMargin && hasMargins(analysis)
-      drawApproachMark(group, mark.x, middle, under ? 'under' : 'clear', theme)
+      const under = isUnder(mark.crossing, analysis, row.requiredVectorMargin)
+      drawApproachMark(group, mark.x, middle, mark.crossing.withinNoise ? 'faint' : under ? 'under' : 'clear', theme)
       const x = i < 0 ? null : middles[i]
       if (x === null || x === undefined) continue
       const y = middle - bar / 2 - 5

@@ -1,6 +1,8 @@
 import type { FigureMark, FigureOptions } from '../Figure'
 import type { Pen } from '../Pen'
 import type { PlotTheme } from '../theme'
+import type { ApproachStyle } from './approachStyle'
+import { approachColour } from './approachStyle'
 
 const halo = 9
 
@@ -37,16 +39,16 @@ export function drawGainMark(pen: Pen, x: number, y: number, slope: 'falling' | 
   pen.fill(trianglePath(x, y, 8.5, slope), theme.buff, { 'stroke': theme.ink, 'stroke-width': theme.stroke.mark, 'stroke-linejoin': 'round' })
 }
 
-/** Phase crossover on a curve: a filled diamond. */
-export function drawPhaseMark(pen: Pen, x: number, y: number, theme: PlotTheme): void {
+/** Phase crossover on a curve: a filled diamond, a small open one where it may be noise. */
+export function drawPhaseMark(pen: Pen, x: number, y: number, theme: PlotTheme, faint = false): void {
+  if (faint) return pen.fill(diamondPath(x, y, 2.6), theme.paper, { 'stroke': theme.sea, 'stroke-width': 0.8 })
   pen.fill(diamondPath(x, y, 5), theme.sea, { 'stroke': theme.paper, 'stroke-width': 0.8 })
 }
 
-export type ApproachStyle = 'clear' | 'under' | 'nearest'
-
-/** Closest approach: an open circle, filled where it is under the criterion or the nearest of all. */
+/** Closest approach: an open circle, filled where it is under the criterion or the nearest of all, small where it may be noise. */
 export function drawApproachMark(pen: Pen, x: number, y: number, style: ApproachStyle, theme: PlotTheme): void {
-  const fill = { clear: theme.paper, under: theme.unmet, nearest: theme.magenta }[style]
-  const stroke = { clear: theme.ink, under: theme.unmet, nearest: theme.magenta }[style]
-  pen.circle(x, y, style === 'clear' ? 3.6 : 4, { fill, stroke, 'stroke-width': theme.stroke.mark })
+  const stroke = approachColour(style, theme)
+  const fill = style === 'under' || style === 'nearest' ? stroke : theme.paper
+  const radius = { nearest: 4, under: 4, clear: 3.6, faint: 1.8 }[style]
+  pen.circle(x, y, radius, { fill, stroke, 'stroke-width': theme.stroke.mark })
 }

@@ -102,6 +102,36 @@ describe('a loop that is not stable', () => {
   })
 })
 
+describe('a loop that is nearest to -1 at an end of its axis', () => {
+  // closed form: L(0) = -0.7, so |1 + L| = 0.3 there, and L shrinks from there on
+  const gain = loopGainOfRoots({ gain: -0.7, poles: [[-1, 0]] })
+  const analysis = { ...analysisByScan(gain, 0.1, 100), closestApproaches: [], vectorMargin: { distance: 0.3, frequency: 0 } }
+  const data = buildLoopFigureData({ title: 'E', requiredVectorMargin: 0.5, curves: [{ name: 'as given', analysis, gain }] })
+
+  it('has its least distance told there, not at a lesser approach', () => {
+    expect(renderFigure('berthChart', data, { id: 'a' })).toContain('>least distance 0.300 at zero frequency<')
+    expect(renderFigure('returnDifferenceProfile', data, { id: 'a' })).toContain('>at zero frequency<')
+  })
+
+  it('has its sounding at the end of its row, under the criterion in the colour of what is not met', () => {
+    const row = { ...crossingRows().rows[0]!, analysis }
+    const svg = renderFigure('crossingChart', { ...crossingRows(), rows: [row] }, { id: 'a' })
+    expect(svg).toMatch(new RegExp(`fill="${plotThemes.print.unmet}"[^>]*>0.30<`))
+  })
+})
+
+describe('an approach no deeper than the noise of its measurement', () => {
+  it('is marked, but not numbered, and its caption says so', () => {
+    const data = measured()
+    const [main] = data.curves
+    const noisy = { ...data, curves: [{ ...main, analysis: { ...main.analysis, closestApproaches: main.analysis.closestApproaches.map((approach, i) => i === 0 ? { ...approach, withinNoise: true } : approach) } }] } satisfies LoopFigureData
+    expect(renderFigure('returnDifferenceProfile', data, { id: 'a' })).toContain('>0.85<')
+    expect(renderFigure('returnDifferenceProfile', noisy, { id: 'a' })).not.toContain('>0.85<')
+    expect(draw('returnDifferenceProfile', noisy).marks.map(mark => mark.id)).toContain('approach-0')
+    expect(figures.returnDifferenceProfile.caption(noisy)).toContain('within the noise')
+  })
+})
+
 describe('captions', () => {
   it.each(Object.keys(figures) as FigureName[])('are whole sentences of what to see, %s', (name) => {
     const caption = name === 'crossingChart' ? figures.crossingChart.caption(crossingRows()) : figures[name].caption(slewPosition())
