@@ -30,7 +30,9 @@ function verdictOf({ analysis, failure, judgement }: BoardCell): string {
 function rangeOf(analyses: readonly LoopAnalysis[]): { from: number, to: number } {
   const frequencies = analyses.flatMap(listCrossings).flatMap(({ frequency }) => typeof frequency === 'number' && frequency > 0 ? [frequency] : [])
   if (frequencies.length === 0) return { from: 0.1, to: 100 }
-  return { from: Math.min(...frequencies) / Math.sqrt(10), to: Math.max(...frequencies) * Math.sqrt(10) }
+  // No axis goes beyond where every loop ends: pi/T of sampled loops, the last sample of measured ones.
+  const ends = analyses.map(({ coverage }) => coverage.to === 'infinity' ? Number.POSITIVE_INFINITY : coverage.to)
+  return { from: Math.min(...frequencies) / Math.sqrt(10), to: Math.min(Math.max(...ends), Math.max(...frequencies) * Math.sqrt(10)) }
 }
 
 /** The crossing chart of one condition from the board's analyses alone, loops in the order given. */
