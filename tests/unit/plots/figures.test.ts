@@ -13,6 +13,8 @@ import { analysisByScan } from './analysisByScan'
 import { conditional, crossingRows, crowded, delayed, measured, overlaid, slewGain, slewPosition, unstable } from './figureCases'
 import { loopGainOfRoots } from './loopGainOfRoots'
 
+/** SVG.js writes colours in small letters. */
+const unmet = plotThemes.print.unmet.toLowerCase()
 const loopFigures = ['berthChart', 'returnDifferenceProfile', 'magnitudePhase', 'gainOverPhase'] as const
 const draw = (name: typeof loopFigures[number], data: LoopFigureData, width = 642) => drawFigure(createDrawing(), name, data, { width, theme: plotThemes.print })
 
@@ -97,8 +99,10 @@ describe('a loop that is not stable', () => {
   it('is not judged against the criterion in the crossing chart', () => {
     const row = crossingRows().rows.find(({ standing }) => standing === 'unstable')!
     const svg = renderFigure('crossingChart', { ...crossingRows(), rows: [row] }, { id: 'a' })
-    const sounding = svg.slice(svg.indexOf('>0.28<') - 200, svg.indexOf('>0.28<'))
-    expect(sounding).not.toContain(plotThemes.print.unmet)
+    const at = svg.indexOf('>0.28<')
+    const sounding = svg.slice(svg.lastIndexOf('<g>', at), at + 6)
+    expect(sounding).toContain('>0.28<')
+    expect(sounding).not.toContain(unmet)
   })
 })
 
@@ -116,7 +120,7 @@ describe('a loop that is nearest to -1 at an end of its axis', () => {
   it('has its sounding at the end of its row, under the criterion in the colour of what is not met', () => {
     const row = { ...crossingRows().rows[0]!, analysis }
     const svg = renderFigure('crossingChart', { ...crossingRows(), rows: [row] }, { id: 'a' })
-    expect(svg).toMatch(new RegExp(`fill="${plotThemes.print.unmet}"[^>]*>0.30<`))
+    expect(svg).toMatch(new RegExp(`fill="${unmet}"[^>]*>0.30<`))
   })
 })
 
