@@ -35,7 +35,8 @@ export function chooseSourceForm(record: Record<string, unknown>): SourceForm {
     throw new AnalysisInputError(`A loop given as ${form.name} needs ${form.key.join(', ')}: ${missing} is missing.`, missing)
   }
   const own: readonly string[] = [...commonFields, ...form.key, ...form.other]
-  const stranger = contractFields.find(field => isGiven(record[field]) && !own.includes(field))
+  // A dead time of 0 is none, whatever the form.
+  const stranger = contractFields.find(field => isGiven(record[field]) && !own.includes(field) && !(field === 'deadTime' && record[field] === 0))
   if (stranger !== undefined) {
     throw new AnalysisInputError(`${stranger} does not go with ${form.name}${hintFor(stranger, form.name)}.`, stranger)
   }

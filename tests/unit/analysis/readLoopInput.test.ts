@@ -130,6 +130,10 @@ describe('readLoopInput passes on', () => {
     expect(readLoopInput({ ...coefficients, deadTime: 0, sampleTime: null, band: null })).toEqual({ ...coefficients, deadTime: 0 })
   })
 
+  it('an expression beside a dead time of 0, which is none', () => {
+    expect(readLoopInput({ expression: '1/s', deadTime: 0 })).toEqual({ expression: '1/s' })
+  })
+
   it('nothing that the contract does not know', () => {
     expect(readLoopInput({ ...coefficients, id: 'a7', note: 'kept elsewhere' })).toEqual(coefficients)
   })
