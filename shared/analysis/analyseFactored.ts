@@ -31,7 +31,14 @@ export const DEFAULT_LIMITS: AnalysisLimits = { maxListed: 10_000, maxEffort: 1_
 
 /** The complete proven analysis of a loop given by its factors: everything of the contract, in the input's frequency unit. */
 export function analyseFactored(loop: FactoredLoop, input: CommonInput, limits: AnalysisLimits = DEFAULT_LIMITS): LoopAnalysis {
-  const axis = axisLoopFromFactors(loop)
+  return analyseAxisLoop(axisLoopFromFactors(loop), loop, input, limits)
+}
+
+/**
+ * The same of a loop already on its axis. `loop` are its factors for the independent count of closed-loop poles; null where it is
+ * more than factors.
+ */
+export function analyseAxisLoop(axis: AxisLoop, loop: FactoredLoop | null, input: CommonInput, limits: AnalysisLimits = DEFAULT_LIMITS): LoopAnalysis {
   const floor = input.gainFloor ?? DEFAULT_FLOOR
   const result = searchLoop(axis, { floorLog: floor / DECIBELS, maxFinds: limits.maxListed, maxEffort: limits.maxEffort })
   const scale = frequencyScale(axis, input)

@@ -1,6 +1,7 @@
 import type { LoopAnalysis, LoopInput } from '../types/analysis'
 import { AnalysisInputError } from './AnalysisInputError'
 import { analyseFactored } from './analyseFactored'
+import { analyseGeneralLoop } from './expressions/analyseGeneralLoop'
 import { lowerExpression } from './expressions/lowerExpression'
 import { factorsOfInput } from './factorsOfInput'
 import { analyseMeasured } from './measured/analyseMeasured'
@@ -17,7 +18,7 @@ export function analyseLoop(input: LoopInput): LoopAnalysis {
   if ('measured' in input) return analyseMeasured(input)
   if ('expression' in input) {
     const lowered = lowerExpression(input)
-    if (lowered.kind === 'factored') return analyseFactored(lowered.loop, input)
+    return lowered.kind === 'factored' ? analyseFactored(lowered.loop, input) : analyseGeneralLoop(lowered.loop, input)
   }
   throw new AnalysisInputError('This source form is not analysed yet.', 'expression')
 }

@@ -1,5 +1,6 @@
 import type { LoopInput } from '../types/analysis'
 import { AnalysisInputError } from './AnalysisInputError'
+import { evaluateGeneralLoop } from './expressions/evaluateGeneralLoop'
 import { lowerExpression } from './expressions/lowerExpression'
 import { factorsOfInput } from './factorsOfInput'
 import type { LoopGain } from './LoopGain'
@@ -12,7 +13,7 @@ export function prepareLoopGain(input: LoopInput): LoopGain {
   if ('measured' in input) return evaluateMeasured(input)
   if ('expression' in input) {
     const lowered = lowerExpression(input)
-    if (lowered.kind === 'factored') return prepareFactoredGain(lowered.loop)
+    return lowered.kind === 'factored' ? prepareFactoredGain(lowered.loop) : evaluateGeneralLoop(lowered.loop)
   }
   throw new AnalysisInputError('This source form is not evaluated yet.', 'expression')
 }

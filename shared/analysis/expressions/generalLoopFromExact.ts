@@ -1,10 +1,11 @@
 import { Rational } from '../../numeric/extended/Rational'
 import { AnalysisInputError } from '../AnalysisInputError'
-import type { FactoredLoop } from '../FactoredLoop'
 import { factorsFromPolynomials } from '../factors/factorsFromPolynomials'
 import type { DelayedPolynomial, ExactLoop } from './ExactLoop'
 import { FactorProduct } from './FactorProduct'
 import type { GeneralLoop, GeneralTerm } from './GeneralLoop'
+import { leadOfTerm } from './leadOfTerm'
+import { rationalPart } from './rationalPart'
 
 /**
  * The sums of different dead times of an exact loop gain with their polynomials as factors.
@@ -12,13 +13,12 @@ import type { GeneralLoop, GeneralTerm } from './GeneralLoop'
  * @throws AnalysisInputError where a sum that is divided by has a delayed term of higher degree than the one without dead time: an
  *   inner loop whose gain grows without bound has endlessly many unstable poles
  */
-export function generalLoopFromExact(exact: ExactLoop, rational: FactoredLoop, position: number): GeneralLoop {
+export function generalLoopFromExact(exact: ExactLoop, position: number): GeneralLoop {
   const numbers = new Map<string, number>()
   const polynomials: GeneralLoop['polynomials'] = []
-  const toTerm = (term: DelayedPolynomial): GeneralTerm => {
-    let lead = term.scale
+  let gain = Rational.one
+  const toTerm = (term: DelayedPolynomial, reference: Rational): GeneralTerm => {
     const factors = Array.from(term.factors, ([key, { coefficients, power }]) => {
-      lead = lead.times(Rational.of((coefficients[coefficients.length - 1] as bigint) ** BigInt(power), 1n))
       let polynomial = numbers.get(key)
       if (polynomial === undefined) {
         polynomial = polynomials.length
@@ -27,17 +27,20 @@ export function generalLoopFromExact(exact: ExactLoop, rational: FactoredLoop, p
       }
       return { polynomial, power }
     })
-    return { gain: lead.toNumber(), factors, deadTime: term.delay.toNumber() }
+    return { gain: leadOfTerm(term).over(reference).toNumber(), factors, deadTime: term.delay.toNumber() }
   }
   const sums = Array.from(exact.sums.values(), ({ sum, power }) => {
     const degrees = sum.terms.map(term => FactorProduct.degree(term.factors))
     if (power < 0 && degrees.some(degree => degree > (degrees[0] as number))) {
       throw new AnalysisInputError('An inner loop of this expression has a gain that grows without bound and a dead time: it has endlessly many unstable poles.', 'expression', position)
     }
-    return { power, terms: sum.terms.map(toTerm) }
+    // the first term's polynomial is made monic, its lead becomes part of the gain
+    const reference = leadOfTerm(sum.terms[0] as DelayedPolynomial)
+    gain = gain.times(reference.toPower(power))
+    return { power, terms: sum.terms.map(term => toTerm(term, reference)) }
   })
   if (sums.some(sum => sum.terms.some(term => term.gain === 0 || !Number.isFinite(term.gain)))) {
     throw new AnalysisInputError('The gains inside the expression differ by more than doubles can hold.', 'expression', position)
   }
-  return { rational, sums, polynomials, exact }
+  return { rational: rationalPart(exact, undefined, gain), sums, polynomials, exact }
 }

@@ -1,17 +1,14 @@
-import { Rational } from '../../numeric/extended/Rational'
 import type { ExpressionInput } from '../../types/analysis'
 import { AnalysisInputError } from '../AnalysisInputError'
 import type { FactoredLoop } from '../FactoredLoop'
-import { factorsFromPolynomials } from '../factors/factorsFromPolynomials'
-import type { ExactLoop, FactorMap } from './ExactLoop'
 import { exactLoopFromTree } from './exactLoopFromTree'
 import { excessDegree } from './excessDegree'
 import type { ExpressionNode } from './ExpressionNode'
-import { FactorProduct } from './FactorProduct'
 import type { GeneralLoop } from './GeneralLoop'
 import { generalLoopFromExact } from './generalLoopFromExact'
 import { hiddenModes } from './hiddenModes'
 import { parseExpression } from './parseExpression'
+import { rationalPart } from './rationalPart'
 
 /** A loop gain as factors where it is rational times one dead time, or as a product with sums of several dead times. */
 export type LoweredExpression
@@ -41,34 +38,12 @@ export function lowerExpression(input: ExpressionInput): LoweredExpression {
       ? 'Improper: this part has more zeros than poles, so the loop would need future samples.'
       : 'Improper: this part grows without bound towards high frequency. Add the poles that limit it.', 'expression', improperPosition(tree, parameters))
   }
-  const rational = rationalPart(exact, input.sampleTime)
-  const notes = hiddenModes(rational)
-  if (exact.sums.size === 0) return { kind: 'factored', loop: rational, notes }
-  return { kind: 'general', loop: generalLoopFromExact(exact, rational, tree.position), notes }
-}
-
-function rationalPart(exact: ExactLoop, sampleTime: number | undefined): FactoredLoop {
-  const sampled = sampleTime !== undefined
-  const numerator = FactorProduct.times(exact.numerator, exact.inverted)
-  const gain = exact.scale.times(leadOf(numerator)).over(leadOf(exact.denominator)).toNumber()
-  if (gain === 0 || !Number.isFinite(gain)) {
-    throw new AnalysisInputError('The gain of the expression is beyond what doubles can hold.', 'expression', 0)
+  if (exact.sums.size === 0) {
+    const loop = rationalPart(exact, input.sampleTime)
+    return { kind: 'factored', loop, notes: hiddenModes(loop) }
   }
-  const roots = (factors: FactorMap) => factorsFromPolynomials(
-    Array.from(factors.values(), ({ coefficients, power }) => ({ polynomial: { coefficients, exponent: 0 }, power })), sampled, 'expression')
-  return {
-    gain,
-    zeros: roots(numerator),
-    poles: roots(exact.denominator),
-    deadTime: exact.delay.toNumber(),
-    ...(sampled ? { sampleTime } : {}),
-  }
-}
-
-function leadOf(factors: FactorMap): Rational {
-  let lead = 1n
-  for (const { coefficients, power } of factors.values()) lead *= (coefficients[coefficients.length - 1] as bigint) ** BigInt(power)
-  return Rational.of(lead, 1n)
+  const loop = generalLoopFromExact(exact, tree.position)
+  return { kind: 'general', loop, notes: hiddenModes(loop.rational) }
 }
 
 /** The place of the smallest part that is improper by itself. */

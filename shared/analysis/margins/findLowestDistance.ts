@@ -7,6 +7,8 @@ import type { SettledEnd } from '../search/settleEnd'
 const U = 2 ** -53
 /** |L| below which |1 + L| is 1 for the accuracy told. */
 const NEGLIGIBLE = Math.log(1e-11)
+/** Boxes that a loop with several dead times may take under the floor: they grow with frequency, not with its logarithm. */
+const EXTENSION_EFFORT = 20_000
 const MAX_EXTENSIONS = 60
 const GROWTH = 3
 
@@ -73,6 +75,7 @@ function searchBelowFloor(result: SearchResult, from: number, to: number, best: 
   offerFinds: (finds: AxisSearch['distance'], start: number) => void, offerAt: (v: number) => void): void {
   const { axis, search, origin, infinity, boundary, endless } = result
   let extra: AxisSearch | undefined
+  let told = false
   const threshold = () => best.distance < 1 ? Math.max(NEGLIGIBLE, Math.log1p(-best.distance)) : NEGLIGIBLE
   const look = (a: number, b: number) => {
     const left = Math.max(a, from)
@@ -84,9 +87,15 @@ function searchBelowFloor(result: SearchResult, from: number, to: number, best: 
     offerAt(right)
     extra.search(left, right, {
       gain: false, phase: false, distance: true, inverseDistance: false,
-      floorLog: threshold(), stopAt: Number.POSITIVE_INFINITY, maxFinds: Number.POSITIVE_INFINITY, maxEffort: 1e6,
+      floorLog: threshold(), stopAt: Number.POSITIVE_INFINITY, maxFinds: Number.POSITIVE_INFINITY, maxEffort: axis.extension ? EXTENSION_EFFORT : 1e6,
     })
     offerFinds(extra.distance, mark)
+    if (extra.stoppedAt === Number.POSITIVE_INFINITY || told) return
+    told = true
+    result.exceptions.push({
+      from: extra.stoppedAt, to: b, code: 'lowest distance open',
+      reason: 'far under the gain floor |1 + L| was not searched to the end: it may lie lower there than told, by no more than |L|',
+    })
   }
   for (const stretch of search.skipped) {
     // Beyond the end of an endless list the limit at infinity stands for the rest.
@@ -114,7 +123,7 @@ function searchBelowFloor(result: SearchResult, from: number, to: number, best: 
   const turning = axis.deadTime > 0 && axis.degree === 0 && !endless
   if ((infinity.skippedBelow < Number.POSITIVE_INFINITY || turning) && to > infinity.edge) {
     let edge = infinity.edge
-    for (let i = 0; i < (turning ? 8 : MAX_EXTENSIONS) && edge < to && gainAt(edge) > threshold(); i++, edge *= GROWTH) look(edge, edge * GROWTH)
+    for (let i = 0; i < (turning ? 8 : MAX_EXTENSIONS) && edge < to && !told && gainAt(edge) > threshold(); i++, edge *= GROWTH) look(edge, edge * GROWTH)
   }
 }
 
@@ -131,6 +140,7 @@ export function roundingAt(axis: AxisLoop, v: number): number {
     const size = Math.hypot(axis.re[k]!, axis.im[k]!)
     relative += (4 * U * size + model * axis.correction[k]!) / gap
   }
+  if (axis.extension) relative += axis.extension.roundingAt(place)
   relative += 4 * U * (place * axis.deadTime + 7 * axis.delayInSamples)
   return relative * Math.max(1e-300, Math.min(Math.exp(value[LOG_GAIN]!), 4))
 }

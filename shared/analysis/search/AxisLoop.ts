@@ -1,3 +1,5 @@
+import type { AxisExtension } from './AxisExtension'
+
 /**
  * A loop on the imaginary axis, ready for the search: s = jv, v >= 0.
  *
@@ -47,4 +49,6 @@ export interface AxisLoop {
   /** Smallest and largest distance of a listed root from the origin; 1 where there is none. */
   smallestRoot: number
   largestRoot: number
+  /** The part of L that is no product of factors, where there is one; counted in `originWeight` and `degree`. */
+  extension?: AxisExtension
 }

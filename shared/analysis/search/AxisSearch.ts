@@ -164,6 +164,7 @@ export class AxisSearch {
       if (h < half) half = h
     }
     if (bounded && this.axis.deadTime > 0) half = Math.min(half, LONGEST_TURN / this.axis.deadTime)
+    if (this.axis.extension) half = Math.min(half, this.axis.extension.boxHalf(left))
     return Math.min(half, 1e6 * left)
   }
 

@@ -160,6 +160,7 @@ export class LogSeries {
     im[1] = im[1]! - h * axis.deadTime
     re[0] = this.value[0]!
     im[0] = this.value[1]!
+    axis.extension?.addSeries(this, c, h)
     this.bound(axis, absolute, small, error, bend, c + h)
   }
 
@@ -227,6 +228,9 @@ export class LogSeries {
     steady[1] = U * ((k + 24) * absolute) + 4 * small + 4.1 * bend + slack * sum1
     steady[2] = U * ((k + 46) * absolute) + 40 * small + 8.2 * bend + slack * sum2
     steady[3] = U * ((2 * k + 140) * absolute) + 400 * small + 24.6 * bend + slack * sum3
+    if (axis.extension) {
+      for (let n = 0; n < 4; n++) steady[n] = steady[n]! + axis.extension.steady[n]!
+    }
     const rest = tail[0]! + steady[0]!
     this.spreadRe = spreadRe + rest
     this.spreadIm = spreadIm + rest

@@ -193,4 +193,5 @@ export function evaluateAxisLoop(axis: AxisLoop, v: number, out: Float64Array): 
   out[5] = bendIm
   out[6] = re
   out[7] = im
+  axis.extension?.addValue(v, out)
 }

@@ -77,10 +77,17 @@ export function expandEnd(axis: AxisLoop, end: AxisEnd, reach: number, log: LogS
   tail[1] = tail[0]!
   tail[0] = tail[0]! / (N + 1)
   if (origin) im[1] = im[1]! - reach * axis.deadTime
+  let extraTurns = 0
+  if (origin && axis.extension) {
+    axis.extension.addSeries(log, 0, reach)
+    constant += axis.extension.originLog
+    extraTurns = 2 * axis.extension.originHalfTurns
+    for (let n = 1; n <= N; n++) (n % 2 === 0 ? im : re)[n] = 0
+  }
   const weight = origin ? axis.originWeight : -axis.degree
   // A sampled dead time turns by 2 nu atan(v): nothing at the origin, nu half turns at half the sampling frequency.
   const halfTurns = origin ? 0 : axis.delayInSamples
-  const turns = (axis.gain < 0 ? 2 : 0) + 2 * positive + (origin ? weight : axis.degree) - 2 * halfTurns
+  const turns = extraTurns + (axis.gain < 0 ? 2 : 0) + 2 * positive + (origin ? weight : axis.degree) - 2 * halfTurns
   const wrapped = turns - 4 * Math.ceil((turns - 2) / 4)
   re[0] = constant
   im[0] = wrapped * HALF_PI

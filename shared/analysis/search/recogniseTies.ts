@@ -15,6 +15,7 @@ export interface AxisTies {
 const MIRROR = 1e-11
 
 export function recogniseTies(axis: AxisLoop): AxisTies {
+  if (axis.extension) return { constantGain: false, real: false, constantDistance: false }
   let constantGain = axis.originWeight === 0 && axis.boundary.length === 0
   // An odd number of integrators or differentiators makes it imaginary instead.
   let real = axis.deadTime === 0 && axis.delayInSamples === 0 && axis.originWeight % 2 === 0

@@ -96,6 +96,7 @@ function tellFlatEnds(exceptions: SearchException[], origin: SettledEnd, infinit
     [origin, 0, origin.edge, 'zero frequency'],
     [infinity, infinity.edge, Number.POSITIVE_INFINITY, 'the high end of the axis'],
   ] as const) {
+    if (end.open) exceptions.push({ from, to, code: 'open end', reason: end.open })
     if (end.unity) {
       const [start, stop] = end === origin ? [0, 0] : [infinity.edge, Number.POSITIVE_INFINITY]
       exceptions.push({ from: start, to: stop, code: 'unity at an end', reason: `|L| is exactly 1 at ${name}: no crossing, but its limit` })

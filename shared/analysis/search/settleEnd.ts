@@ -27,6 +27,8 @@ export interface SettledEnd {
   flat: ('gain' | 'phase' | 'distance')[]
   /** Greatest ln|L| between the edge and the end where |L| falls to 0 there, else Infinity: nothing was searched there for minima. */
   skippedBelow: number
+  /** Why nothing is known of L towards this end; undefined where it is. */
+  open?: string
 }
 
 export interface EndDemands {
@@ -38,6 +40,7 @@ export interface EndDemands {
 
 /** Draws the edge of an end towards it until every demanded test holds between the edge and the end. */
 export function settleEnd(axis: AxisLoop, end: AxisEnd, demands: EndDemands): SettledEnd {
+  if (end === 'infinity' && axis.extension) return axis.extension.settleInfinity(demands)
   const log = new LogSeries()
   const stationary = new StationarySeries()
   const origin = end === 'origin'
@@ -46,7 +49,7 @@ export function settleEnd(axis: AxisLoop, end: AxisEnd, demands: EndDemands): Se
   let series = expandEnd(axis, end, reach, log)
   let unsettled: SettledEnd['flat'] = []
   let unity = false
-  const offset = phaseOffsetOf(series)
+  let offset = phaseOffsetOf(series)
   let lastGoodReach = reach
   for (let i = 0; i < MAX_TRIES; i++) {
     const tie = { unity: false }
@@ -68,6 +71,8 @@ export function settleEnd(axis: AxisLoop, end: AxisEnd, demands: EndDemands): Se
     if (!(reach > 1e-290 && reach < 1e290)) break
     series = expandEnd(axis, end, reach, log)
   }
+  // Terms of dead time may be of no use until the reach is short.
+  if (axis.extension) offset = phaseOffsetOf(series)
   return describe(axis, end, series, lastGoodReach, offset, unity, unsettled)
 }
 

@@ -33,6 +33,7 @@ export function countEncirclements(result: SearchResult): EncirclementCount {
       return { encirclements: null, reason: `the count of encirclements is open: ${exception.reason}` }
     }
   }
+  if (infinity.open && infinity.logGain >= 0) return { encirclements: null, reason: infinity.open }
   if (ties.real) return countRealLocus(result)
 
   let count = 2 * result.search.turnsAbove

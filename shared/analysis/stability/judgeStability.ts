@@ -9,7 +9,7 @@ import { countEncirclements } from './countEncirclements'
  * The closed-loop verdict of a model: Z = P - N by counted encirclements, checked by the closed-loop poles where there is no dead time.
  * Both must agree, or the verdict is undetermined with the reason. -1 on the locus to within rounding comes before any count.
  */
-export function judgeStability(loop: FactoredLoop, result: SearchResult, lowest: LowestDistance): Stability {
+export function judgeStability(loop: FactoredLoop | null, result: SearchResult, lowest: LowestDistance): Stability {
   const { axis } = result
   const openLoopUnstablePoles = axis.unstablePoles
   const base = { basis: 'counted' as const, openLoopUnstablePoles }
@@ -20,6 +20,12 @@ export function judgeStability(loop: FactoredLoop, result: SearchResult, lowest:
       reason: joined('L meets -1 to within rounding', hidden),
     }
   }
+  if (axis.extension?.openReason) {
+    return {
+      basis: 'counted', openLoopUnstablePoles: null, verdict: 'undetermined', encirclements: null, closedLoopUnstablePoles: null,
+      reason: joined(axis.extension.openReason, hidden),
+    }
+  }
   const gainAtInfinity = result.infinity.logGain
   if (result.endless && gainAtInfinity > 0 && !result.infinity.unity) {
     return {
@@ -28,7 +34,7 @@ export function judgeStability(loop: FactoredLoop, result: SearchResult, lowest:
     }
   }
   const { encirclements, reason } = countEncirclements(result)
-  const roots = closedLoopUnstableCount(loop)
+  const roots = loop && closedLoopUnstableCount(loop)
   if (encirclements === null) {
     return { ...base, verdict: 'undetermined', encirclements, closedLoopUnstablePoles: null, reason: joined(reason!, hidden) }
   }

@@ -1,0 +1,112 @@
+import type { AxisLoop } from '../search/AxisLoop'
+import type { EndDemands, SettledEnd } from '../search/settleEnd'
+import type { GeneralLoop, GeneralSum, GeneralTerm } from './GeneralLoop'
+
+const STEP = 1.5
+const MAX_STEPS = 400
+/** Turns of the longest dead time that are still searched where the end itself is open. */
+const TURNS = 200
+
+/** |roots| of a product, each as often as it counts. */
+interface Sizes { logGain: number, roots: number[] }
+
+/** A sum as its term of highest degree times 1 + e, |e| at most the sum of the others over it. */
+interface Dominated { power: number, others: { logRatio: number, up: number[], down: number[] }[] }
+
+/**
+ * The far end of the axis of a loop gain with different dead times: no series in 1/v serves there, but |L| has a bound that falls
+ * with v. With |jv - r| between v - |r| and v + |r|, and each sum P_0 exp(..)(1 + e), |e| <= sum |P_t/P_0|.
+ */
+export class FarEnd {
+  private readonly ups: number[] = []
+  private readonly downs: number[] = []
+  private readonly logGain: number
+  private readonly sums: Dominated[]
+  private readonly largest: number
+
+  /** `rational` is the part of L without its sums, on the axis. */
+  constructor(rational: AxisLoop, loop: GeneralLoop, private readonly degree: number, private readonly longestDelay: number) {
+    let logGain = Math.log(Math.abs(rational.gain))
+    for (let k = 0; k < rational.count; k++) {
+      (rational.weight[k]! > 0 ? this.ups : this.downs).push(Math.hypot(rational.re[k]!, rational.im[k]!))
+    }
+    for (let k = 0; k < Math.abs(rational.originWeight); k++) (rational.originWeight > 0 ? this.ups : this.downs).push(0)
+    this.sums = loop.sums.map((sum) => {
+      const sizes = sum.terms.map(term => sizesOf(loop, term))
+      const main = mainTerm(sum, sizes)
+      logGain += sum.power * main.logGain
+      for (let repeat = 0; repeat < Math.abs(sum.power); repeat++) (sum.power > 0 ? this.ups : this.downs).push(...main.roots)
+      return {
+        power: sum.power,
+        others: sizes.filter(other => other !== main).map(other => ({ logRatio: other.logGain - main.logGain, up: other.roots, down: main.roots })),
+      }
+    })
+    this.logGain = logGain
+    const all = [...this.ups, ...this.downs, ...this.sums.flatMap(sum => sum.others.flatMap(other => other.up))]
+    this.largest = Math.max(1e-300, ...all, 1 / longestDelay)
+  }
+
+  settle(demands: EndDemands): SettledEnd {
+    const floor = Math.min(0, demands.floorLog)
+    let edge = 2 * this.largest
+    for (let i = 0; i < MAX_STEPS && this.degree < 0 && edge < 1e290; i++, edge *= STEP) {
+      const bound = this.bound(edge)
+      if (bound < floor) return this.describe(edge, bound)
+    }
+    edge = Math.max(10 * this.largest, TURNS / this.longestDelay)
+    return {
+      ...this.describe(edge, this.bound(edge)),
+      skippedBelow: Infinity,
+      value: Number.NaN, re: Number.NaN, im: Number.NaN,
+      logGain: this.bound(edge),
+      open: 'with several dead times L has no limit it nears in one way: it turns or waves endlessly, and what lies here is not shown',
+    }
+  }
+
+  private describe(edge: number, bound: number): SettledEnd {
+    return {
+      edge, logGain: -Infinity, quarterTurns: Number.NaN, value: 0, re: 0, im: 0, phaseOffset: 0, unity: false, flat: [], skippedBelow: bound,
+    }
+  }
+
+  /** Greatest ln|L| from v to infinity; Infinity where a sum that is divided by may vanish there. */
+  private bound(v: number): number {
+    let log = this.logGain
+    for (const size of this.ups) log += Math.log(v + size)
+    for (const size of this.downs) log -= Math.log(v - size)
+    for (const { power, others } of this.sums) {
+      let e = 0
+      for (const { logRatio, up, down } of others) {
+        let ratio = logRatio
+        for (const size of up) ratio += Math.log(v + size)
+        for (const size of down) ratio -= Math.log(v - size)
+        e += Math.exp(ratio)
+      }
+      if (power > 0) log += power * Math.log1p(e)
+      else log += e < 1 ? power * Math.log1p(-e) : Infinity
+    }
+    return log + 1e-9
+  }
+}
+
+function sizesOf(loop: GeneralLoop, term: GeneralTerm): Sizes {
+  const roots: number[] = []
+  for (const { polynomial, power } of term.factors) {
+    const list = loop.polynomials[polynomial]!
+    for (let repeat = 0; repeat < power; repeat++) {
+      for (let k = 0; k < list.re.length; k++) roots.push(Math.hypot(list.re[k]!, list.im[k]!))
+    }
+  }
+  return { logGain: Math.log(Math.abs(term.gain)), roots }
+}
+
+/** The undelayed term of a sum that is divided by (its degree is highest), else the term of highest degree and gain. */
+function mainTerm(sum: GeneralSum, sizes: Sizes[]): Sizes {
+  let main = sizes[0]!
+  if (sum.power < 0) return main
+  for (const other of sizes) {
+    const higher = other.roots.length - main.roots.length
+    if (higher > 0 || (higher === 0 && other.logGain > main.logGain)) main = other
+  }
+  return main
+}

@@ -1,0 +1,115 @@
+import type { AxisExtension } from '../search/AxisExtension'
+import type { LogSeries } from '../search/LogSeries'
+import type { EndDemands, SettledEnd } from '../search/settleEnd'
+import type { DelayedSumOnAxis, SumValue } from './DelayedSumOnAxis'
+import { SUM_SERIES_DEGREE } from './DelayedSumOnAxis'
+import type { FarEnd } from './FarEnd'
+
+const N = SUM_SERIES_DEGREE
+const TWO_PI = 2 * Math.PI
+
+/** All sums of different dead times of a loop gain as a part of it on the axis: prod Q_i^power_i. */
+export class SumsOnAxis implements AxisExtension {
+  readonly steady = new Float64Array(4)
+  readonly originLog: number
+  readonly originHalfTurns: number
+  private readonly value: SumValue = { logGain: 0, phase: 0, slopeRe: 0, slopeIm: 0, bendRe: 0, bendIm: 0 }
+  private lastHalf = Infinity
+  private lastTail = 0
+
+  constructor(private readonly sums: DelayedSumOnAxis[], private readonly farEnd: FarEnd, readonly openReason: string | undefined) {
+    let log = 0
+    let turns = 0
+    for (const sum of sums) {
+      const { logGain, negative } = sum.atOrigin()
+      log += sum.power * logGain
+      if (negative && sum.power % 2 !== 0) turns++
+    }
+    this.originLog = log
+    this.originHalfTurns = turns % 2
+  }
+
+  addSeries(log: LogSeries, c: number, h: number): void {
+    const { re, im, tail } = log
+    this.steady.fill(0)
+    let greatest = re[0]! + 1e-9
+    for (let n = 1; n <= N; n++) greatest += Math.abs(re[n]!)
+    greatest += tail[0]!
+    let shown = true
+    let bounded = true
+    let added = 0
+    for (const sum of this.sums) {
+      if (sum.expand(c, h)) {
+        greatest += Math.abs(sum.power) * sum.spread()
+      }
+      else {
+        shown = false
+        if (sum.power < 0 || c === 0) bounded = false
+        else {
+          // what evaluateAxisLoop added at the centre is in re_0 already
+          sum.evaluate(c, this.value)
+          greatest += sum.power * (sum.greatest - this.value.logGain)
+        }
+      }
+      if (!shown) continue
+      for (let n = 1; n <= N; n++) {
+        re[n] = re[n]! + sum.power * sum.re[n]!
+        im[n] = im[n]! + sum.power * sum.im[n]!
+      }
+      const size = Math.abs(sum.power)
+      for (let n = 0; n < 4; n++) {
+        tail[n] = tail[n]! + size * sum.tail[n]!
+        this.steady[n] = this.steady[n]! + size * sum.steady[n]!
+        added += n === 0 ? size * sum.tail[0]! : 0
+      }
+    }
+    this.lastHalf = h
+    this.lastTail = shown ? added : 1
+    if (shown) return
+    re.fill(0)
+    im.fill(0)
+    tail.fill(Infinity)
+    if (bounded && greatest < 0) {
+      // A zero of L lies here, or may: all that is known is that ln|L| <= greatest, and nothing of the phase. Where that is below the
+      // floor it settles the box; elsewhere a tail this large asks for a smaller one.
+      re[0] = greatest - 4
+      tail[0] = 4
+    }
+  }
+
+  addValue(v: number, out: Float64Array): void {
+    const { value } = this
+    for (const sum of this.sums) {
+      sum.evaluate(v, value)
+      out[0] = out[0]! + sum.power * value.logGain
+      out[1] = out[1]! + sum.power * value.phase
+      out[2] = out[2]! + sum.power * value.slopeRe
+      out[3] = out[3]! + sum.power * value.slopeIm
+      out[4] = out[4]! + sum.power * value.bendRe
+      out[5] = out[5]! + sum.power * value.bendIm
+    }
+    out[1] = out[1]! - TWO_PI * Math.round(out[1]! / TWO_PI)
+    const size = Math.exp(out[0]!)
+    out[6] = size * Math.cos(out[1]!)
+    out[7] = size * Math.sin(out[1]!)
+  }
+
+  boxHalf(left: number): number {
+    // Neighbouring boxes are of a like size: the last one's, a little more where it left room.
+    const growth = this.lastTail < 1e-7 || this.lastTail === 1 ? 2 : this.lastTail < 1e-5 ? 1.5 : 1.1
+    return Math.min(Math.max(this.lastHalf * growth, 1e-10 * left), left)
+  }
+
+  settleInfinity(demands: EndDemands): SettledEnd {
+    return this.farEnd.settle(demands)
+  }
+
+  roundingAt(v: number): number {
+    let rounding = 0
+    for (const sum of this.sums) {
+      sum.expand(v, 1e-3 * v)
+      rounding += Math.abs(sum.power) * sum.rounding
+    }
+    return rounding
+  }
+}
