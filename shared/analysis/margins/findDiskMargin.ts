@@ -58,7 +58,7 @@ export function findDiskMargin(result: SearchResult, from: number, to: number): 
     const low = leastOnStretch(at, candidate.from, candidate.to)
     offer(low.value, low.v)
   }
-  if (!Number.isFinite(best.x)) return null
+  if (!Number.isFinite(best.x) || best.x >= 2) return null
   return { alpha: 2 * Math.sqrt(best.x / (2 - best.x)), v: best.v }
 }
 

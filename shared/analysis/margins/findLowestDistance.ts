@@ -10,6 +10,8 @@ const NEGLIGIBLE = Math.log(1e-11)
 /** Boxes that a loop with several dead times may take under the floor: they grow with frequency, not with its logarithm. */
 const EXTENSION_EFFORT = 20_000
 const MAX_EXTENSIONS = 60
+/** Distances that differ by less than this part are the same to within rounding. */
+const EQUAL = 2e-15
 const GROWTH = 3
 
 /** The greatest lower bound of |1 + L| over a band. */
@@ -31,11 +33,13 @@ export function findLowestDistance(result: SearchResult, from: number, to: numbe
   if (result.search.stoppedAt < to) return null
   const value = new Float64Array(AXIS_VALUE_SIZE)
   const best = { distance: Number.POSITIVE_INFINITY, v: Number.NaN }
-  // Where an end and a place inside are equally low, the place inside is told.
-  const offer = (d: number, v: number, inside = false) => {
-    if (d < best.distance || (d === best.distance && inside)) {
+  // Where an end and a place inside are equally low, the place inside is told, and of several the first.
+  let inside = false
+  const offer = (d: number, v: number, found = false) => {
+    if (d < best.distance * (1 - EQUAL) || (found && !inside && d <= best.distance * (1 + EQUAL))) {
       best.distance = d
       best.v = v
+      inside = found
     }
   }
   const offerAt = (v: number) => {

@@ -71,7 +71,7 @@ export class AxisSearch {
   constructor(private readonly axis: AxisLoop) {
     this.refiner = new FindRefiner(axis)
     this.series = {
-      degree: N, coefficients: this.log.re, steady: this.log.steady, tail: this.log.tail, tailOrder: N + 1,
+      degree: N, coefficients: this.log.re, steady: this.log.steadyRe, tail: this.log.tail, tailOrder: N + 1,
     }
   }
 
@@ -191,8 +191,8 @@ export class AxisSearch {
     return value
   }
 
-  private boundAt(y: number): number {
-    return this.log.steady[0]! * 2 + this.log.tail[0]! * powerOf(Math.abs(y), N + 1)
+  private boundAt(y: number, steady: Float64Array): number {
+    return steady[0]! * 2 + this.log.tail[0]! * powerOf(Math.abs(y), N + 1)
   }
 
   /** Returns the v up to which the gain is settled, or -1 where a smaller box is needed. */
@@ -205,7 +205,7 @@ export class AxisSearch {
     if (!last) {
       yTo = Number.NaN
       for (const y of RIGHT_ENDS) {
-        if (Math.abs(this.horner(log.re, y)) > CLEARANCE * this.boundAt(y)) {
+        if (Math.abs(this.horner(log.re, y)) > CLEARANCE * this.boundAt(y, log.steadyRe)) {
           yTo = y
           break
         }
@@ -217,6 +217,7 @@ export class AxisSearch {
       }
     }
     this.series.coefficients = log.re
+    this.series.steady = log.steadyRe
     const outcome = this.isolator.isolate(this.series, yFrom, yTo)
     if (outcome !== 'complete') return this.giveUp('gain', from, end, forced)
     return this.collect(this.gain, 'gain', end, forced)
@@ -236,7 +237,7 @@ export class AxisSearch {
       yTo = Number.NaN
       for (const y of RIGHT_ENDS) {
         const offset = this.horner(log.im, y) - Math.PI
-        if (Math.abs(offset - TWO_PI * Math.round(offset / TWO_PI)) > CLEARANCE * this.boundAt(y)) {
+        if (Math.abs(offset - TWO_PI * Math.round(offset / TWO_PI)) > CLEARANCE * this.boundAt(y, log.steady)) {
           yTo = y
           break
         }
@@ -248,6 +249,7 @@ export class AxisSearch {
       }
     }
     this.series.coefficients = log.im
+    this.series.steady = log.steady
     // Monotone over the whole box: each turn between the ends is met exactly once.
     let bend = log.steady[1]! * 2 + log.tail[1]!
     for (let n = 2; n <= N; n++) bend += n * Math.abs(log.im[n]!)
@@ -259,10 +261,10 @@ export class AxisSearch {
       firstTurn = Math.ceil((low - Math.PI) / TWO_PI)
       lastTurn = Math.floor((high - Math.PI) / TWO_PI)
       const nearFrom = (atFrom - Math.PI) - TWO_PI * Math.round((atFrom - Math.PI) / TWO_PI)
-      if (Math.abs(nearFrom) <= this.boundAt(yFrom)) return this.giveUp('phase', from, end, forced)
+      if (Math.abs(nearFrom) <= this.boundAt(yFrom, log.steady)) return this.giveUp('phase', from, end, forced)
       if (last) {
         const nearTo = (atTo - Math.PI) - TWO_PI * Math.round((atTo - Math.PI) / TWO_PI)
-        if (Math.abs(nearTo) <= this.boundAt(yTo)) return this.giveUp('phase', from, end, forced)
+        if (Math.abs(nearTo) <= this.boundAt(yTo, log.steady)) return this.giveUp('phase', from, end, forced)
       }
       if (countOnly) {
         this.turnsAbove += (atTo > atFrom ? 1 : -1) * Math.max(0, lastTurn - firstTurn + 1)
@@ -382,12 +384,11 @@ export class AxisSearch {
 
   /** Where |L| > 1 and |m'|(|L| - 1) > |phi'| over the whole box, |1 + L| has no stationary point. */
   private gainRules(sign: number): boolean {
-    const { re, im, steady, tail, spreadRe } = this.log
+    const { re, im, steady, steadyRe, tail, spreadRe } = this.log
     const least = sign * re[0]! - spreadRe
     if (least <= 0) return false
-    const rest = 2 * steady[1]! + tail[1]!
-    let slope = Math.abs(re[1]!) - rest
-    let turn = Math.abs(im[1]!) + rest
+    let slope = Math.abs(re[1]!) - 2 * steadyRe[1]! - tail[1]!
+    let turn = Math.abs(im[1]!) + 2 * steady[1]! + tail[1]!
     for (let n = 2; n <= N; n++) {
       slope -= n * Math.abs(re[n]!)
       turn += n * Math.abs(im[n]!)
@@ -446,8 +447,9 @@ export class AxisSearch {
 
   /** A touch within bounds that the truncation still widens is worth a smaller box. */
   private tailMatters(kind: FindKind): boolean {
-    if (kind === 'gain' || kind === 'phase') return this.log.tail[0]! > this.log.steady[0]!
-    return this.stationary.tail[0]! > this.stationary.steady[0]! || this.log.tail[0]! > this.log.steady[0]!
+    // The isolator blames the tail from half of its own, larger, rounding on.
+    if (this.log.tail[0]! > 0.25 * this.log.steady[0]!) return true
+    return kind !== 'gain' && kind !== 'phase' && this.stationary.tail[0]! > 0.25 * this.stationary.steady[0]!
   }
 
   private refine(finds: FindList, kind: FindKind, start: number, from: number, to: number, direction: number): void {

@@ -28,7 +28,7 @@ const FEW = [
  * Rounding, u = 2^-53, K factors, P = sum |w| rho/(1-rho), rho <= 1/2: q is right to 8u (two differences, a complex
  * reciprocal), q^n to 11nu, the sum over the factors adds K + 2, so that the value errs by u(K+13)P, and with sum n rho^n <= 2 rho/(1-rho)
  * and its like for the derivatives by u(K+24)P, u(K+46)P, u(2K+140)P. The constant term errs by 5u(K+2) + 2u|ln|L|| and the dead
- * time's 2u(vτ + 2πν). Working on the series later (Taylor shift) errs by (4N+4)u sum |term_n|; it is added here once.
+ * time's 3uvτ, or 13uν. Working on the series later (Taylor shift) errs by (4N+4)u sum |term_n|; it is added here once.
  * Errors of the model (the corrections W of the factors): e(y) = sum W/zeta/(1 + qy) in the worst case, so |log(1 + e)| adds 2 sum W/|zeta|, and
  * its derivatives 4, 8, 24 times sum W rho/|zeta| (geometric series at rho <= 1/2). In z it is W (1 - s)/(s - r) = W ((1 - r)/(s - r) - 1):
  * |1 - s| times as much, |1 - r| times in the derivatives.
@@ -38,6 +38,8 @@ export class LogSeries {
   readonly im = new Float64Array(N + 1)
   readonly tail = new Float64Array(4)
   readonly steady = new Float64Array(4)
+  /** The same for the real part alone, which a dead time does not touch. */
+  readonly steadyRe = new Float64Array(4)
   centre = 0
   half = 1
   /** Sum over n >= 1 of |re_n| and |im_n|: how far ln|L| and the phase can stray from the centre, tails included. */
@@ -46,6 +48,7 @@ export class LogSeries {
 
   /** Tails 0 to 3 and P of the factors taken by their difference. */
   private readonly sums = new Float64Array(5)
+  private readonly weighted = new Float64Array(8)
   private readonly value = new Float64Array(AXIS_VALUE_SIZE)
 
   /** Expands about jc over |v - c| <= h; every root must be at least 2h from jc. */
@@ -205,34 +208,39 @@ export class LogSeries {
   bound(axis: AxisLoop, absolute: number, small: number, error: number, bend: number, reach: number): void {
     const { re, im, tail, steady } = this
     const k = axis.count + 2
-    let sum0 = 0
-    let sum1 = 0
-    let sum2 = 0
-    let sum3 = 0
-    let spreadRe = 0
-    let spreadIm = 0
+    const sums = this.weighted
+    sums.fill(0)
     for (let n = 1; n <= N; n++) {
       const sizeRe = Math.abs(re[n]!)
       const sizeIm = Math.abs(im[n]!)
-      spreadRe += sizeRe
-      spreadIm += sizeIm
-      const size = sizeRe + sizeIm
-      sum0 += size
-      sum1 += n * size
-      sum2 += n * (n - 1) * size
-      sum3 += n * (n - 1) * (n - 2) * size
+      const n1 = n * (n - 1)
+      const n2 = n1 * (n - 2)
+      sums[0] = sums[0]! + sizeRe
+      sums[1] = sums[1]! + n * sizeRe
+      sums[2] = sums[2]! + n1 * sizeRe
+      sums[3] = sums[3]! + n2 * sizeRe
+      sums[4] = sums[4]! + sizeIm
+      sums[5] = sums[5]! + n * sizeIm
+      sums[6] = sums[6]! + n1 * sizeIm
+      sums[7] = sums[7]! + n2 * sizeIm
     }
     const slack = (4 * N + 4) * U
-    steady[0] = U * ((k + 13) * absolute + 5 * k + 2 * Math.abs(re[0]!) + 8
-      + 2 * reach * axis.deadTime + 13 * axis.delayInSamples) + small + 2.1 * error + slack * sum0
-    steady[1] = U * ((k + 24) * absolute) + 4 * small + 4.1 * bend + slack * sum1
-    steady[2] = U * ((k + 46) * absolute) + 40 * small + 8.2 * bend + slack * sum2
-    steady[3] = U * ((2 * k + 140) * absolute) + 400 * small + 24.6 * bend + slack * sum3
+    const { steadyRe } = this
+    steadyRe[0] = U * ((k + 13) * absolute + 5 * k + 2 * Math.abs(re[0]!)) + small + 2.1 * error + slack * sums[0]!
+    steadyRe[1] = U * ((k + 24) * absolute) + 4 * small + 4.1 * bend + slack * sums[1]!
+    steadyRe[2] = U * ((k + 46) * absolute) + 40 * small + 8.2 * bend + slack * sums[2]!
+    steadyRe[3] = U * ((2 * k + 140) * absolute) + 400 * small + 24.6 * bend + slack * sums[3]!
+    steady[0] = steadyRe[0]! + slack * sums[4]! + U * (8 + 3 * reach * axis.deadTime + 13 * axis.delayInSamples)
+    steady[1] = steadyRe[1]! + slack * sums[5]!
+    steady[2] = steadyRe[2]! + slack * sums[6]!
+    steady[3] = steadyRe[3]! + slack * sums[7]!
     if (axis.extension) {
-      for (let n = 0; n < 4; n++) steady[n] = steady[n]! + axis.extension.steady[n]!
+      for (let n = 0; n < 4; n++) {
+        steady[n] = steady[n]! + axis.extension.steady[n]!
+        steadyRe[n] = steadyRe[n]! + axis.extension.steady[n]!
+      }
     }
-    const rest = tail[0]! + steady[0]!
-    this.spreadRe = spreadRe + rest
-    this.spreadIm = spreadIm + rest
+    this.spreadRe = sums[0]! + tail[0]! + steadyRe[0]!
+    this.spreadIm = sums[4]! + tail[0]! + steady[0]!
   }
 }

@@ -37,9 +37,9 @@ export class StationarySeries implements EnclosedSeries {
   private readonly squareMajorant = new Float64Array(N + 1)
   private readonly sizes = new Float64Array(N + 1)
   private readonly squareSizes = new Float64Array(N + 1)
-  private readonly tails = new Float64Array(4)
-  private readonly totals = new Float64Array(4)
+  /** Bounds of the remainder of log L on the stretch and of its derivatives, and of its real part alone. */
   private readonly rest = new Float64Array(4)
+  private readonly restRe = new Float64Array(4)
 
   /** Sum over n >= 1 of |t_n| of the last stretch built. */
   spread = 0
@@ -74,15 +74,17 @@ export class StationarySeries implements EnclosedSeries {
     for (let n = 1; n <= N; n++) coefficients[n - 1] = n * (cos * eRe[n]! - sin * eIm[n]! + beta * square[n]!)
 
     const reach = Math.min(1, Math.max(Math.abs(middle - half), Math.abs(middle + half)))
-    const r = this.rest
-    r[0] = log.steady[0]! + log.tail[0]! * powerOf(reach, N + 1)
-    r[1] = half * (log.steady[1]! + log.tail[1]! * powerOf(reach, N))
-    r[2] = half * half * (log.steady[2]! + log.tail[2]! * powerOf(reach, N - 1))
-    r[3] = half * half * half * (log.steady[3]! + log.tail[3]! * powerOf(reach, N - 2))
+    let factor = 1
+    for (let k = 0; k < 4; k++) {
+      const tail = log.tail[k]! * powerOf(reach, N + 1 - k)
+      this.rest[k] = factor * (log.steady[k]! + tail)
+      this.restRe[k] = factor * (log.steadyRe[k]! + tail)
+      factor *= half
+    }
     this.steady.fill(0)
     this.tail.fill(0)
-    this.addBounds(this.majorant, sizes, 2 * alpha, 1)
-    this.addBounds(this.squareMajorant, squareSizes, beta, 2)
+    this.addBounds(this.majorant, sizes, this.rest, 2 * alpha, 1)
+    this.addBounds(this.squareMajorant, squareSizes, this.restRe, beta, 2)
     return true
   }
 
@@ -117,7 +119,7 @@ export class StationarySeries implements EnclosedSeries {
   }
 
   /** Adds factor times the bounds of the derivatives 1 to 3 of exp(series) exp(times r), series majorised by `sizes`. */
-  private addBounds(majorant: Float64Array, sizes: Float64Array, factor: number, times: number): void {
+  private addBounds(majorant: Float64Array, sizes: Float64Array, rest: Float64Array, factor: number, times: number): void {
     let t0 = 0
     let t1 = 0
     let t2 = 0
@@ -141,7 +143,7 @@ export class StationarySeries implements EnclosedSeries {
     const total1 = t1 * total0
     const total2 = (t2 + t1 * t1) * total0
     const total3 = (t3 + 3 * t1 * t2 + t1 * t1 * t1) * total0
-    const { tail, steady, rest } = this
+    const { tail, steady } = this
     tail[0] = tail[0]! + factor * (Math.max(0, total1 - x1) + 50 * U * total1)
     tail[1] = tail[1]! + factor * (Math.max(0, total2 - x2) + 50 * U * total2)
     tail[2] = tail[2]! + factor * (Math.max(0, total3 - x3) + 50 * U * total3)

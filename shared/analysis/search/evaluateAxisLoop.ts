@@ -38,17 +38,22 @@ export function evaluateAxisLoop(axis: AxisLoop, v: number, out: Float64Array): 
   let slopeIm = 0
   let bendRe = 0
   let bendIm = 0
+  // A root nearer to the origin than v adds 1/v to d ln|L|/dv and little else: the 1/v are counted, what is left is added, so that nothing cancels far out.
+  let common = 0
   for (let k = 0; k < reals.length; k++) {
     const a = reals[k]!
     // j/(jv - a) = (v - ja)/(v^2 + a^2)
     const scale = 1 / (v * v + a * a)
     const dRe = v * scale
     const dIm = -a * scale
+    const inner = a * a < v * v
+    const ownRe = inner ? -a * a * scale / v : dRe
+    if (inner) common += realKinds[k]!
     if (realKinds[k]! > 0) {
       const t = -a * upRe - v * upIm
       upIm = -a * upIm + v * upRe
       upRe = t
-      slopeRe += dRe
+      slopeRe += ownRe
       slopeIm += dIm
       bendRe -= dRe * dRe - dIm * dIm
       bendIm -= 2 * dRe * dIm
@@ -68,7 +73,7 @@ export function evaluateAxisLoop(axis: AxisLoop, v: number, out: Float64Array): 
       const t = -a * downRe - v * downIm
       downIm = -a * downIm + v * downRe
       downRe = t
-      slopeRe -= dRe
+      slopeRe -= ownRe
       slopeIm -= dIm
       bendRe += dRe * dRe - dIm * dIm
       bendIm += 2 * dRe * dIm
@@ -96,13 +101,17 @@ export function evaluateAxisLoop(axis: AxisLoop, v: number, out: Float64Array): 
     const rIm = -y * scale
     const dRe = -2 * (v * rRe - a * rIm)
     const dIm = -2 * (v * rIm + a * rRe)
+    const size2 = a * a + b * b
+    const inner = size2 < v * v
+    const ownRe = inner ? -2 * (size2 * rRe + a * v * rIm) / v : dRe
+    if (inner) common += 2 * pairKinds[k]!
     const sRe = -2 * rRe - (dRe * dRe - dIm * dIm)
     const sIm = -2 * rIm - 2 * dRe * dIm
     if (pairKinds[k]! > 0) {
       const t = x * upRe - y * upIm
       upIm = x * upIm + y * upRe
       upRe = t
-      slopeRe += dRe
+      slopeRe += ownRe
       slopeIm += dIm
       bendRe += sRe
       bendIm += sIm
@@ -122,7 +131,7 @@ export function evaluateAxisLoop(axis: AxisLoop, v: number, out: Float64Array): 
       const t = x * downRe - y * downIm
       downIm = x * downIm + y * downRe
       downRe = t
-      slopeRe -= dRe
+      slopeRe -= ownRe
       slopeIm -= dIm
       bendRe -= sRe
       bendIm -= sIm
@@ -151,7 +160,6 @@ export function evaluateAxisLoop(axis: AxisLoop, v: number, out: Float64Array): 
       im = re
       re = t
     }
-    slopeRe += originWeight / v
     bendRe -= originWeight / v / v
     const power = v ** originWeight
     if (power > SMALL && power < BIG) {
@@ -160,6 +168,7 @@ export function evaluateAxisLoop(axis: AxisLoop, v: number, out: Float64Array): 
     }
     else outside = originWeight * Math.log(v)
   }
+  slopeRe += (originWeight + common) / v
   if (exponent !== 0) {
     if (Math.abs(exponent) === STEP) {
       re *= 2 ** exponent

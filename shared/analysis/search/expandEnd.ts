@@ -93,6 +93,8 @@ export function expandEnd(axis: AxisLoop, end: AxisEnd, reach: number, log: LogS
   im[0] = wrapped * HALF_PI
   log.bound(axis, absolute, 0, error, bend, origin ? reach : 0)
   // Each logarithm of the constant errs by a unit of its own size.
-  log.steady[0] = log.steady[0]! + 2 ** -52 * (Math.abs(Math.log(Math.abs(axis.gain))) + axis.count * 40)
+  const logarithms = 2 ** -52 * (Math.abs(Math.log(Math.abs(axis.gain))) + axis.count * 40)
+  log.steady[0] = log.steady[0]! + logarithms
+  log.steadyRe[0] = log.steadyRe[0]! + logarithms
   return { log, weight, reach, quarterTurns: Number.isInteger(wrapped) ? wrapped : Number.NaN }
 }

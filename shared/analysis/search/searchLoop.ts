@@ -92,19 +92,15 @@ export function searchLoop(axis: AxisLoop, options: SearchOptions): SearchResult
 }
 
 function tellFlatEnds(exceptions: SearchException[], origin: SettledEnd, infinity: SettledEnd): void {
-  for (const [end, from, to, name] of [
-    [origin, 0, origin.edge, 'zero frequency'],
-    [infinity, infinity.edge, Number.POSITIVE_INFINITY, 'the high end of the axis'],
-  ] as const) {
-    if (end.open) exceptions.push({ from, to, code: 'open end', reason: end.open })
+  for (const [end, name] of [[origin, 'zero frequency'], [infinity, 'the high end of the axis']] as const) {
+    const stretch = (edge: number) => end === origin ? { from: 0, to: edge } : { from: edge, to: Number.POSITIVE_INFINITY }
+    if (end.open) exceptions.push({ ...stretch(end.edge), code: 'open end', reason: end.open })
     if (end.unity) {
-      const [start, stop] = end === origin ? [0, 0] : [infinity.edge, Number.POSITIVE_INFINITY]
-      exceptions.push({ from: start, to: stop, code: 'unity at an end', reason: `|L| is exactly 1 at ${name}: no crossing, but its limit` })
+      exceptions.push({ ...stretch(end === origin ? 0 : end.edge), code: 'unity at an end', reason: `|L| is exactly 1 at ${name}: no crossing, but its limit` })
     }
-    for (const what of end.flat) {
-      if (what === 'gain' && end.unity) continue
+    for (const { what, edge } of end.flat) {
       exceptions.push({
-        from, to, code: `${what} flat at an end`,
+        ...stretch(edge), code: `${what} flat at an end`,
         reason: `the leading term of ${FLAT_WORDS[what]} at ${name} is zero to within rounding, so that nothing can be shown right beside it`,
       })
     }

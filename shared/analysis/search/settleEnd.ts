@@ -1,10 +1,19 @@
 import type { AxisLoop } from './AxisLoop'
 import { expandEnd, type AxisEnd, type EndSeries } from './expandEnd'
+import { leadingTerm } from './leadingTerm'
 import { LogSeries, SERIES_DEGREE } from './LogSeries'
 import { StationarySeries } from './StationarySeries'
 
 const N = SERIES_DEGREE
 const MAX_TRIES = 120
+/** Nearer to the end than this part of the nearest root a test that fails does so by rounding. */
+const NEAREST = 1e-9
+
+export interface FlatEnd {
+  what: 'gain' | 'phase' | 'distance'
+  /** v up to (from) which nothing is shown, counted from the end. */
+  edge: number
+}
 
 /** What was shown of an end of the axis: nothing is found between the end and `edge`, the end itself apart. */
 export interface SettledEnd {
@@ -23,8 +32,8 @@ export interface SettledEnd {
   phaseOffset: number
   /** |L| is 1 at the end to within rounding. */
   unity: boolean
-  /** What could not be shown although the edge was drawn far in. */
-  flat: ('gain' | 'phase' | 'distance')[]
+  /** What could not be shown right beside the end, because its leading term there is zero to within rounding, and up to which v. */
+  flat: FlatEnd[]
   /** Greatest ln|L| between the edge and the end where |L| falls to 0 there, else Infinity: nothing was searched there for minima. */
   skippedBelow: number
   /** Why nothing is known of L towards this end; undefined where it is. */
@@ -47,37 +56,52 @@ export function settleEnd(axis: AxisLoop, end: AxisEnd, demands: EndDemands): Se
   let reach = origin ? 0.3 * axis.smallestRoot : 0.3 / axis.largestRoot
   if (origin && axis.deadTime > 0) reach = Math.min(reach, 0.3 / axis.deadTime)
   let series = expandEnd(axis, end, reach, log)
-  let unsettled: SettledEnd['flat'] = []
+  let flat: FlatEnd[] = []
   let unity = false
-  let offset = phaseOffsetOf(series)
-  let lastGoodReach = reach
+  let fallback: { reach: number, flat: FlatEnd[] } | undefined
+  let offset = phaseLead(series).sign
+  const nearest = NEAREST * (origin ? axis.smallestRoot : 1 / axis.largestRoot)
+  let tried = reach
   for (let i = 0; i < MAX_TRIES; i++) {
-    const tie = { unity: false }
-    const failed: SettledEnd['flat'] = []
-    if (demands.gain && !gainHolds(series, demands, tie)) failed.push('gain')
+    const failed: FlatEnd['what'][] = []
+    flat = []
+    const edgeAt = (part: number) => origin ? reach * part : 1 / (reach * part)
+    const note = (what: FlatEnd['what'], to: number | null) => {
+      if (to === null) failed.push(what)
+      else if (to > 0) flat.push({ what, edge: edgeAt(to) })
+    }
+    tried = reach
+    unity = series.weight === 0 && demands.gain && Math.abs(log.re[0]!) <= log.steadyRe[0]!
+    if (demands.gain) note('gain', gainFlatness(series, demands))
     if (series.weight <= 0) {
-      if (demands.phase && !phaseHolds(series)) failed.push('phase')
-      if (demands.distance && !distanceHolds(series, stationary)) failed.push('distance')
+      if (demands.phase) note('phase', phaseFlatness(series))
+      if (demands.distance) note('distance', distanceFlatness(series, stationary))
     }
     else if (!belowFloor(series, demands)) failed.push('gain')
-    unsettled = failed
-    unity = tie.unity
-    lastGoodReach = reach
-    if (failed.length === 0) break
-    // A test that still fails this near the end fails by rounding: its leading term is zero for all one can tell.
-    const nearest = origin ? 1e-9 * axis.smallestRoot : 1e-9 / axis.largestRoot
-    if (reach < nearest && !failed.includes('gain') && series.weight === 0) break
-    reach *= reach < nearest ? 0.01 : 0.4
-    if (!(reach > 1e-290 && reach < 1e290)) break
+    if (failed.length === 0 && flat.length === 0) break
+    // Flat as seen from here; nearer to the end its leading term may yet stand out. If not, this is where to come back to.
+    if (failed.length === 0) fallback ??= { reach, flat }
+    const exhausted = reach < nearest && series.weight <= 0 && !failed.includes('gain') && (series.weight === 0 || !failed.includes('distance'))
+    const next = reach * (reach < nearest ? 0.01 : 0.4)
+    if (exhausted || !(next > 1e-290 && next < 1e290)) {
+      if (fallback) {
+        tried = fallback.reach
+        flat = fallback.flat
+        series = expandEnd(axis, end, tried, log)
+      }
+      else for (const what of failed) flat.push({ what, edge: edgeAt(1) })
+      break
+    }
+    reach = next
     series = expandEnd(axis, end, reach, log)
   }
-  // Terms of dead time may be of no use until the reach is short.
-  if (axis.extension) offset = phaseOffsetOf(series)
-  return describe(axis, end, series, lastGoodReach, offset, unity, unsettled)
+  // Terms of several dead times may be of no use until the reach is short.
+  if (axis.extension) offset = phaseLead(series).sign
+  return describe(axis, end, series, tried, offset, unity, flat)
 }
 
 function describe(axis: AxisLoop, end: AxisEnd, series: EndSeries, reach: number, offset: number, unity: boolean,
-  flat: SettledEnd['flat']): SettledEnd {
+  flat: FlatEnd[]): SettledEnd {
   const { weight, log, quarterTurns } = series
   const size = weight === 0 ? Math.exp(log.re[0]!) : 0
   const exact = weight === 0 ? (unity ? 1 : size) : 0
@@ -98,70 +122,64 @@ function describe(axis: AxisLoop, end: AxisEnd, series: EndSeries, reach: number
   }
 }
 
-/** Sign of the first phase term that is not zero for all one can tell. */
-function phaseOffsetOf(series: EndSeries): number {
-  const { im, steady } = series.log
-  for (let n = 1; n <= N; n += 2) {
-    if (Math.abs(im[n]!) > steady[1]!) return Math.sign(im[n]!)
-  }
-  return 0
-}
-
 function weightedSum(terms: Float64Array, first: number): number {
   let sum = 0
   for (let n = first; n <= N; n++) sum += n * Math.abs(terms[n]!)
   return sum
 }
 
-/** No |L| = 1 between the edge and the end. */
-function gainHolds({ log, weight, reach }: EndSeries, demands: EndDemands, tie: { unity: boolean }): boolean {
-  const bound0 = log.steady[0]! + log.tail[0]!
-  const bound1 = log.steady[1]! + log.tail[1]!
+/** No |L| = 1 between the edge and the end: null where that does not hold, else the part of the stretch it is not shown for. */
+function gainFlatness({ log, weight, reach }: EndSeries, demands: EndDemands): number | null {
+  const bound0 = log.steadyRe[0]! + log.tail[0]!
+  const bound1 = log.steadyRe[1]! + log.tail[1]!
   if (weight === 0) {
-    if (Math.abs(log.re[0]!) > log.spreadRe) return true
-    // Even series: the leading term outweighs the rest, so ln|L| is monotone; only |L| = 1 at the end itself is left.
-    if (Math.abs(log.re[0]!) > log.steady[0]!) return false
-    tie.unity = true
-    return 2 * Math.abs(log.re[2]!) > weightedSum(log.re, 4) + bound1
+    if (Math.abs(log.re[0]!) > log.spreadRe) return 0
+    if (Math.abs(log.re[0]!) > log.steadyRe[0]!) return null
+    // |L| = 1 at the end itself: beside it ln|L| is monotone where the leading term of its even series rules.
+    const lead = leadingTerm(n => n * log.re[n]!, 2, 2, N, log.steadyRe[1]!, log.tail[1]!)
+    return lead.holds ? lead.flatTo : null
   }
-  if (Math.abs(weight) <= weightedSum(log.re, 2) + bound1) return false
+  if (Math.abs(weight) <= weightedSum(log.re, 2) + bound1) return null
   let atEdge = weight * Math.log(reach)
   for (let n = 0; n <= N; n++) atEdge += log.re[n]!
   const slack = bound0 + 1e-15 * Math.abs(weight * Math.log(reach))
-  return weight < 0 ? atEdge > slack : atEdge < Math.min(0, demands.floorLog) - slack
+  const clear = weight < 0 ? atEdge > slack : atEdge < Math.min(0, demands.floorLog) - slack
+  return clear ? 0 : null
 }
 
 function belowFloor({ log, weight, reach }: EndSeries, demands: EndDemands): boolean {
-  return weight > weightedSum(log.re, 2) + log.steady[1]! + log.tail[1]!
+  return weight > weightedSum(log.re, 2) + log.steadyRe[1]! + log.tail[1]!
     && weight * Math.log(reach) + log.re[0]! + log.spreadRe < Math.min(0, demands.floorLog)
 }
 
-/** No arg L = 180 deg between the edge and the end. */
-function phaseHolds({ log, quarterTurns }: EndSeries): boolean {
-  if (quarterTurns === 2 || quarterTurns === -2) {
-    let rest = log.tail[0]! + log.steady[1]!
-    for (let n = 3; n <= N; n++) rest += Math.abs(log.im[n]!)
-    return Math.abs(log.im[1]!) > rest
-  }
-  return Math.PI - Math.abs(log.im[0]!) > log.spreadIm
+/** The series of arg L less its end value: odd in x. */
+function phaseLead({ log }: EndSeries): ReturnType<typeof leadingTerm> {
+  return leadingTerm(n => log.im[n]!, 1, 2, N, log.steady[1]!, log.tail[0]!)
 }
 
-/** No stationary |1 + L| between the edge and the end. */
-function distanceHolds({ log, weight, reach, quarterTurns }: EndSeries, stationary: StationarySeries): boolean {
+/** No arg L = 180 deg between the edge and the end; returns as `gainFlatness`. */
+function phaseFlatness(series: EndSeries): number | null {
+  const { log, quarterTurns } = series
+  const gap = Math.PI - Math.abs(log.im[0]!)
+  if (gap > log.spreadIm) return 0
+  if (quarterTurns !== 2 && gap > 2 * log.steady[0]!) return null
+  const lead = phaseLead(series)
+  return lead.holds ? lead.flatTo : null
+}
+
+/** No stationary |1 + L| between the edge and the end; returns as `gainFlatness`. */
+function distanceFlatness({ log, weight, reach, quarterTurns }: EndSeries, stationary: StationarySeries): number | null {
   if (weight < 0) {
     // |m'| (|L| - 1) > |phi'|, with x m' = weight + ..., |L| least at the edge
-    const a = weightedSum(log.re, 1) + log.steady[1]! + log.tail[1]!
+    const a = weightedSum(log.re, 1) + log.steadyRe[1]! + log.tail[1]!
     const b = weightedSum(log.im, 1) + log.steady[1]! + log.tail[1]!
     const least = weight * Math.log(reach) + log.re[0]! - log.spreadRe - 1e-12
-    return -weight > a && (-weight - a) * Math.expm1(least) > b
+    return -weight > a && (-weight - a) * Math.expm1(least) > b ? 0 : null
   }
-  if (!stationary.build(log, 0, 1)) return false
+  if (!stationary.build(log, 0, 1)) return null
   const f = stationary.coefficients
+  // Even in x, so odd in its slope, unless a dead time of a fraction of a sample spoils the symmetry.
   const parity = !Number.isNaN(quarterTurns)
-  const lead = parity ? 1 : 0
-  let rest = stationary.tail[0]! + stationary.steady[0]!
-  for (let n = lead + 1; n < N; n++) {
-    if (!parity || n % 2 === 1) rest += Math.abs(f[n]!)
-  }
-  return Math.abs(f[lead]!) > rest
+  const lead = leadingTerm(n => f[n]!, parity ? 1 : 0, parity ? 2 : 1, N - 1, stationary.steady[0]!, stationary.tail[0]!)
+  return lead.holds ? lead.flatTo : null
 }

@@ -78,7 +78,7 @@ export function countEncirclements(result: SearchResult): EncirclementCount {
       count -= infinity.phaseOffset
     }
   }
-  return { encirclements: count }
+  return { encirclements: count + 0 }
 }
 
 function isNegative(value: number, logGain: number): boolean {
@@ -114,6 +114,6 @@ function countRealLocus({ axis, boundary }: SearchResult): EncirclementCount {
   let halfTurns = Math.max(0, -axis.originWeight) + Math.max(0, axis.degree)
   for (const root of boundary) halfTurns += 2 * Math.max(0, -root.weight)
   return halfTurns % 2 === 0
-    ? { encirclements: -halfTurns / 2 }
+    ? { encirclements: 0 - halfTurns / 2 }
     : { encirclements: null, reason: 'L is real along the whole axis and its arcs do not close' }
 }
