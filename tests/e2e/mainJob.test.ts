@@ -46,7 +46,7 @@ describe('the main job, from sign-in to an issued revision', () => {
   it('shows the board: every loop in every condition with its verdict in words', async () => {
     await page.getByRole('link', { name: 'Tern 30 access gangway' }).click()
     await page.getByText('RO-P').first().waitFor()
-    await page.locator('svg[role="img"]').first().waitFor()
+    await page.getByText('gain above one: each edge is a gain crossover').first().waitFor()
     await page.getByText('Negative feedback, critical point −1').waitFor()
     await page.getByText('not met').first().waitFor()
     await keepScreenshot(page, '02-board')
