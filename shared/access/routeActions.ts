@@ -84,7 +84,7 @@ export const routeActions = {
 
   'GET /api/jobs/[jobId]': 'see loops, data and drafts',
   'GET /api/jobs/[jobId]/events': 'see loops, data and drafts',
-  'POST /api/jobs/[jobId]/cancel': 'see loops, data and drafts',
+  'POST /api/jobs/[jobId]/cancel': 'cancel a rendering',
 } as const satisfies Record<string, Action>
 
 export type RouteKey = keyof typeof routeActions

@@ -34,6 +34,8 @@ export const actionRules = {
   'manage members': either(holding('engineer'), administrator),
   'freeze a revision': holding('engineer'),
   'issue a revision': holding('approver'),
+  // of an edition one may not ask for, only one's own: the service looks at the job
+  'cancel a rendering': holding('engineer', 'approver'),
   'read issued revisions': either(holding('engineer', 'checker', 'approver', 'customer'), administrator),
 } satisfies Record<string, Rule>
 

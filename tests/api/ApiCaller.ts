@@ -29,6 +29,8 @@ export class ApiCaller {
     const response = await fetch(this.url + path, {
       method,
       redirect: 'manual',
+      // A reply that never ends is a failure of its own, told at once.
+      signal: AbortSignal.timeout(60_000),
       headers: {
         origin: this.url,
         cookie: [...this.#cookies].map(([name, value]) => `${name}=${value}`).join('; '),

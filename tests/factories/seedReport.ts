@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto'
 import type { Actor } from '#server/services/context'
 import { ArtefactBlob } from '#server/database/models/ArtefactBlob'
 import { ArtefactRow } from '#server/database/models/ArtefactRow'
+import { JobEvent } from '#server/database/models/JobEvent'
 import { JobRow } from '#server/database/models/JobRow'
 import { ReportRow } from '#server/database/models/ReportRow'
 import { RevisionRow } from '#server/database/models/RevisionRow'
@@ -41,6 +42,8 @@ export async function seedReport(systemId: number, loopIds: number[], conditionI
     }
   }
   await revision.update({ state: 'issued', issuedBy: approver.id, issuedByName: approver.name, issuedAt: time })
-  const job = await JobRow.create({ kind: 'renderRevision', revisionId: revision.id, edition: 'issued', state: 'done', step: 'Done', done: 1, total: 1, attempts: 1, requestedBy: approver.id, createdAt: time, finishedAt: time })
+  const job = await JobRow.create({ kind: 'renderRevision', revisionId: revision.id, edition: 'draft', state: 'done', step: 'Done', done: 1, total: 1, attempts: 1, requestedBy: approver.id, createdAt: time, finishedAt: time })
+  const { id, kind, revisionId, edition, state, step, done, total } = job
+  await JobEvent.create({ jobId: id, sequence: 1, payload: { id, kind, revisionId, edition, state, step, done, total, error: null }, createdAt: time })
   return { reportId: report.id, revisionId: revision.id, jobId: job.id }
 }
