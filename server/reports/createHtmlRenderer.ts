@@ -9,6 +9,8 @@ import type { ReportView, TableCell } from './view/ReportView'
 const partials = ['cover', 'front', 'table', 'cell', 'cellText', 'figure', 'summary', 'matrix', 'chapter', 'condition', 'section'] as const
 const styles = ['type', 'cover', 'tables', 'sections', 'screen', 'print'] as const
 
+const placeOfStyles = '/* styles */'
+
 export type HtmlRenderer = (view: ReportView) => Promise<string>
 
 /** Helpers only format; the one that writes markup takes nothing but what our own code has branded as such. */
@@ -39,9 +41,10 @@ export async function createHtmlRenderer(assets: ReportAssets): Promise<HtmlRend
 
   return async (view) => {
     const hasRemarks = view.remarks.markup !== ''
-    const body = layout({ view, hasRemarks, styles: safeHtml('') })
+    const body = layout({ view, hasRemarks, styles: safeHtml(placeOfStyles) })
     const fonts = await fontFacesFor(body + JSON.stringify(view.runningHead) + view.chapters.map(chapter => chapter.code + chapter.name).join(''), assets)
-    const html = layout({ view, hasRemarks, styles: safeHtml([fonts, sheets, pageRules(view)].join('\n')) })
+    // The fonts depend on the letters of the document, so the styles are put in after it is laid out.
+    const html = body.replace(placeOfStyles, () => [fonts, sheets, pageRules(view)].join('\n'))
     assertSelfContained(html)
     return html
   }

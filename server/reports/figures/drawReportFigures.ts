@@ -35,7 +35,7 @@ type LoopFigureName = Exclude<FigureName, 'crossingChart'>
 
 /** px; the large figures of a loop, so that two with their captions share a page. */
 const largeHeights: Record<LoopFigureName, number> = { berthChart: 430, returnDifferenceProfile: 300, magnitudePhase: 430, gainOverPhase: 370 }
-const smallHeight = 178
+const smallHeight = 232
 
 /** The caption of a small figure, whose large sister on an earlier page says how to read it. */
 function shortCaption(name: LoopFigureName, { curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {

@@ -12,7 +12,7 @@ export interface TableDraft {
 }
 
 /** Rows up to which a table is kept on one page. */
-const rowsOfShortTable = 24
+const rowsOfShortTable = 12
 
 /** A table with every field the templates name, for they refuse a field that is missing. Throws a RangeError for a row of another length than the head. */
 export function tableOf({ caption, columns, rows, notes = [], kind }: TableDraft): TableView {
