@@ -132,7 +132,7 @@ describe('issuing over HTTP', () => {
     expect([body.before.label, body.after.label]).toEqual(['A', 'B'])
     // 20 log10 1.5 = 3.522 dB: closed form
     expect(body.cells[0]?.differences.gainIncrease).toBeCloseTo(-20 * Math.log10(1.5), 6)
-    expect(body.cells[0]).toMatchObject({ verdictChanged: true, after: { sourceName: 'twice the gain', verdict: 'not met' } })
+    expect(body.cells[0]).toMatchObject({ changed: true, after: { sourceName: 'twice the gain', verdict: 'not met' } })
     const { body: reports } = await customer.get<{ revisions: Revision[] }[]>(`/api/systems/${server.seeded.system.id}/reports`)
     expect(reports[0]?.revisions.map(({ label, state }) => `${label} ${state}`)).toEqual(['B issued', 'A superseded'])
   })
