@@ -14,7 +14,7 @@ export default defineConfig({
       { resolve, test: { name: 'integration', globalSetup: ['tests/integration/globalSetup.ts'], include: ['tests/integration/**/*.test.ts'], testTimeout: 60_000 } },
       { resolve, test: { name: 'api', globalSetup: ['tests/api/globalSetup.ts'], include: ['tests/api/**/*.test.ts'], testTimeout: 120_000, hookTimeout: 300_000, fileParallelism: false } },
       { resolve, test: { name: 'e2e', include: ['tests/e2e/**/*.test.ts'], testTimeout: 300_000, hookTimeout: 600_000, fileParallelism: false } },
-      await defineVitestProject({ test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt' } }),
+      await defineVitestProject({ test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt', testTimeout: 30_000, hookTimeout: 60_000 } }),
     ],
   },
 })
