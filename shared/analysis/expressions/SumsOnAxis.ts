@@ -1,11 +1,13 @@
 import type { AxisExtension } from '../search/AxisExtension'
-import type { LogSeries } from '../search/LogSeries'
+import { SERIES_DEGREE, type LogSeries } from '../search/LogSeries'
 import type { EndDemands, SettledEnd } from '../search/settleEnd'
-import type { DelayedSumOnAxis, SumValue } from './DelayedSumOnAxis'
-import { SUM_SERIES_DEGREE } from './DelayedSumOnAxis'
+import type { DelayedSumOnAxis } from './DelayedSumOnAxis'
 import type { FarEnd } from './FarEnd'
+import type { SumValue } from './SumValue'
 
-const N = SUM_SERIES_DEGREE
+const N = SERIES_DEGREE
+/** Boxes times terms times polynomials that one search may take: a few seconds. */
+const EFFORT = 1e7
 const TWO_PI = 2 * Math.PI
 
 /** All sums of different dead times of a loop gain as a part of it on the axis: prod Q_i^power_i. */
@@ -13,6 +15,7 @@ export class SumsOnAxis implements AxisExtension {
   readonly steady = new Float64Array(4)
   readonly originLog: number
   readonly originHalfTurns: number
+  readonly maxBoxes: number
   private readonly value: SumValue = { logGain: 0, phase: 0, slopeRe: 0, slopeIm: 0, bendRe: 0, bendIm: 0 }
   private lastHalf = Infinity
   private lastTail = 0
@@ -26,6 +29,7 @@ export class SumsOnAxis implements AxisExtension {
       if (negative && sum.power % 2 !== 0) turns++
     }
     this.originLog = log
+    this.maxBoxes = Math.max(2000, Math.round(EFFORT / sums.reduce((total, sum) => total + sum.size, 10)))
     this.originHalfTurns = turns % 2
   }
 

@@ -24,6 +24,8 @@ export interface AxisExtension {
   settleInfinity: (demands: EndDemands) => SettledEnd
   /** Relative rounding of its value at v. */
   roundingAt: (v: number) => number
+  /** Boxes that a search of it may take before it stops: fewer the more each costs. */
+  readonly maxBoxes: number
   /** Why the number of unstable poles is not known; undefined where it is. */
   readonly openReason: string | undefined
 }

@@ -81,6 +81,7 @@ export class AxisSearch {
     let phaseDone = task.phase ? from : to
     let distanceDone = task.distance ? from : to
     let inverseDone = task.inverseDistance ? from : to
+    const maxEffort = Math.min(task.maxEffort, this.axis.extension?.maxBoxes ?? Number.POSITIVE_INFINITY)
     for (;;) {
       const left = Math.min(gainDone, phaseDone, distanceDone, inverseDone)
       if (left >= to) return
@@ -88,7 +89,7 @@ export class AxisSearch {
       const counting = this.phase.v.length > task.maxFinds && this.distance.v.length > task.maxFinds
       let half = this.boxHalf(left, !counting)
       for (let shrinks = 0; ; shrinks++) {
-        if (++this.boxes + this.phase.v.length + this.distance.v.length > task.maxEffort) {
+        if (++this.boxes + this.phase.v.length + this.distance.v.length > maxEffort) {
           this.stoppedAt = Math.min(this.stoppedAt, left)
           return
         }
