@@ -2,8 +2,10 @@ import { fileURLToPath } from 'node:url'
 import { availableParallelism } from 'node:os'
 import { isMainThread } from 'node:worker_threads'
 import { Piscina } from 'piscina'
+import { analyseFactored } from '#shared/analysis/analyseFactored'
 import { analyseLoop } from '#shared/analysis/analyseLoop'
 import { factorsFromCoefficients } from '#shared/analysis/factors/factorsFromCoefficients'
+import { factorsOfInput } from '#shared/analysis/factorsOfInput'
 import { prepareLoopGain } from '#shared/analysis/prepareLoopGain'
 import { readLoopInput } from '#shared/analysis/readLoopInput'
 import type { ExpressionInput, LoopAnalysis, LoopInput, ZerosPolesInput } from '#shared/types/analysis'
@@ -121,20 +123,15 @@ function preview(): void {
 }
 
 function growth(): void {
-  // 10,000 crossings of a kind are listed at most: the greater numbers are reached by bands that follow each other
-  const loop: ZerosPolesInput = { zeros: [], poles: [[-1, 0]], gain: 2, deadTime: 400, gainFloor: -100 }
-  const at = (crossings: number) => Math.PI * (2 * crossings + 0.3) / 400
-  console.log('  growth with the number of phase crossovers, 2 exp(-400 s)/(s + 1), in bands of up to 10,000:')
-  analyseLoop({ ...loop, band: [at(1), at(2000)] })
+  console.log('  growth with the number of phase crossovers, 2 exp(-s T)/(s + 1) with T set for their number; the limit of the lists lifted for this:')
+  const crossingsAt = (gainFloor: number) => (2 * 10 ** (-gainFloor / 20)) / (2 * Math.PI)
   for (const total of [100, 1000, 10_000, 100_000]) {
-    const step = Math.min(total, 9_990)
+    const input: ZerosPolesInput = { zeros: [], poles: [[-1, 0]], gain: 2, deadTime: total / crossingsAt(-60), gainFloor: -60 }
+    const factors = factorsOfInput(input)
     let found = 0
     const time = leastMilliseconds(() => {
-      found = 0
-      for (let from = 10; from < total + 10; from += step) {
-        found += analyseLoop({ ...loop, band: [at(from), at(Math.min(total + 10, from + step))] }).phaseCrossovers.length
-      }
-    }, total > 50_000 ? 1 : 3)
+      found = analyseFactored(factors, input, { maxListed: 1_000_000, maxEffort: 100_000_000 }).phaseCrossovers.length
+    }, total > 50_000 ? 2 : 5)
     console.log(`    ${found} crossovers: ${time.toPrecision(3)} ms, ${(time * 1000 / found).toPrecision(3)} microseconds each`)
   }
 }

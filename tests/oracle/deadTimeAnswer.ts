@@ -1,4 +1,5 @@
 import { angleOnAxis, axisFactors, endLogGain, logGainOnAxis, overReciprocal } from './axisFactors'
+import { addDelayToCount } from './closedLoopCountWithDelay'
 import { dyadicOf, dyadicToNumber, shifted } from './dyadic'
 import { exactAnswer, withoutAxisRoots, wrapDegrees, type ExactAnswer, type ExactPhaseCrossover } from './exactAnswer'
 import { exactLoop, squaredMagnitude, type OracleRoots } from './ExactLoop'
@@ -30,8 +31,7 @@ export type DeadTimeAnswer = Omit<ExactAnswer, 'complementarySensitivityPeak' | 
  * Gain crossovers: exact, as without dead time. Phase crossovers: the stretches on which the total angle is monotone end at roots of an integer
  * polynomial (slope of the rational angle minus the dead time), isolated exactly; on each the odd multiples of 180 degrees between the angles at
  * its ends are counted, the angles being sums of arctangents in doubles with a guard of 1e-9 rad. Minima: `minimaOnAxis`.
- * Closed-loop count: from the count without dead time, roots crossing the axis at each gain crossover as the dead time grows (K. Walton and
- * J. E. Marshall, Direct method for TDS stability analysis, IEE Proceedings D 134, 1987).
+ * Closed-loop count: `addDelayToCount`.
  *
  * Assumes: strictly proper, or biproper with an end gain under the floor.
  */
@@ -141,13 +141,7 @@ export function deadTimeAnswer(input: OracleRoots, gainFloor = -60): DeadTimeAns
     const sum = exactLoop({ ...input, deadTime: 0, poles: [...input.poles, ...zeros] })
     closedLoopUnstablePoles = wholeSamples ? rightHalfPlaneCount(add(sum.numerator, sum.denominator)) : null
   }
-  else if (closedLoopUnstablePoles !== null) {
-    for (const crossing of rational.gainCrossovers) {
-      const margin = (crossing.phaseMargin < 0 ? crossing.phaseMargin + 360 : crossing.phaseMargin) / DEGREES
-      const turns = (crossing.frequency * deadTime - margin) / (2 * Math.PI)
-      if (turns > 0) closedLoopUnstablePoles += (crossing.slope === 'falling' ? 2 : -2) * (Math.floor(turns) + 1)
-    }
-  }
+  else closedLoopUnstablePoles = addDelayToCount(rational, deadTime)
   if (wholeSamples && endAbove) {
     const turns = Math.round(angleOnAxis(factors, Number.POSITIVE_INFINITY) / (Math.PI / 2)) / 2
     const before = angleOnAxis(factors, 1e9) / Math.PI
