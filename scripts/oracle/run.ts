@@ -4,18 +4,28 @@ import { isMainThread, parentPort, Worker, workerData } from 'node:worker_thread
 import { analyseLoop } from '#shared/analysis/analyseLoop'
 import { readLoopInput } from '#shared/analysis/readLoopInput'
 import { compareWithOracle } from '../../tests/oracle/compareWithOracle'
+import { compareWithTree } from '../../tests/oracle/compareWithTree'
 import { generateLoop, LOOP_FAMILIES, type LoopFamily } from '../../tests/oracle/generateLoop'
+import { generateTree, TREE_FAMILIES, type TreeFamily } from '../../tests/oracle/generateTree'
 
-interface Share { family: LoopFamily, from: number, to: number, step: number, orders: [number, number] }
+type Family = LoopFamily | TreeFamily
+
+interface Share { family: Family, from: number, to: number, step: number, orders: [number, number] }
 interface Row { seed: number, differences: string[], exceptions: string[], setAside: string[], fault?: string }
+
+const analyse = (input: unknown) => analyseLoop(readLoopInput(input))
+const isTree = (family: Family): family is TreeFamily => (TREE_FAMILIES as readonly string[]).includes(family)
+
+function compareOne(family: Family, seed: number, orders: [number, number]) {
+  return isTree(family) ? compareWithTree(generateTree(family, seed), analyse) : compareWithOracle(generateLoop(family, seed, orders), analyse)
+}
 
 /** Compares one share of a family's loops; every row that is not plain agreement is told. */
 function compareShare({ family, from, to, step, orders }: Share): Row[] {
   const rows: Row[] = []
   for (let seed = from; seed < to; seed += step) {
-    const loop = generateLoop(family, seed, orders)
     try {
-      rows.push({ seed, ...compareWithOracle(loop, input => analyseLoop(readLoopInput(input))) })
+      rows.push({ seed, ...compareOne(family, seed, orders) })
     }
     catch (error) {
       rows.push({ seed, differences: [], exceptions: [], setAside: [], fault: error instanceof Error ? (error.stack ?? error.message).split('\n').slice(0, 3).join(' ') : String(error) })
@@ -34,8 +44,9 @@ async function main(): Promise<void> {
       show: { type: 'string', default: '5' },
     },
   })
-  const families = LOOP_FAMILIES.filter(f => values.family === undefined || f === values.family)
-  if (families.length === 0) throw new Error(`no family '${values.family}'; there are: ${LOOP_FAMILIES.join(', ')}`)
+  const all: Family[] = [...LOOP_FAMILIES, ...TREE_FAMILIES]
+  const families = all.filter(f => values.family === undefined || f === values.family)
+  if (families.length === 0) throw new Error(`no family '${values.family}'; there are: ${all.join(', ')}`)
   const orders = values.orders.split('-').map(Number) as [number, number]
   const start = Number(values.start)
   const each = Math.ceil(Number(values.count) / families.length)
