@@ -92,6 +92,8 @@ export class PositiveRoot {
     if (this.low === this.high) return integerPolynomial.signAt(q, this.low, this.exponent)
     for (let bits = 80; bits <= 640; bits *= 2) {
       this.refine(bits)
+      // narrowing may have met the root itself
+      if (this.low === this.high) return integerPolynomial.signAt(q, this.low, this.exponent)
       const sign = this.signOverInterval(q)
       if (sign !== 0) return sign
     }
@@ -99,6 +101,7 @@ export class PositiveRoot {
     if (common.length > 1 && this.changesSign(common)) return 0
     for (let bits = 1280; ; bits *= 2) {
       this.refine(bits)
+      if (this.low === this.high) return integerPolynomial.signAt(q, this.low, this.exponent)
       const sign = this.signOverInterval(q)
       if (sign !== 0) return sign
     }

@@ -47,6 +47,7 @@ const DEGREES = 180 / Math.PI
 const DECIBELS = 20 / Math.LN10
 /** Bits to which the exact values are taken at a root: far beyond what a damping of 1e-6 costs. */
 const BITS = 120
+const MEETS = 'L meets -1'
 /** An end gain this near to 1 (nepers) is a tie to within rounding of the factors. */
 const ROUNDING = 1e-14
 /** Change of ln L (nepers, rad) that the rounding of the input's own doubles may stand for. */
@@ -202,6 +203,11 @@ export function exactAnswer(input: OracleRoots | OracleCoefficients, gainFloor =
   const bend = derivative(slopeOfDistance)
   const minima = isolatePositiveRoots(bottom.common.length > 1 ? exactQuotient(slopeOfDistance, bottom.common) : slopeOfDistance)
     .filter(root => root.signOf(bottom.common) !== 0 && passage(root, slopeOfDistance, 'the slope of |1 + L|') > 0)
+    .filter((root) => {
+      const clear = root.signOf(distanceSquared) !== 0
+      if (!clear) ties.push(MEETS)
+      return clear
+    })
     .map((root) => {
       const x = root.approximation(BITS)
       const values = valuesAt(root)
@@ -220,7 +226,7 @@ export function exactAnswer(input: OracleRoots | OracleCoefficients, gainFloor =
   for (const { distance, frequency } of minima) consider(distance, frequency)
   if (startValue) consider(distanceOf(startValue), 0)
   if (endValue) consider(distanceOf(endValue), endFrequency)
-  if (vectorMargin.distance === 0) ties.push('L meets -1')
+  if (vectorMargin.distance === 0 && !ties.includes(MEETS)) ties.push(MEETS)
 
   /** sqrt of the greatest value of p / |N + D|^2 over the axis, ends included. */
   const peakOver = (p: IntegerPolynomial, factor: IntegerPolynomial): number => {
@@ -235,7 +241,7 @@ export function exactAnswer(input: OracleRoots | OracleCoefficients, gainFloor =
     values.push(dyadicRatio(whole(p, distanceSquared.length - 1), whole(distanceSquared, distanceSquared.length - 1)))
     return Math.sqrt(Math.max(...values))
   }
-  const marginal = ties.includes('L meets -1') || distanceSquared[0] === 0n
+  const marginal = ties.includes(MEETS) || distanceSquared[0] === 0n
   const unstable = (p: IntegerPolynomial) => rightHalfPlaneCount(p)
   return {
     gainCrossovers,

@@ -9,6 +9,7 @@ type Pair = [number, number]
 export const LOOP_FAMILIES = [
   'mixed', 'light damping', 'twelve decades', 'near-cancelling pairs', 'tuned hump', 'integrators', 'undamped modes', 'unstable poles',
   'biproper', 'sampled', 'sampled hump', 'coefficients', 'sampled coefficients', 'dead time', 'dead time with light damping', 'sampled dead time',
+  'repeated roots', 'sampled whole numbers',
 ] as const
 export type LoopFamily = typeof LOOP_FAMILIES[number]
 
@@ -83,21 +84,31 @@ function discRoots(d: Draw, count: number, dampings: Pair, outside = 0, lowest =
   })
 }
 
+function times(p: number[], q: number[]): number[] {
+  const product = new Array<number>(p.length + q.length - 1).fill(0)
+  p.forEach((a, i) => q.forEach((b, j) => {
+    product[i + j]! += a * b
+  }))
+  return product
+}
+
 function expand(list: Pair[], gain: number): number[] {
-  let p = [gain]
-  const times = (q: number[]) => {
-    const product = new Array<number>(p.length + q.length - 1).fill(0)
-    p.forEach((a, i) => q.forEach((b, j) => {
-      product[i + j]! += a * b
-    }))
-    p = product
-  }
-  for (const [re, im] of list) {
-    if (im === 0) times([1, -re])
-    else if (im > 0) times([1, -2 * re, re * re + im * im])
+  return list.reduce((p, [re, im]) => im === 0 ? times(p, [1, -re]) : im > 0 ? times(p, [1, -2 * re, re * re + im * im]) : p, [gain])
+}
+
+/** A product of factors with small whole coefficients, drawn and raised to powers: exact in doubles, with repeated roots and roots on the boundary. */
+function wholeNumbers(d: Draw, factors: number[][], degree: number): number[] {
+  let p = [1]
+  while (p.length <= degree) {
+    const factor = factors[d.whole(0, factors.length - 1)]!
+    for (let power = d.whole(1, 3); power > 0 && p.length - 1 + factor.length - 1 <= degree; power -= 1) p = times(p, factor)
+    if (p.length - 1 === degree - 1 && d.chance(0.5)) break
   }
   return p
 }
+
+const CONTINUOUS_FACTORS = [[1, 0], [1, 1], [1, 2], [2, 1], [1, 5], [1, 1, 1], [1, 1, 4], [1, 0, 4], [1, 0, 9], [8, 1, 32], [1, -1], [1, -1, 3]]
+const SAMPLED_FACTORS = [[1, -1], [1, 0], [2, -1], [4, -3], [4, 3], [1, 1], [2, -2, 1], [4, -4, 3], [1, -1, 1], [1, 0, 1], [2, -3], [16, -31, 16]]
 
 /** The seed-th loop of a family: the same on every machine up to the last bit of the runtime's exp, log and trigonometric functions. */
 export function generateLoop(family: LoopFamily, seed: number, orders: Pair = [2, 9]): GeneratedLoop {
@@ -167,6 +178,17 @@ export function generateLoop(family: LoopFamily, seed: number, orders: Pair = [2
         const zeros = discRoots(d, d.whole(0, poles.length), [1e-2, 1], 0.2, 0.1)
         const loop = withUnitGainAt(make(poles, zeros, { sampleTime: 1 }), Math.tan(d.logBetween(1e-2, 3) / 2))
         return { numerator: expand(zeros, loop.gain), denominator: expand(poles, 1), sampleTime: d.logBetween(1e-4, 10) }
+      }
+      case 'repeated roots':
+      case 'sampled whole numbers': {
+        const sampledLoop = family === 'sampled whole numbers'
+        const factors = sampledLoop ? SAMPLED_FACTORS : CONTINUOUS_FACTORS
+        const denominator = wholeNumbers(d, factors, Math.min(order, 8))
+        // zeros away from the boundary: an undamped pole and zero at the same place is another matter
+        const zeros = factors.filter((_, i) => sampledLoop ? i > 0 && i < 8 && i !== 5 : i > 0 && i < 7)
+        const numerator = wholeNumbers(d, zeros, d.whole(0, denominator.length - 2))
+        const gain = Math.round(d.logBetween(1, 1000)) / 64 * sign()
+        return { numerator: numerator.map(c => c * gain), denominator, ...sampledLoop ? { sampleTime: 0.5 } : {} }
       }
       case 'dead time':
       case 'dead time with light damping': {
