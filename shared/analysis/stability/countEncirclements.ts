@@ -62,7 +62,8 @@ export function countEncirclements(result: SearchResult): EncirclementCount {
       return { encirclements: null, reason: 'a pole at z = -1 together with a dead time that is no whole number of samples has no closed locus to count' }
     }
     const start = infinity.quarterTurns * 0.5 * HALF_TURN
-    const swept = sweptHalfTurns(start, start - axis.degree * HALF_TURN, infinity.phaseOffset)
+    // here the arc starts beside the exact angle, where the one at zero frequency ends beside it
+    const swept = sweptHalfTurns(start, start - axis.degree * HALF_TURN, -infinity.phaseOffset)
     if (swept === null) return unknownArc('half the sampling frequency')
     count -= swept
   }
