@@ -11,6 +11,8 @@ export const LOOP_FAMILIES = [
   'biproper', 'sampled', 'sampled hump', 'coefficients', 'sampled coefficients', 'dead time', 'dead time with light damping', 'sampled dead time',
   'repeated roots', 'sampled whole numbers',
 ] as const
+/** Families of exact whole numbers: ties of structure (a phase that leaves an end with no linear term, say) are common in them. */
+export const FAMILIES_WITH_TIES: readonly LoopFamily[] = ['repeated roots', 'sampled whole numbers']
 export type LoopFamily = typeof LOOP_FAMILIES[number]
 
 export interface GeneratedLoop {

@@ -1,6 +1,7 @@
 import { onAxis } from './ExactLoop'
 import { integerPolynomial, type IntegerPolynomial } from './integerPolynomial'
 import { isolatePositiveRoots } from './isolatePositiveRoots'
+import type { PositiveRoot } from './PositiveRoot'
 
 const sign = (c: bigint) => c > 0n ? 1 : c < 0n ? -1 : 0
 
@@ -17,10 +18,16 @@ export function rightHalfPlaneCount(polynomial: IntegerPolynomial): number | nul
   if (degree <= 0) return 0
   const { even, odd } = onAxis(p)
   if (even.length === 0 || odd.length === 0 || integerPolynomial.gcd(even, odd).length > 1) return null
-  const slope = integerPolynomial.derivative(odd)
+  const slopes = [integerPolynomial.derivative(odd)]
+  while (slopes.at(-1)!.length > 1) slopes.push(integerPolynomial.derivative(slopes.at(-1)!))
+  /** Sense in which the odd part passes zero: by its first derivative that is not zero there, 0 where it only touches. */
+  const passage = (root: PositiveRoot) => {
+    const order = slopes.findIndex(p => root.signOf(p) !== 0)
+    return order % 2 === 0 ? root.signOf(slopes[order]!) : 0
+  }
   // +1 where the image passes the real axis counter-clockwise; each passage stands for 90 degrees before and after it
   let quarters = sign(even[0]!) * sign(odd.find(c => c !== 0n)!)
-  for (const root of isolatePositiveRoots(odd)) quarters += 2 * root.signOf(even) * root.signOf(slope)
+  for (const root of isolatePositiveRoots(odd)) quarters += 2 * root.signOf(even) * passage(root)
   if (degree % 2 === 0) quarters -= sign(even[even.length - 1]!) * sign(odd[odd.length - 1]!)
   return (degree - quarters) / 2
 }

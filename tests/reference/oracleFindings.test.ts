@@ -11,6 +11,8 @@ const FOUND: [string, LoopFamily, number, [number, number]][] = [
   ['the same, of order 21', 'undamped modes', 6, [10, 24]],
   ['the peak of |T| below the first box, beside an integrator, was missed', 'integrators', 1159, [2, 9]],
   ['a disk margin of 5e-9 lost all its digits', 'twelve decades', 18, [2, 9]],
+  ['the arc about a double pole at z = -1 was swept on the wrong side: stable was said of an unstable loop', 'sampled whole numbers', 166, [2, 9]],
+  ['the same, with the roots of the closed loop to contradict it', 'sampled whole numbers', 50, [2, 9]],
 ]
 
 describe('what the oracle has found stays mended', () => {
