@@ -5,7 +5,7 @@ import { root } from './paths.mjs'
 import { requireStep } from './runStep.mjs'
 
 /** What the built application is made from. */
-const sources = ['app', 'server', 'shared', 'templates', 'public', 'modules', 'nuxt.config.ts', 'tailwind.config.ts', 'package-lock.json']
+const sources = ['app', 'server', 'shared', 'templates', 'public', 'modules', 'scripts/workers', 'nuxt.config.ts', 'tailwind.config.ts', 'package-lock.json']
 
 /** Builds the application unless `.output` was built from just these sources. Returns the path of the server's entry. */
 export async function ensureBuild() {
