@@ -1,13 +1,11 @@
 import { rm } from 'node:fs/promises'
-import { mkdtempSync } from 'node:fs'
-import { tmpdir } from 'node:os'
-import { join } from 'node:path'
 import PQueue from 'p-queue'
 import puppeteer from 'puppeteer-core'
 import type { Browser, Page } from 'puppeteer-core'
 import { AppError } from '#shared/errors/AppError'
 import type { PdfPrinter, PrintRequest } from './PdfPrinter'
 import { findChromium } from './findChromium'
+import { createProfile, removeStaleProfiles } from './printProfile'
 import { serveOnce } from './serveOnce'
 import { settlePdf } from './settlePdf'
 
@@ -83,9 +81,11 @@ export function createChromiumPrinter(options: ChromiumOptions = {}): PdfPrinter
     if (running) return running
     const executablePath = options.executablePath === undefined ? findChromium() : options.executablePath
     if (!executablePath) throw new AppError('unavailable', missing)
-    const profile = mkdtempSync(join(tmpdir(), 'wideberth-print-'))
+    await removeStaleProfiles()
+    const profile = createProfile()
     try {
-      const browser = await puppeteer.launch({ executablePath, headless: true, args: flags(), userDataDir: profile, handleSIGINT: false, handleSIGTERM: false, handleSIGHUP: false })
+      // Over a pipe, Chromium ends with this process, however that ends.
+      const browser = await puppeteer.launch({ executablePath, headless: true, pipe: true, args: flags(), userDataDir: profile, handleSIGINT: false, handleSIGTERM: false, handleSIGHUP: false })
       running = { browser, profile, printed: 0 }
       return running
     }
