@@ -1,4 +1,5 @@
 import type { ReportSnapshot } from '#shared/types/snapshot'
+import { limitWords, quantityNames } from './criteriaWords'
 import type { SectionView, TableView } from './ReportView'
 import { tableOf } from './tableOf'
 
@@ -47,16 +48,22 @@ function parameterTables({ parameters, conditions }: ReportSnapshot): TableView[
 
 const valueText = (value: number | undefined) => (value === undefined ? '' : String(Number(value.toPrecision(8))))
 
-/** The operating conditions and the values the models took in each. */
+const criteriaTable = ({ criteria }: ReportSnapshot): TableView => tableOf({
+  caption: 'Criteria',
+  columns: [{ head: 'quantity' }, { head: 'limit' }],
+  rows: criteria.map(({ quantity, limit }) => ({ cells: [{ text: quantityNames[quantity], isHead: true }, { text: limitWords(quantity, limit) }] })),
+  notes: ['Limits agreed for this system. A margin is met when it is not smaller than its limit, in each direction.'],
+  kind: 'criteria',
+})
+
+/** What the loops were judged against, the operating conditions, and the values the models took in each. */
 export function conditionsSection(snapshot: ReportSnapshot, number: string): SectionView {
   return {
     number,
     anchor: 'conditions',
-    title: 'Operating conditions and parameters',
+    title: 'Criteria, operating conditions and parameters',
     introduction: [],
-    blocks: [
-      { title: 'Operating conditions', paragraphs: [], items: [], table: conditionsTable(snapshot) },
-      ...(snapshot.parameters.length === 0 ? [] : parameterTables(snapshot).map((table, index) => ({ title: index === 0 ? 'Parameters' : '', paragraphs: [], items: [], table }))),
-    ],
+    blocks: [criteriaTable(snapshot), conditionsTable(snapshot), ...(snapshot.parameters.length === 0 ? [] : parameterTables(snapshot))]
+      .map(table => ({ title: '', paragraphs: [], items: [], table })),
   }
 }

@@ -1,7 +1,5 @@
 import type { ReportSnapshot } from '#shared/types/snapshot'
 import type { SectionView } from './ReportView'
-import { tableOf } from './tableOf'
-import { limitWords, quantityNames } from './criteriaWords'
 
 const signs = [
   { term: 'Loop gain L', words: 'the gain once around the loop opened at its break point, for negative feedback: the critical point is \u22121 and the return difference is 1 + L.' },
@@ -21,7 +19,7 @@ const method = [
   { term: 'Further reading', words: 'Bode, Network Analysis and Feedback Amplifier Design, 1945 (return difference, gain and phase margin); \u00c5str\u00f6m and Murray, Feedback Systems, 2008 (the least distance to the critical point as a margin).' },
 ]
 
-/** How to read the numbers, how they were found, and against which criteria they were judged. */
+/** How to read the numbers, and how they were found. */
 export function conventionsSection(snapshot: ReportSnapshot, number: string): SectionView {
   return {
     number,
@@ -31,18 +29,6 @@ export function conventionsSection(snapshot: ReportSnapshot, number: string): Se
     blocks: [
       { title: 'Words and signs', paragraphs: [], items: signs, table: null },
       { title: 'How the crossings are found', paragraphs: [`Engine ${snapshot.engineVersion}.`], items: method, table: null },
-      {
-        title: 'Criteria',
-        paragraphs: ['Agreed limits of this system. A margin is met when it is not smaller than its limit, in each direction.'],
-        items: [],
-        table: tableOf({
-          caption: 'Criteria',
-          columns: [{ head: 'quantity' }, { head: 'limit' }],
-          rows: snapshot.criteria.map(({ quantity, limit }) => ({ cells: [{ text: quantityNames[quantity], isHead: true }, { text: limitWords(quantity, limit) }] })),
-          notes: [],
-          kind: 'criteria',
-        }),
-      },
     ],
   }
 }

@@ -67,7 +67,7 @@ describe('the PDF of a draft', () => {
 
   it('says \u2018unstable\u2019 of the unstable loop and prints no margin for it', () => {
     const text = run('pdftotext', '-layout', 'report.pdf', '-')
-    const chapter = text.slice(text.lastIndexOf('C2 Extended'), text.indexOf('Operating conditions and parameters', text.lastIndexOf('C2 Extended')))
+    const chapter = text.slice(text.lastIndexOf('C2 Extended'), text.indexOf('Criteria, operating conditions', text.lastIndexOf('C2 Extended')))
     expect(chapter).toContain('Closed loop unstable')
     expect(chapter).not.toContain('gain may rise')
   })
