@@ -10,7 +10,8 @@ const time = new Date('2026-03-02T10:20:30Z')
 /** Long enough to be caught while it is printed. */
 const longDocument = `<!DOCTYPE html><title>Long</title>${'<p>All margins of every loop in every condition.</p>'.repeat(4000)}`
 const shortDocument = '<!DOCTYPE html><title>Short</title><p>text</p>'
-const profiles = () => readdirSync(tmpdir()).filter(name => name.startsWith('wideberth-print-'))
+/** Those of this process only: other test files print at the same time. */
+const profiles = () => readdirSync(tmpdir()).filter(name => name.startsWith(`wideberth-print-${process.pid}-`))
 
 /** Process ids of the browsers whose profile this test's printer made. */
 function browsersOf(names: readonly string[]): number[] {
