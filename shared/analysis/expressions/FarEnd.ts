@@ -7,8 +7,8 @@ const MAX_STEPS = 400
 /** Turns of the longest dead time that are still searched where the end itself is open. */
 const TURNS = 200
 
-/** |roots| of a product, each as often as it counts. */
-interface Sizes { logGain: number, roots: number[] }
+/** |roots| of a product, each as often as it counts; the sum of their real parts, sign and dead time of the product. */
+interface Sizes { logGain: number, roots: number[], sum: number, negative: boolean, deadTime: number }
 
 /** A sum as its term of highest degree times 1 + e, |e| at most the sum of the others over it. */
 interface Dominated { power: number, others: { logRatio: number, up: number[], down: number[] }[] }
@@ -23,18 +23,29 @@ export class FarEnd {
   private readonly logGain: number
   private readonly sums: Dominated[]
   private readonly largest: number
+  /** Of the dominating product: sum of the real parts of its zeros less those of its poles, whether it is negative, its dead time. */
+  private sum = 0
+  private negative: boolean
+  private deadTime: number
 
   /** `rational` is the part of L without its sums, on the axis. */
   constructor(rational: AxisLoop, loop: GeneralLoop, private readonly degree: number, private readonly longestDelay: number) {
     let logGain = Math.log(Math.abs(rational.gain))
+    this.negative = rational.gain < 0
+    this.deadTime = rational.deadTime
     for (let k = 0; k < rational.count; k++) {
-      (rational.weight[k]! > 0 ? this.ups : this.downs).push(Math.hypot(rational.re[k]!, rational.im[k]!))
+      this.sum += rational.weight[k]! * rational.re[k]!
+      const sizes = rational.weight[k]! > 0 ? this.ups : this.downs
+      sizes.push(Math.hypot(rational.re[k]!, rational.im[k]!))
     }
     for (let k = 0; k < Math.abs(rational.originWeight); k++) (rational.originWeight > 0 ? this.ups : this.downs).push(0)
     this.sums = loop.sums.map((sum) => {
       const sizes = sum.terms.map(term => sizesOf(loop, term))
       const main = mainTerm(sum, sizes)
       logGain += sum.power * main.logGain
+      this.sum += sum.power * main.sum
+      this.deadTime += sum.power * main.deadTime
+      if (main.negative && sum.power % 2 !== 0) this.negative = !this.negative
       for (let repeat = 0; repeat < Math.abs(sum.power); repeat++) (sum.power > 0 ? this.ups : this.downs).push(...main.roots)
       return {
         power: sum.power,
@@ -63,6 +74,36 @@ export class FarEnd {
     }
   }
 
+  /**
+   * True when |1 + L| >= 1 from v on, as it is towards infinity for many a loop whose dominating product has no dead time: with x = 1/v its angle is
+   * a whole number of quarter turns and d, |d - x sum Re r| <= sum (|r| x)^2/(2 - 2|r| x) + the others' e. Then Re L >= -|L|^2/2 is shown
+   * with quantities over x that only get better as x falls.
+   */
+  staysClear(v: number): boolean {
+    if (this.deadTime > 0 || this.degree >= 0 || !(v > 2 * this.largest)) return false
+    const x = 1 / v
+    let angle = 0
+    let logLeast = this.logGain
+    for (const size of [...this.ups, ...this.downs]) angle += (size * x) ** 2 / (2 - 2 * size * x)
+    for (const size of this.ups) logLeast += Math.log(v - size)
+    for (const size of this.downs) logLeast -= Math.log(v + size)
+    for (const { power, others } of this.sums) {
+      const e = largestRatio(others, v)
+      if (!(e < 0.5) || others.some(({ up, down }) => up.length >= down.length)) return false
+      angle += Math.abs(power) * Math.asin(e)
+      logLeast += power > 0 ? power * Math.log1p(-e) : power * Math.log1p(e)
+    }
+    const total = Math.abs(this.sum) * x + angle
+    if (!(total < 0.5)) return false
+    const quarter = (((this.negative ? 2 : 0) + this.degree) % 4 + 4) % 4
+    if (quarter === 0) return true
+    if (quarter === 2) return false
+    const side = quarter === 3 ? 1 : -1
+    // |L|/x tends to a constant from below for one pole in excess, to zero for more
+    const size = this.degree === -1 ? Math.exp(logLeast) / x : 0
+    return 2 * (side * this.sum - angle / x - total ** 3 / 6 / x) + size > 0
+  }
+
   private describe(edge: number, bound: number): SettledEnd {
     return {
       edge, logGain: -Infinity, quarterTurns: Number.NaN, value: 0, re: 0, im: 0, phaseOffset: 0, unity: false, flat: [], skippedBelow: bound,
@@ -75,13 +116,7 @@ export class FarEnd {
     for (const size of this.ups) log += Math.log(v + size)
     for (const size of this.downs) log -= Math.log(v - size)
     for (const { power, others } of this.sums) {
-      let e = 0
-      for (const { logRatio, up, down } of others) {
-        let ratio = logRatio
-        for (const size of up) ratio += Math.log(v + size)
-        for (const size of down) ratio -= Math.log(v - size)
-        e += Math.exp(ratio)
-      }
+      const e = largestRatio(others, v)
       if (power > 0) log += power * Math.log1p(e)
       else log += e < 1 ? power * Math.log1p(-e) : Infinity
     }
@@ -89,15 +124,31 @@ export class FarEnd {
   }
 }
 
+/** Greatest sum of |P_t/P_0| from v to infinity. */
+function largestRatio(others: Dominated['others'], v: number): number {
+  let sum = 0
+  for (const { logRatio, up, down } of others) {
+    let ratio = logRatio
+    for (const size of up) ratio += Math.log(v + size)
+    for (const size of down) ratio -= Math.log(v - size)
+    sum += Math.exp(ratio)
+  }
+  return sum
+}
+
 function sizesOf(loop: GeneralLoop, term: GeneralTerm): Sizes {
   const roots: number[] = []
+  let sum = 0
   for (const { polynomial, power } of term.factors) {
     const list = loop.polynomials[polynomial]!
     for (let repeat = 0; repeat < power; repeat++) {
-      for (let k = 0; k < list.re.length; k++) roots.push(Math.hypot(list.re[k]!, list.im[k]!))
+      for (let k = 0; k < list.re.length; k++) {
+        roots.push(Math.hypot(list.re[k]!, list.im[k]!))
+        sum += list.re[k]!
+      }
     }
   }
-  return { logGain: Math.log(Math.abs(term.gain)), roots }
+  return { logGain: Math.log(Math.abs(term.gain)), roots, sum, negative: term.gain < 0, deadTime: term.deadTime }
 }
 
 /** The undelayed term of a sum that is divided by (its degree is highest), else the term of highest degree and gain. */

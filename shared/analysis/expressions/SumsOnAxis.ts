@@ -108,6 +108,10 @@ export class SumsOnAxis implements AxisExtension {
     return this.farEnd.settle(demands)
   }
 
+  staysClear(v: number): boolean {
+    return this.farEnd.staysClear(v)
+  }
+
   roundingAt(v: number): number {
     let rounding = 0
     for (const sum of this.sums) {

@@ -63,8 +63,8 @@ function addTerms(a: DelayedPolynomial, b: DelayedPolynomial): DelayedPolynomial
 }
 
 function expand(factors: FactorMap): bigint[] {
-  if (FactorProduct.degree(factors) > expressionLimits.degree) {
-    throw new RangeError(`a polynomial of degree above ${expressionLimits.degree} would have to be multiplied out`)
+  if (FactorProduct.degree(factors) > expressionLimits.expandedDegree) {
+    throw new RangeError(`a polynomial of degree above ${expressionLimits.expandedDegree} would have to be multiplied out`)
   }
   return FactorProduct.expanded(factors)
 }

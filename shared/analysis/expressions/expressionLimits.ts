@@ -6,8 +6,10 @@ export const expressionLimits = {
   /** brackets inside brackets, powers of powers, signs before signs */
   depth: 60,
   exponent: 50,
-  /** degree of a polynomial that has to be multiplied out, and order of the loop */
+  /** order of the loop */
   degree: 200,
+  /** degree of a polynomial that has to be multiplied out, and its roots found again */
+  expandedDegree: 120,
   /** bits of an exact coefficient */
   bits: 40_000,
   /** different dead times in one sum */

@@ -8,7 +8,7 @@ const U = 2 ** -53
 /** |L| below which |1 + L| is 1 for the accuracy told. */
 const NEGLIGIBLE = Math.log(1e-11)
 /** Boxes that a loop with several dead times may take under the floor: they grow with frequency, not with its logarithm. */
-const EXTENSION_EFFORT = 20_000
+const EXTENSION_EFFORT = 6_000
 const MAX_EXTENSIONS = 60
 /** Distances that differ by less than this part are the same to within rounding. */
 const EQUAL = 2e-15
@@ -127,7 +127,10 @@ function searchBelowFloor(result: SearchResult, from: number, to: number, best: 
   const turning = axis.deadTime > 0 && axis.degree === 0 && !endless
   if ((infinity.skippedBelow < Number.POSITIVE_INFINITY || turning) && to > infinity.edge) {
     let edge = infinity.edge
-    for (let i = 0; i < (turning ? 8 : MAX_EXTENSIONS) && edge < to && !told && gainAt(edge) > threshold(); i++, edge *= GROWTH) look(edge, edge * GROWTH)
+    for (let i = 0; i < (turning ? 8 : MAX_EXTENSIONS) && edge < to && !told && gainAt(edge) > threshold(); i++, edge *= GROWTH) {
+      if (best.distance <= 1 && axis.extension?.staysClear(edge)) break
+      look(edge, edge * GROWTH)
+    }
   }
 }
 

@@ -22,6 +22,8 @@ export interface AxisExtension {
   boxHalf: (left: number) => number
   /** What can be shown of the far end of the axis. */
   settleInfinity: (demands: EndDemands) => SettledEnd
+  /** True when |1 + L| is shown to be at least 1 from v to infinity. */
+  staysClear: (v: number) => boolean
   /** Relative rounding of its value at v. */
   roundingAt: (v: number) => number
   /** Boxes that a search of it may take before it stops: fewer the more each costs. */

@@ -1,5 +1,6 @@
 import { aberthRoots } from './aberthRoots'
 import type { ExactPolynomial } from './ExactPolynomial'
+import { preciseEvaluation } from './preciseEvaluation'
 import { refineRoots, type RefinedRoots } from './refineRoots'
 import { ScaledPolynomial } from './ScaledPolynomial'
 import { squareFreeFactors } from './squareFreeFactors'
@@ -40,5 +41,12 @@ function simpleRoots(exact: ExactPolynomial): RefinedRoots {
     const size = Math.max(Math.abs(start.re[k] as number), Math.abs(start.im[k] as number))
     if (!(size > 1e-290 && size < 1e290)) throw new RangeError('a root lies outside the range of numbers that can be held')
   }
-  return refineRoots(scaled, start)
+  try {
+    return refineRoots(scaled, start)
+  }
+  catch (error) {
+    if (!(error instanceof RangeError)) throw error
+    // Of high orders doubles may see nothing of the roots: the same iteration with as many bits as the coefficients have, and once more.
+    return refineRoots(scaled, aberthRoots(scaled, preciseEvaluation(exact)))
+  }
 }
