@@ -100,7 +100,13 @@ export class AxisSearch {
         }
         const last = right === to
         const centre = left + half
-        this.log.expand(this.axis, centre, half * (1 + 4e-16))
+        if (!(centre > left && right > centre)) {
+          this.exceptions.push({ from: left, to: right, code: 'too narrow', reason: 'features lie closer together here than doubles can tell apart' })
+          gainDone = phaseDone = distanceDone = inverseDone = Math.max(right, left * (1 + 4 * Number.EPSILON))
+          break
+        }
+        // The differences are exact; the centre's rounding may count against a very short box.
+        this.log.expand(this.axis, centre, Math.max(right - centre, centre - left) * (1 + 4e-16))
         const forced = shrinks >= MAX_SHRINKS
         const greatest = this.log.re[0]! + this.log.spreadRe
         const beyond = left >= task.stopAt || greatest < task.floorLog
@@ -316,13 +322,25 @@ export class AxisSearch {
         y = next
         if (size < 1e-9) break
       }
-      // Within a tenth of a turn of the find, so that the refinement cannot reach the next one.
-      const reach = Math.max(0.3 / Math.abs(im[1]!), 1e-9)
-      const bracketFrom = Math.max(from, this.place(Math.max(yFrom, y - reach)))
-      const bracketTo = Math.min(end, this.place(Math.min(yTo, y + reach)))
+      const bracketFrom = Math.max(from, this.place(this.clearOf(target, y, -1, yFrom)))
+      const bracketTo = Math.min(end, this.place(this.clearOf(target, y, 1, yTo)))
       this.refine(this.phase, 'phase', Math.min(Math.max(this.place(y), bracketFrom), bracketTo), bracketFrom, bracketTo, direction)
     }
     return end
+  }
+
+  /**
+   * The nearest place to one side of a turn of a monotone phase where the phase is clear of it by its bound: a bracket's end. Steps start at a tenth
+   * of a turn at the most and double, so that it stays well short of the next turn.
+   */
+  private clearOf(target: number, y: number, side: 1 | -1, limit: number): number {
+    let step = 0.3 / Math.abs(this.log.im[1]!)
+    for (let i = 0; i < 60; i++, step *= 2) {
+      const place = y + side * step
+      if (side * (limit - place) <= 0) return limit
+      if (Math.abs(this.horner(this.log.im, place) - target) > 2 * this.boundAt(place, this.log.steady)) return place
+    }
+    return limit
   }
 
   /** Minima (and maxima, passed over) of |1 + L| or |1 + 1/L| from `from` to the box's right end. */
@@ -449,8 +467,10 @@ export class AxisSearch {
   /** A touch within bounds that the truncation still widens is worth a smaller box. */
   private tailMatters(kind: FindKind): boolean {
     // The isolator blames the tail from half of its own, larger, rounding on.
-    if (this.log.tail[0]! > 0.25 * this.log.steady[0]!) return true
-    return kind !== 'gain' && kind !== 'phase' && this.stationary.tail[0]! > 0.25 * this.stationary.steady[0]!
+    const { tail, steady, steadyRe } = this.log
+    if (tail[0]! > 0.25 * steady[0]!) return true
+    if (kind === 'gain' || kind === 'phase') return false
+    return tail[1]! > 0.25 * steadyRe[1]! || this.stationary.tail[0]! > 0.25 * this.stationary.steady[0]!
   }
 
   private refine(finds: FindList, kind: FindKind, start: number, from: number, to: number, direction: number): void {

@@ -48,6 +48,8 @@ export class FindRefiner {
       if (target === v || high - low <= 1e-16 * v) return this.settle(v, 0)
       v = target
     }
+    this.measure(kind, 0.5 * (low + high))
+    this.settle(0.5 * (low + high), 0)
     return false
   }
 

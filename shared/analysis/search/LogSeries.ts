@@ -28,7 +28,7 @@ const FEW = [
  * Rounding, u = 2^-53, K factors, P = sum |w| rho/(1-rho), rho <= 1/2: q is right to 8u (two differences, a complex
  * reciprocal), q^n to 11nu, the sum over the factors adds K + 2, so that the value errs by u(K+13)P, and with sum n rho^n <= 2 rho/(1-rho)
  * and its like for the derivatives by u(K+24)P, u(K+46)P, u(2K+140)P. The constant term errs by 5u(K+2) + 2u|ln|L|| and the dead
- * time's 3uvτ, or 13uν. Working on the series later (Taylor shift) errs by (4N+4)u sum |term_n|; it is added here once.
+ * time's 3uvτ, or 13uν; whole turns taken off the phase 2u(K+2). Working on the series later (Taylor shift) errs by (4N+4)u sum |term_n|; it is added here once.
  * Errors of the model (the corrections W of the factors): e(y) = sum W/zeta/(1 + qy) in the worst case, so |log(1 + e)| adds 2 sum W/|zeta|, and
  * its derivatives 4, 8, 24 times sum W rho/|zeta| (geometric series at rho <= 1/2). In z it is W (1 - s)/(s - r) = W ((1 - r)/(s - r) - 1):
  * |1 - s| times as much, |1 - r| times in the derivatives.
@@ -170,7 +170,7 @@ export class LogSeries {
   /**
    * Adds the terms of weight (log(1 + qy) - log(1 + by)) from the difference d = q - b, so that they are right relative to d however near q is to
    * b: D_n = q^n - b^n by D_n = q D_(n-1) + d b^(n-1), with |D_n| <= n |d| rho^(n-1). The tails are sums of that, and so are the roundings:
-   * 12n u of D_n, which 32|d| in P covers up to the third derivative at rho <= 1/2.
+   * 12n u of D_n, which 64|d| in P covers up to the third derivative at rho <= 0.55 (a base at the origin may lie that near).
    */
   private addDifference(weight: number, qRe: number, qIm: number, bRe: number, bIm: number, dRe: number, dIm: number): void {
     const { re, im, sums } = this
@@ -201,7 +201,7 @@ export class LogSeries {
     sums[1] = sums[1]! + last * (N + 1 + rho * g)
     sums[2] = sums[2]! + last * (N * (N + 1) + 2 * (N + 1) * rho * g + 2 * rho2 * g * g)
     sums[3] = sums[3]! + last * ((N + 1) * N * (N - 1) + 3 * (N + 1) * N * rho * g + 6 * (N + 1) * rho2 * g * g + 6 * rho2 * rho * g * g * g)
-    sums[4] = sums[4]! + 32 * size
+    sums[4] = sums[4]! + 64 * size
   }
 
   /** Fills `steady` and the spreads from the sums of the factors. */
@@ -230,7 +230,7 @@ export class LogSeries {
     steadyRe[1] = U * ((k + 24) * absolute) + 4 * small + 4.1 * bend + slack * sums[1]!
     steadyRe[2] = U * ((k + 46) * absolute) + 40 * small + 8.2 * bend + slack * sums[2]!
     steadyRe[3] = U * ((2 * k + 140) * absolute) + 400 * small + 24.6 * bend + slack * sums[3]!
-    steady[0] = steadyRe[0]! + slack * sums[4]! + U * (8 + 3 * reach * axis.deadTime + 13 * axis.delayInSamples)
+    steady[0] = steadyRe[0]! + slack * sums[4]! + U * (8 + 2 * k + 3 * reach * axis.deadTime + 13 * axis.delayInSamples)
     steady[1] = steadyRe[1]! + slack * sums[5]!
     steady[2] = steadyRe[2]! + slack * sums[6]!
     steady[3] = steadyRe[3]! + slack * sums[7]!

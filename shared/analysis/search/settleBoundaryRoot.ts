@@ -73,7 +73,8 @@ export function settleBoundaryRoot(axis: AxisLoop, v: number, weight: number, fl
     result.phaseSlope = Math.abs(log.im[1]!) > bound1 ? Math.sign(log.im[1]!) : 0
     if (weight > 0) {
       result.skippedBelow = greatest
-      result.settled = greatest < Math.min(0, floorLog)
+      // Clear of the floor, so that the box beside the region soon is under it too.
+      result.settled = greatest < Math.min(0, floorLog) - 0.1
       if (result.settled) break
       continue
     }

@@ -149,7 +149,8 @@ function gainFlatness({ log, weight, reach }: EndSeries, demands: EndDemands): n
 
 function belowFloor({ log, weight, reach }: EndSeries, demands: EndDemands): boolean {
   return weight > weightedSum(log.re, 2) + log.steadyRe[1]! + log.tail[1]!
-    && weight * Math.log(reach) + log.re[0]! + log.spreadRe < Math.min(0, demands.floorLog)
+    // Clear of the floor, so that the box beside the edge soon is under it too.
+    && weight * Math.log(reach) + log.re[0]! + log.spreadRe < Math.min(0, demands.floorLog) - 0.1
 }
 
 /** The series of arg L less its end value: odd in x. */
