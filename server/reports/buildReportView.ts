@@ -40,6 +40,7 @@ export function buildReportView(snapshot: ReportSnapshot, edition: EditionFacts,
     String(firstChapter + index),
     (drawn.loops[index]?.governing ?? []).map(numbered),
     (drawn.loops[index]?.others ?? []).map(numbered),
+    drawn.loops[index]?.leftOut ?? 0,
   ))
   const afterChapters = firstChapter + chapters.length
   const sections = [

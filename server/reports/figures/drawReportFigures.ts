@@ -37,6 +37,9 @@ type LoopFigureName = Exclude<FigureName, 'crossingChart'>
 const largeHeights: Record<LoopFigureName, number> = { berthChart: 430, returnDifferenceProfile: 300, magnitudePhase: 430, gainOverPhase: 370 }
 const smallHeight = 232
 
+/** Conditions beside the governing one that are drawn, the worst of them: beyond that a reader looks at the tables. */
+const drawnOthers = 9
+
 /** The caption of a small figure, whose large sister on an earlier page says how to read it. */
 function shortCaption(name: LoopFigureName, { curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
   const nearest = name === 'berthChart' ? ` ${stabilityWords(main.analysis)} ${nearestWords(main.analysis, requiredVectorMargin, frequencyUnit)}` : ''
@@ -97,7 +100,11 @@ export async function drawReportFigures(snapshot: ReportSnapshot, { prepareGain,
     const title = `${loop.code} ${loop.name}`
     const main = governingCell(ofLoop)
     const governing = sources.find(({ conditionIndex }) => conditionIndex === main?.conditionIndex)
-    const figuresOfLoop: DrawnReport['loops'][number] = { governing: [], others: [] }
+    const figuresOfLoop: DrawnReport['loops'][number] = { governing: [], others: [], leftOut: 0 }
+
+    const others = sources.filter(cell => cell !== governing).sort((a, b) => compareStanding(a.cell, b.cell))
+    const isDrawn = new Set(others.slice(0, drawnOthers))
+    figuresOfLoop.leftOut = others.length - isDrawn.size
 
     for (const cell of sources) {
       const isGoverning = cell === governing
@@ -111,7 +118,7 @@ export async function drawReportFigures(snapshot: ReportSnapshot, { prepareGain,
           await breathe()
         }
       }
-      else {
+      else if (isDrawn.has(cell)) {
         for (const name of ['berthChart', 'returnDifferenceProfile'] as const) {
           figuresOfLoop.others.push(draw(name, data, idOf(name), stemOf(cell), { size: 'half', height: smallHeight, caption: shortCaption(name, data) }))
         }

@@ -101,6 +101,8 @@ export interface ChapterView {
   governing: string
   figures: FigureView[]
   otherFigures: FigureView[]
+  /** which conditions are not drawn, in words; empty where all are */
+  notDrawn: string
   conditions: ConditionView[]
 }
 

@@ -43,7 +43,7 @@ export function governingCell(cells: readonly PlacedCell[]): PlacedCell | null {
 }
 
 /** One loop's chapter. `cells` are this loop's, in order of conditions. */
-export function chapterView(snapshot: ReportSnapshot, cells: readonly PlacedCell[], loopIndex: number, number: string, figures: FigureView[], otherFigures: FigureView[]): ChapterView {
+export function chapterView(snapshot: ReportSnapshot, cells: readonly PlacedCell[], loopIndex: number, number: string, figures: FigureView[], otherFigures: FigureView[], leftOut: number): ChapterView {
   const loop = snapshot.loops[loopIndex]
   if (!loop) throw new RangeError(`there is no loop ${loopIndex} in the snapshot`)
   const worst = [...cells].sort((a, b) => compareStanding(a.cell, b.cell))[0]
@@ -68,6 +68,7 @@ export function chapterView(snapshot: ReportSnapshot, cells: readonly PlacedCell
     governing: governing ? `${governing.condition.code} ${governing.condition.name}` : '',
     figures,
     otherFigures,
+    notDrawn: leftOut === 0 ? '' : `The conditions that stand worst are drawn; ${leftOut} more ${leftOut === 1 ? 'is' : 'are'} in the tables alone.`,
     conditions: cells.map(conditionView),
   }
 }

@@ -110,6 +110,21 @@ describe('the package of a draft', () => {
   })
 })
 
+describe('a report of many conditions', () => {
+  it('draws the governing one large and the nine worst of the others, says how many it leaves to the tables, and keeps every one there', async () => {
+    const conditions = Array.from({ length: 14 }, (_, index) => ({ code: `K${index + 1}`, name: `Condition ${index + 1}`, coordinates: [], tags: [], notes: '' }))
+    const loops = snapshot.loops.slice(0, 1)
+    const { html, zip } = await printSnapshot(buildSnapshot({ conditions, loops, cells: conditions.map(({ code }) => buildCell('SL-R', code)) }), printer)
+    const text = html.bytes.toString('utf8')
+    expect(text).toContain('4 more are in the tables alone')
+    // one crossing chart, four large figures, two small ones each of nine conditions
+    expect(text.match(/<figure /g)).toHaveLength(1 + 4 + 2 * 9)
+    for (const { name } of conditions) expect(text).toContain(`${name} <span`)
+    writeFileSync(join(folder, 'many.zip'), zip.bytes)
+    expect(run('unzip', '-l', 'many.zip').match(/responses\//g)).toHaveLength(14)
+  })
+})
+
 describe('an issued edition on Letter', () => {
   it('carries the approver, the date of issue as both dates of the PDF, and no stamp', async () => {
     const letter = buildSnapshot({ brand: { ...snapshot.brand, pageSize: 'Letter' } })
