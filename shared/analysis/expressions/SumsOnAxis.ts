@@ -8,6 +8,10 @@ import type { SumValue } from './SumValue'
 const N = SERIES_DEGREE
 /** Boxes times terms times polynomials that one search may take: a few seconds. */
 const EFFORT = 1e7
+/** Bounds that tell of a phase that nothing is known of it (more than half a turn), the tail the larger. */
+const UNKNOWN_STEADY = 4
+const UNKNOWN_TAIL = 5
+const HUGE = 1e200
 const TWO_PI = 2 * Math.PI
 
 /** All sums of different dead times of a loop gain as a part of it on the axis: prod Q_i^power_i. */
@@ -74,10 +78,13 @@ export class SumsOnAxis implements AxisExtension {
     im.fill(0)
     tail.fill(Infinity)
     if (bounded && greatest < 0) {
-      // A zero of L lies here, or may: all that is known is that ln|L| <= greatest, and nothing of the phase. Where that is below the
-      // floor it settles the box; elsewhere a tail this large asks for a smaller one.
-      re[0] = greatest - 4
-      tail[0] = 4
+      // A zero of L lies here, or may: all that is known is that ln|L| <= greatest, and nothing of the phase, anywhere on the box. Where that
+      // is below the floor it settles the box; elsewhere a tail larger than the rest asks for a smaller one.
+      re[0] = greatest - UNKNOWN_STEADY - UNKNOWN_TAIL
+      tail.fill(HUGE)
+      this.steady.fill(HUGE)
+      tail[0] = UNKNOWN_TAIL
+      this.steady[0] = UNKNOWN_STEADY
     }
   }
 

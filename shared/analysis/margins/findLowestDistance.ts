@@ -8,7 +8,7 @@ const U = 2 ** -53
 /** |L| below which |1 + L| is 1 for the accuracy told. */
 const NEGLIGIBLE = Math.log(1e-11)
 /** Boxes that a loop with several dead times may take under the floor: they grow with frequency, not with its logarithm. */
-const EXTENSION_EFFORT = 6_000
+const EXTENSION_EFFORT = 20_000
 const MAX_EXTENSIONS = 60
 /** Distances that differ by less than this part are the same to within rounding. */
 const EQUAL = 2e-15

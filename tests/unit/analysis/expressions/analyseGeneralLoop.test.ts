@@ -54,6 +54,21 @@ describe('loop gains with several dead times', () => {
     agree(inRange(result.closestApproaches.map(find => find.frequency)), seen.least)
   })
 
+  it('finds a crossing right beside a deep notch, where nothing can be told of the phase from afar', () => {
+    // two paths that nearly cancel: |L| = 0.017 at the crossing, w = 8.358 (by bisection of the sign of Im L in doubles)
+    const notch = '9.978/(s^2+2*0.3670*0.3008*s+0.3008^2)*exp(-0.4032*s)+1.364/(s+1.787)*exp(-0.9865*s)'
+    const { phaseCrossovers } = analyse(notch)
+    const tree = parseExpression(notch, { variable: 's', parameterNames: [] })
+    let [low, high] = [8.358, 8.359]
+    for (let step = 0; step < 60; step++) {
+      const middle = (low + high) / 2
+      if (plainEvaluation(tree, {}, middle)[1] < 0) low = middle
+      else high = middle
+    }
+    const found = phaseCrossovers.map(find => find.frequency as number).filter(w => w > 8 && w < 9)
+    expect(found).toEqual([expect.closeTo(low, 8)])
+  })
+
   it('gives the very values of L at its finds, to 1e-9', () => {
     for (const [expression, parameters] of [[modes, {}], [predictor('2*(1+1/(3*s))', '1/(s+1)^2'), { T: 1.5 }]] as const) {
       const result = analyse(expression, parameters)
