@@ -156,7 +156,7 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
       ? null
       : parametersWithValues({ parameters: detail.value.parameters, values, conditionId: condition.value.id, newIn: kept.value.conditionIds })
     if (list !== null) {
-      await systemsClient.putParameters(detail.value.system.id, list)
+      await systemsClient.putParameters(detail.value.system.id, list, detail.value.parameters.map(({ id }) => id))
       // So that a second try, after the source was refused, begins from the parameters as they are now.
       await store.load()
     }

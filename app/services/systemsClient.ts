@@ -42,7 +42,7 @@ export const systemsClient = {
   createCondition: (systemId: number, fields: ConditionFields) => callApi<OperatingCondition>('POST', `${at(systemId)}/conditions`, { body: fields }),
   orderConditions: (systemId: number, ids: number[]) => callApi<{ ids: number[] }>('PUT', `${at(systemId)}/conditions/order`, { body: { ids } }),
   parameters: (systemId: number) => callApi<Parameter[]>('GET', `${at(systemId)}/parameters`),
-  putParameters: (systemId: number, parameters: ParameterFields[]) => callApi<Parameter[]>('PUT', `${at(systemId)}/parameters`, { body: { parameters } }),
+  putParameters: (systemId: number, parameters: ParameterFields[], madeFrom: number[]) => callApi<Parameter[]>('PUT', `${at(systemId)}/parameters`, { body: { parameters, madeFrom } }),
   upload: (systemId: number, file: File) => {
     const body = new FormData()
     body.append('file', file)

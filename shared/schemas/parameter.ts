@@ -17,8 +17,9 @@ const parameterSchema = z.strictObject({
   values: z.record(z.string().regex(/^[1-9]\d{0,15}$/, 'Must be the id of a condition.'), finiteNumber),
 })
 
-/** The parameters of a system, replaced as a whole; one without an id is new. */
+/** The parameters of a system, replaced as a whole; one without an id is new. `madeFrom`: ids of those the list was made from, so that none is lost unseen. */
 export const parametersSchema = z.strictObject({
+  madeFrom: z.array(idField).max(limits.parameters).optional(),
   parameters: z.array(parameterSchema).max(limits.parameters, `At most ${limits.parameters} parameters.`).superRefine((parameters, problems) => {
     const seen = new Set<string>()
     parameters.forEach(({ name }, index) => {

@@ -12,13 +12,16 @@ import { listParameters } from './listParameters'
 
 /**
  * Sets the parameters of a system to this list, in its order. Throws 'conflict' where an entry was made from an older version or its
- * parameter is gone. Values in deleted conditions stay, so that a restored condition has them again.
+ * parameter is gone, or where there is a parameter that `madeFrom`, the ids the list was made from, does not know. Values in deleted conditions stay, so
+ * that a restored condition has them again.
  */
-export function replaceParameters(systemId: number, entries: ParameterEntry[], context: ServiceContext): Promise<Parameter[]> {
+export function replaceParameters(systemId: number, entries: ParameterEntry[], context: ServiceContext, madeFrom?: readonly number[]): Promise<Parameter[]> {
   return writeTransaction(async () => {
     const before = await listParameters(systemId)
     const conditionIds = (await ConditionRow.findAll({ where: { systemId }, attributes: ['id'] })).map(condition => condition.id)
     assertConditionsKnown(entries, conditionIds)
+    const added = madeFrom && before.find(parameter => !madeFrom.includes(parameter.id))
+    if (added) throw new AppError('conflict', `Somebody else has added the parameter ${added.name} in the meantime.`, { path: 'madeFrom', details: { current: before } })
     const kept = new Set(entries.flatMap(entry => entry.id ?? []))
     await ParameterRow.destroy({ where: { systemId, id: before.map(parameter => parameter.id).filter(id => !kept.has(id)) } })
     for (const [index, entry] of entries.entries()) {
