@@ -21,3 +21,18 @@ export interface SearchException {
 export function emptyFinds(): FindList {
   return { v: [], direction: [], from: [], to: [], logGain: [], phase: [] }
 }
+
+/** Drops the finds from `length` on. */
+export function truncateFinds(finds: FindList, length: number): void {
+  finds.v.length = finds.direction.length = finds.from.length = finds.to.length = length
+  finds.logGain.length = finds.phase.length = length
+}
+
+/** Puts the finds from `mark` on in order of v. */
+export function sortFinds(finds: FindList, mark: number): void {
+  const order = finds.v.slice(mark).map((_, i) => i + mark).sort((a, b) => finds.v[a]! - finds.v[b]!)
+  for (const key of ['v', 'direction', 'from', 'to', 'logGain', 'phase'] as const) {
+    const values = order.map(i => finds[key][i]!)
+    for (let i = 0; i < values.length; i++) finds[key][mark + i] = values[i]!
+  }
+}

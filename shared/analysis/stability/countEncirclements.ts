@@ -36,7 +36,7 @@ export function countEncirclements(result: SearchResult): EncirclementCount {
   if (infinity.open && infinity.logGain >= 0) return { encirclements: null, reason: infinity.open }
   if (ties.real) return countRealLocus(result)
 
-  let count = 2 * result.search.turnsAbove
+  let count = 2 * result.search.turnsAbove.count
   for (let i = 0; i < phase.v.length; i++) {
     if (phase.logGain[i]! > 0) count += 2 * phase.direction[i]!
   }
