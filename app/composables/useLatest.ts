@@ -8,7 +8,6 @@ export function useLatest<Question, Answer>(work: (question: Question) => Promis
   const pending = ref(false)
   let running = false
   let waiting: { question: Question } | null = null
-  let cleared = 0
 
   async function ask(question: Question): Promise<void> {
     waiting = { question }
@@ -17,30 +16,21 @@ export function useLatest<Question, Answer>(work: (question: Question) => Promis
     running = true
     while (waiting !== null) {
       const current: { question: Question } = waiting
-      const asked = cleared
       waiting = null
       try {
         const found = await work(current.question)
-        if (waiting === null && asked === cleared) {
+        if (waiting === null) {
           answer.value = found
           failure.value = null
         }
       }
       catch (error) {
-        if (waiting === null && asked === cleared) failure.value = error
+        if (waiting === null) failure.value = error
       }
     }
     running = false
     pending.value = false
   }
 
-  /** Forgets the answer, what waits and what is under way. */
-  function clear(): void {
-    cleared += 1
-    waiting = null
-    answer.value = null
-    failure.value = null
-  }
-
-  return { answer, failure, pending, ask, clear }
+  return { answer, failure, pending, ask }
 }

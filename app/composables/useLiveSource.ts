@@ -95,5 +95,5 @@ export function useLiveSource(typed: MaybeRefOrGetter<TypedSource>, facts: Maybe
   /** The message for a field; entries such as 'zeros[2]' belong to the field 'zeros'. */
   const problemAt = (path: string) => answer.value?.problems.find(problem => problem.path === path || problem.path.startsWith(`${path}[`))?.message
 
-  return { answer, failure, pending, result, isOld, preview, openFile, problemAt, refresh }
+  return { answer, failure, pending, result, isOld, preview, openFile, problemAt }
 }

@@ -113,9 +113,11 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
     file.value = chosen
     if (['', 'design model'].includes(kept.value.typed.name)) kept.value.typed.name = chosen.name.replace(/\.[^.]+$/, '')
     kept.value.typed.upload = null
+    // What was said of the columns before a reload is kept for the file that is chosen again.
+    const said = preview.value === null ? kept.value.typed.mapping : null
     try {
       const found = await live.openFile(chosen)
-      kept.value.typed.mapping = found.guess ?? kept.value.typed.mapping ?? (found.columns.length >= 3
+      kept.value.typed.mapping = said ?? found.guess ?? kept.value.typed.mapping ?? (found.columns.length >= 3
         ? { frequencyColumn: 0, frequencyUnit: 'Hz', form: 'dB and degrees', firstColumn: 1, secondColumn: 2, coherenceColumn: null, quantity: 'loopGain' }
         : null)
     }

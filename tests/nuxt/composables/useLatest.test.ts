@@ -49,14 +49,4 @@ describe('the newest answer', () => {
     await settle()
     expect(latest.failure.value).toBeNull()
   })
-
-  it('shows nothing that was under way when it was cleared', async () => {
-    const { work, ends } = held()
-    const latest = useLatest(work)
-    void latest.ask('a')
-    latest.clear()
-    ends[0]!('A')
-    await settle()
-    expect(latest.answer.value).toBeNull()
-  })
 })
