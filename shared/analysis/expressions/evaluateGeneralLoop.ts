@@ -7,7 +7,7 @@ import { generalAxisLoop } from './generalAxisLoop'
 
 /** A loop gain with several dead times, ready to be evaluated for figures and tables. */
 export function evaluateGeneralLoop(loop: GeneralLoop): LoopGain {
-  const axis = generalAxisLoop(loop)
+  const axis = generalAxisLoop(loop, 'not counted')
   const value = new Float64Array(AXIS_VALUE_SIZE)
   const { log, weight } = expandEnd(axis, 'origin', 0.1 * axis.smallestRoot, new LogSeries())
   const atOrigin = weight > 0 ? 0 : weight < 0 ? Infinity : Math.exp(log.re[0]!) * Math.cos(log.im[0]!)

@@ -10,9 +10,10 @@ import { SumsOnAxis } from './SumsOnAxis'
 
 /**
  * A loop gain with several dead times on the axis: its factors, and its sums as an extension. Zeros of the sums at s = 0 join the
- * integrators and differentiators; zeros beyond the boundary of sums that are divided by join the unstable poles, counted by their own encirclements.
+ * integrators and differentiators; zeros beyond the boundary of sums that are divided by join the unstable poles, counted by their own encirclements
+ * (which a loop gain that is only to be evaluated can do without).
  */
-export function generalAxisLoop(loop: GeneralLoop): AxisLoop {
+export function generalAxisLoop(loop: GeneralLoop, poles: 'counted' | 'not counted' = 'counted'): AxisLoop {
   const exactSums = [...loop.exact.sums.values()].map(entry => entry.sum)
   const origins = exactSums.map(originSeries)
   const sums = loop.sums.map((sum, i) => new DelayedSumOnAxis(loop, sum, origins[i]!))
@@ -27,7 +28,7 @@ export function generalAxisLoop(loop: GeneralLoop): AxisLoop {
     atOrigin += sum.power * order
     degree += sum.power * (sums[i]!.degree - order)
     if (origins[i]) smallest = Math.min(smallest, origins[i]!.reach / 1.5)
-    if (sum.power > 0) return
+    if (sum.power > 0 || poles === 'not counted') return
     const count = countUnstableZeros(exactSums[i]!, order)
     if (typeof count === 'number') unstable += -sum.power * count
     else openReason = `an inner loop of the expression: ${count.reason}`
