@@ -11,7 +11,10 @@ const TURNS = 200
 interface Sizes { logGain: number, roots: number[], sum: number, negative: boolean, deadTime: number }
 
 /** A sum as its term of highest degree times 1 + e, |e| at most the sum of the others over it. */
-interface Dominated { power: number, others: { logRatio: number, up: number[], down: number[] }[] }
+interface Dominated { power: number, others: Other[] }
+
+/** A term over the dominating one: sizes of roots above and below, ln and sign of the leading coefficient, and the further dead time. */
+interface Other { logRatio: number, negative: boolean, deadTime: number, up: number[], down: number[] }
 
 /**
  * The far end of the axis of a loop gain with different dead times: no series in 1/v serves there, but |L| has a bound that falls
@@ -49,7 +52,13 @@ export class FarEnd {
       for (let repeat = 0; repeat < Math.abs(sum.power); repeat++) (sum.power > 0 ? this.ups : this.downs).push(...main.roots)
       return {
         power: sum.power,
-        others: sizes.filter(other => other !== main).map(other => ({ logRatio: other.logGain - main.logGain, up: other.roots, down: main.roots })),
+        others: sizes.filter(other => other !== main).map(other => ({
+          logRatio: other.logGain - main.logGain,
+          negative: other.negative !== main.negative,
+          deadTime: other.deadTime - main.deadTime,
+          up: other.roots,
+          down: main.roots,
+        })),
       }
     })
     this.logGain = logGain
@@ -76,7 +85,7 @@ export class FarEnd {
 
   /**
    * True when |1 + L| >= 1 from v on, as it is towards infinity for many a loop whose dominating product has no dead time: with x = 1/v its angle is
-   * a whole number of quarter turns and d, |d - x sum Re r| <= sum (|r| x)^2/(2 - 2|r| x) + the others' e. Then Re L >= -|L|^2/2 is shown
+   * a whole number of quarter turns and d, |d - x sum Re r| <= sum (|r| x)^2/(2 - 2|r| x) + what the others add. Then Re L >= -|L|^2/2 is shown
    * with quantities over x that only get better as x falls.
    */
   staysClear(v: number): boolean {
@@ -90,9 +99,11 @@ export class FarEnd {
     for (const { power, others } of this.sums) {
       const e = largestRatio(others, v)
       if (!(e < 0.5) || others.some(({ up, down }) => up.length >= down.length)) return false
-      angle += Math.abs(power) * Math.asin(e)
+      // log(1 + e) differs from e by less than e^2/(2 - 2e); of e what falls as x is added up below, with its sign
+      angle += Math.abs(power) * (e * e / (2 - 2 * e) + restRatio(others, v))
       logLeast += power > 0 ? power * Math.log1p(-e) : power * Math.log1p(e)
     }
+    angle += leadingRatio(this.sums) * x
     const total = Math.abs(this.sum) * x + angle
     if (!(total < 0.5)) return false
     const quarter = (((this.negative ? 2 : 0) + this.degree) % 4 + 4) % 4
@@ -125,13 +136,37 @@ export class FarEnd {
 }
 
 /** Greatest sum of |P_t/P_0| from v to infinity. */
-function largestRatio(others: Dominated['others'], v: number): number {
+function largestRatio(others: Other[], v: number): number {
   let sum = 0
   for (const { logRatio, up, down } of others) {
     let ratio = logRatio
     for (const size of up) ratio += Math.log(v + size)
     for (const size of down) ratio -= Math.log(v - size)
     sum += Math.exp(ratio)
+  }
+  return sum
+}
+
+/** Sum over the dead times of |sum of power P_t/P_0 (s) s| for s -> infinity: what the terms of one degree less add to log L, over x. */
+function leadingRatio(sums: Dominated[]): number {
+  const leads = new Map<number, number>()
+  for (const { power, others } of sums) {
+    for (const { logRatio, negative, deadTime, up, down } of others) {
+      if (down.length - up.length !== 1) continue
+      leads.set(deadTime, (leads.get(deadTime) ?? 0) + power * (negative ? -1 : 1) * Math.exp(logRatio))
+    }
+  }
+  let sum = 0
+  for (const lead of leads.values()) sum += Math.abs(lead) * (1 + 1e-12) + 1e-300
+  return sum
+}
+
+/** The same ratios at v and beyond without those leading parts. */
+function restRatio(others: Other[], v: number): number {
+  let sum = 0
+  for (const other of others) {
+    const size = largestRatio([other], v)
+    sum += other.down.length - other.up.length === 1 ? Math.max(0, size - Math.exp(other.logRatio) / v) + 1e-15 * size : size
   }
   return sum
 }

@@ -129,6 +129,17 @@ describe('loop gains with several dead times', () => {
     expect(phaseCrossovers).toEqual([])
   })
 
+  it('shows |1 + L| clear of 1 to infinity where nothing dips below, and finds the dips where there are some', () => {
+    const clear = analyse('1/(s+1)/(1+1/(s+2)*exp(-0.3*s)/(1+0.5/(s+3)*exp(-0.7*s)))')
+    expect(clear.coverage.exceptions).toEqual([])
+    expect(clear.vectorMargin).toEqual({ distance: 1, frequency: 'infinity' })
+    // 1/s (1 + exp(-1e-6 s)): below 1 only beyond the floor's frequency, by 1e-6
+    const dips = analyse('1/s+1/s*exp(-1e-6*s)')
+    expect(dips.coverage.exceptions).toEqual([])
+    expect(dips.vectorMargin?.distance).toBeLessThan(1)
+    expect(dips.vectorMargin?.distance).toBeGreaterThan(1 - 2e-6)
+  })
+
   it('tells an open far end, and gives no count where L is not small there', () => {
     const open = analyse('1-exp(-s)')
     expect(open.coverage.exceptions.map(exception => exception.code)).toContain('open end')
