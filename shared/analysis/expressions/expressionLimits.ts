@@ -11,7 +11,7 @@ export const expressionLimits = {
   /** degree of a polynomial that has to be multiplied out, and its roots found again */
   expandedDegree: 120,
   /** bits of an exact coefficient */
-  bits: 40_000,
+  bits: 20_000,
   /** different dead times in one sum */
   delays: 64,
 } as const
