@@ -6,17 +6,21 @@ import { readLoopInput } from '#shared/analysis/readLoopInput'
 import { compareWithOracle } from '../../tests/oracle/compareWithOracle'
 import { compareWithTree } from '../../tests/oracle/compareWithTree'
 import { generateLoop, LOOP_FAMILIES, type LoopFamily } from '../../tests/oracle/generateLoop'
+import { compareWithRationalTree } from '../../tests/oracle/compareWithRationalTree'
+import { generateRationalTree, RATIONAL_TREE_FAMILIES, type RationalTreeFamily } from '../../tests/oracle/generateRationalTree'
 import { generateTree, TREE_FAMILIES, type TreeFamily } from '../../tests/oracle/generateTree'
 
-type Family = LoopFamily | TreeFamily
+type Family = LoopFamily | TreeFamily | RationalTreeFamily
 
 interface Share { family: Family, from: number, to: number, step: number, orders: [number, number] }
 interface Row { seed: number, differences: string[], exceptions: string[], setAside: string[], fault?: string }
 
 const analyse = (input: unknown) => analyseLoop(readLoopInput(input))
 const isTree = (family: Family): family is TreeFamily => (TREE_FAMILIES as readonly string[]).includes(family)
+const isRationalTree = (family: Family): family is RationalTreeFamily => (RATIONAL_TREE_FAMILIES as readonly string[]).includes(family)
 
 function compareOne(family: Family, seed: number, orders: [number, number]) {
+  if (isRationalTree(family)) return compareWithRationalTree(generateRationalTree(family, seed), analyse)
   return isTree(family) ? compareWithTree(generateTree(family, seed), analyse) : compareWithOracle(generateLoop(family, seed, orders), analyse)
 }
 
@@ -44,7 +48,7 @@ async function main(): Promise<void> {
       show: { type: 'string', default: '5' },
     },
   })
-  const all: Family[] = [...LOOP_FAMILIES, ...TREE_FAMILIES]
+  const all: Family[] = [...LOOP_FAMILIES, ...RATIONAL_TREE_FAMILIES, ...TREE_FAMILIES]
   const families = all.filter(f => values.family === undefined || f === values.family)
   if (families.length === 0) throw new Error(`no family '${values.family}'; there are: ${all.join(', ')}`)
   const orders = values.orders.split('-').map(Number) as [number, number]

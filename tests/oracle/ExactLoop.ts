@@ -61,7 +61,7 @@ function fromRoots(roots: [number, number][], gain: number): ScaledPolynomial {
 }
 
 /** sum_i p_i (1 + s)^i (1 - s)^(degree - i) */
-function bilinear(p: IntegerPolynomial, degree: number): IntegerPolynomial {
+export function bilinear(p: IntegerPolynomial, degree: number): IntegerPolynomial {
   const powers = (base: IntegerPolynomial) => {
     const list: IntegerPolynomial[] = [[1n]]
     for (let i = 0; i < degree; i += 1) list.push(multiply(list[i]!, base))

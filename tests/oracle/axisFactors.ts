@@ -109,7 +109,8 @@ export function overReciprocal(loop: AxisFactors): AxisFactors {
   }
   atZero = Math.round(atZero)
   if (atZero !== 0) inverted.factors.push({ re: 0, im: 0, weight: atZero })
-  // the constant angle follows from one point
-  inverted.angle = -angleOnAxis(loop, 1) - angleOnAxis(inverted, 1)
+  // the constant angle follows from one point, at which no root stands
+  const at = [0.7316, 0.8141, 0.9233].find(t => loop.factors.every(f => f.re !== 0 || Math.abs(f.im - t) > 1e-3))!
+  inverted.angle = -angleOnAxis(loop, at) - angleOnAxis(inverted, 1 / at)
   return inverted
 }

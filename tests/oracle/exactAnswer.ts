@@ -1,6 +1,6 @@
 import { angleOf, dyadicProduct, dyadicRatio, dyadicValue, logOfDyadicRatio } from './axisValue'
 import { dyadicToNumber, type Dyadic } from './dyadic'
-import { exactLoop, onAxis, squaredMagnitude, type OracleCoefficients, type OracleRoots } from './ExactLoop'
+import { exactLoop, onAxis, squaredMagnitude, type ExactLoop, type OracleCoefficients, type OracleRoots } from './ExactLoop'
 import { integerPolynomial, type IntegerPolynomial } from './integerPolynomial'
 import { isolatePositiveRoots } from './isolatePositiveRoots'
 import type { PositiveRoot } from './PositiveRoot'
@@ -53,6 +53,10 @@ const ROUNDING = 1e-14
 /** Change of ln L (nepers, rad) that the rounding of the input's own doubles may stand for. */
 const UNCERTAIN = 1e-14
 
+function isExact(input: OracleRoots | OracleCoefficients | ExactLoop): input is ExactLoop {
+  return 'numerator' in input && typeof input.numerator[0] === 'bigint'
+}
+
 export function wrapDegrees(angle: number): number {
   const turned = angle % 360
   return turned > 180 ? turned - 360 : turned <= -180 ? turned + 360 : turned
@@ -98,8 +102,8 @@ export function withoutAxisRoots(p: IntegerPolynomial): { even: IntegerPolynomia
  * Assumes: the doubles of the input are meant exactly; the gain floor is a multiple of 10 dB; no dead time.
  * @throws RangeError where there is dead time or the floor is no multiple of 10 dB
  */
-export function exactAnswer(input: OracleRoots | OracleCoefficients, gainFloor = -60): ExactAnswer {
-  const loop = exactLoop(input)
+export function exactAnswer(input: OracleRoots | OracleCoefficients | ExactLoop, gainFloor = -60): ExactAnswer {
+  const loop = isExact(input) ? input : exactLoop(input)
   if (loop.deadTime !== 0) throw new RangeError('dead time is not for this oracle')
   if (gainFloor % 10 !== 0 || gainFloor > 0) throw new RangeError('the floor must be a multiple of 10 dB, at most 0')
   let { numerator, denominator } = loop

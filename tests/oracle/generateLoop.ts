@@ -1,4 +1,4 @@
-import { axisFactors, logGainOnAxis } from './axisFactors'
+import { angleOnAxis, axisFactors, logGainOnAxis } from './axisFactors'
 import type { OracleCoefficients, OracleRoots } from './ExactLoop'
 import { exactStationaryGains } from './exactStationaryGains'
 import { seededRandom } from './seededRandom'
@@ -9,10 +9,13 @@ type Pair = [number, number]
 export const LOOP_FAMILIES = [
   'mixed', 'light damping', 'twelve decades', 'near-cancelling pairs', 'tuned hump', 'integrators', 'undamped modes', 'unstable poles',
   'biproper', 'sampled', 'sampled hump', 'coefficients', 'sampled coefficients', 'dead time', 'dead time with light damping', 'sampled dead time',
-  'repeated roots', 'sampled whole numbers',
+  'repeated roots', 'sampled whole numbers', 'whole numbers with dead time', 'sampled whole numbers with dead time',
+  'tuned phase',
 ] as const
 /** Families of exact whole numbers: ties of structure (a phase that leaves an end with no linear term, say) are common in them. */
-export const FAMILIES_WITH_TIES: readonly LoopFamily[] = ['repeated roots', 'sampled whole numbers']
+export const FAMILIES_WITH_TIES: readonly LoopFamily[] = [
+  'repeated roots', 'sampled whole numbers', 'whole numbers with dead time', 'sampled whole numbers with dead time',
+]
 export type LoopFamily = typeof LOOP_FAMILIES[number]
 
 export interface GeneratedLoop {
@@ -76,6 +79,39 @@ function lastAbove(input: OracleRoots, gainFloor: number): number {
   let t = 1e12
   while (t > 1e-6 && logGainOnAxis(factors, t) < gainFloor * Math.LN10 / 20) t /= 1.1
   return t
+}
+
+/**
+ * A dead time and one zero set so that the phase is stationary at w and comes within 10^-3 .. 10^-7 rad of the negative real axis there: a hair over
+ * it gives two phase crossovers, a hair short of it none. Null where no such zero is found.
+ */
+function withTunedPhase(d: Draw, loop: OracleRoots, w: number): OracleRoots | null {
+  const hair = (d.chance(0.5) ? 1 : -1) * d.logBetween(1e-7, 1e-3)
+  const poles: Pair[] = [...loop.poles, [-30 * w, 0]]
+  const candidate = (a: number): OracleRoots => {
+    const rational = { ...loop, poles, zeros: [...loop.zeros, [-a, 0] as Pair] }
+    const { factors } = axisFactors(rational)
+    const slope = factors.reduce((sum, { re, im, weight }) => sum - weight * re / ((w - im) ** 2 + re ** 2), 0)
+    return { ...rational, deadTime: slope }
+  }
+  const miss = (a: number) => {
+    const tuned = candidate(a)
+    if (!(tuned.deadTime! > 0)) return Number.NaN
+    const turned = angleOnAxis(axisFactors(tuned), w) - Math.PI - hair
+    return turned - 2 * Math.PI * Math.round(turned / (2 * Math.PI))
+  }
+  const places = Array.from({ length: 80 }, (_, i) => w * 10 ** (-2 + i / 20))
+  for (let i = 1; i < places.length; i += 1) {
+    let [low, high] = [places[i - 1]!, places[i]!]
+    if (!(Math.abs(miss(low)) < 1 && Math.abs(miss(high)) < 1 && miss(low) * miss(high) < 0)) continue
+    for (let step = 0; step < 60; step += 1) {
+      const middle = (low + high) / 2
+      if (miss(middle) * miss(low) > 0) low = middle
+      else high = middle
+    }
+    return { ...candidate(low), gain: loop.gain * d.logBetween(0.2, 5) }
+  }
+  return null
 }
 
 function discRoots(d: Draw, count: number, dampings: Pair, outside = 0, lowest = 1e-3): Pair[] {
@@ -181,6 +217,16 @@ export function generateLoop(family: LoopFamily, seed: number, orders: Pair = [2
         const loop = withUnitGainAt(make(poles, zeros, { sampleTime: 1 }), Math.tan(d.logBetween(1e-2, 3) / 2))
         return { numerator: expand(zeros, loop.gain), denominator: expand(poles, 1), sampleTime: d.logBetween(1e-4, 10) }
       }
+      case 'tuned phase': {
+        for (;;) {
+          const w = crossover()
+          const loop = continuous()
+          const tuned = withTunedPhase(d, loop, w)
+          if (!tuned) continue
+          const scaled = withUnitGainAt(tuned, w)
+          return { ...scaled, gain: scaled.gain * d.logBetween(0.1, 10) }
+        }
+      }
       case 'repeated roots':
       case 'sampled whole numbers': {
         const sampledLoop = family === 'sampled whole numbers'
@@ -191,6 +237,25 @@ export function generateLoop(family: LoopFamily, seed: number, orders: Pair = [2
         const numerator = wholeNumbers(d, zeros, d.whole(0, denominator.length - 2))
         const gain = Math.round(d.logBetween(1, 1000)) / 64 * sign()
         return { numerator: numerator.map(c => c * gain), denominator, ...sampledLoop ? { sampleTime: 0.5 } : {} }
+      }
+      case 'whole numbers with dead time':
+      case 'sampled whole numbers with dead time': {
+        const sampledLoop = family === 'sampled whole numbers with dead time'
+        const places: Pair[][] = sampledLoop
+          ? [[[1, 0]], [[0, 0]], [[0.5, 0]], [[-0.5, 0]], [[0.75, 0]], [[-1, 0]], [[0, 1], [0, -1]], [[0.5, 0.5], [0.5, -0.5]], [[0.5, 0.75], [0.5, -0.75]], [[1.5, 0]]]
+          : [[[0, 0]], [[-1, 0]], [[-2, 0]], [[-0.25, 0]], [[0, 2], [0, -2]], [[-1, 2], [-1, -2]], [[-0.125, 3], [-0.125, -3]], [[1, 0]], [[0.5, 1], [0.5, -1]]]
+        const pick = (count: number, from: Pair[][]) => {
+          const list: Pair[] = []
+          while (list.length < count) list.push(...from[d.whole(0, from.length - 1)]!)
+          return list
+        }
+        const poles = pick(Math.min(order, 5), places)
+        const inner = places.filter(([first]) => sampledLoop ? Math.abs(first![0]) < 1 && first![1] !== 1 : first![0] < 0)
+        const zeros = pick(d.whole(0, poles.length - 2), inner).slice(0, poles.length - 1)
+        // a pair must not be cut in half
+        if (zeros.length > 0 && zeros.at(-1)![1] > 0) zeros.pop()
+        const gain = Math.round(d.logBetween(1, 300)) / 32 * sign()
+        return { zeros, poles, gain, deadTime: d.whole(1, 8) / 8, ...sampledLoop ? { sampleTime: 0.25 } : {} }
       }
       case 'dead time':
       case 'dead time with light damping': {

@@ -1,10 +1,12 @@
 import { describe, expect, it } from 'vitest'
 import { analyseLoop } from '#shared/analysis/analyseLoop'
 import { readLoopInput } from '#shared/analysis/readLoopInput'
+import { compareWithRationalTree } from '../oracle/compareWithRationalTree'
 import { compareWithTree } from '../oracle/compareWithTree'
 import { exactAnswer } from '../oracle/exactAnswer'
 import type { OracleCoefficients } from '../oracle/ExactLoop'
 import { generateLoop } from '../oracle/generateLoop'
+import { generateRationalTree, RATIONAL_TREE_FAMILIES } from '../oracle/generateRationalTree'
 import { generateTree, TREE_FAMILIES } from '../oracle/generateTree'
 import { polynomial, quotient } from '../oracle/LoopTree'
 import { treeAnswer } from '../oracle/treeAnswer'
@@ -37,6 +39,18 @@ describe('typed loops with several dead times', () => {
     it(`${family}: ${LOOPS} seeded loops, the same sets, values and verdict, all proven`, () => {
       for (let seed = 0; seed < LOOPS; seed += 1) {
         const { differences, exceptions, setAside } = compareWithTree(generateTree(family, seed), analyse)
+        expect({ differences, exceptions, setAside }, `seed ${seed}`).toEqual({ differences: [], exceptions: [], setAside: [] })
+      }
+    })
+  }
+})
+
+/** Expressions in s and z without dead time: exact, the tree multiplied out in big integers. */
+describe('typed rational loops', () => {
+  for (const family of RATIONAL_TREE_FAMILIES) {
+    it(`${family}: ${LOOPS} seeded loops, the same sets, values and counts, all proven`, () => {
+      for (let seed = 0; seed < LOOPS; seed += 1) {
+        const { differences, exceptions, setAside } = compareWithRationalTree(generateRationalTree(family, seed), analyse)
         expect({ differences, exceptions, setAside }, `seed ${seed}`).toEqual({ differences: [], exceptions: [], setAside: [] })
       }
     })
