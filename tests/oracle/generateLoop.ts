@@ -218,14 +218,21 @@ export function generateLoop(family: LoopFamily, seed: number, orders: Pair = [2
         return { numerator: expand(zeros, loop.gain), denominator: expand(poles, 1), sampleTime: d.logBetween(1e-4, 10) }
       }
       case 'tuned phase': {
-        for (;;) {
-          const w = crossover()
+        // beside a damped zero the phase rises, which a dead time can level out
+        const w = crossover()
+        for (let attempt = 0; attempt < 12; attempt += 1) {
+          const zeta = d.logBetween(0.02, 0.3)
           const loop = continuous()
+          loop.poles.push([-3 * w, 0], [-5 * w, 0])
+          loop.zeros.push([-zeta * w, w], [-zeta * w, -w])
           const tuned = withTunedPhase(d, loop, w)
           if (!tuned) continue
           const scaled = withUnitGainAt(tuned, w)
-          return { ...scaled, gain: scaled.gain * d.logBetween(0.1, 10) }
+          const loudness = d.logBetween(0.1, 10)
+          if (tuned.deadTime! * lastAbove(scaled, gainFloor - 20) < 1000) return { ...scaled, gain: scaled.gain * loudness }
         }
+        const plain = withUnitGainAt(continuous(), w)
+        return { ...plain, deadTime: Math.min(0.1 / w, 1000 / lastAbove(plain, gainFloor)) }
       }
       case 'repeated roots':
       case 'sampled whole numbers': {
