@@ -94,6 +94,7 @@ export function compareWithOracle(loop: GeneratedLoop, analyse: (input: unknown)
   const deadTime = loop.input.deadTime ?? 0
   const answer = deadTime > 0 ? deadTimeAnswer(loop.input as OracleRoots, loop.gainFloor) : exactAnswer(loop.input, loop.gainFloor)
   const setAside = [...answer.ties, ...('open' in answer ? answer.open : [])]
+  if (answer.phaseCrossovers.length > 10_000) setAside.push('more than 10,000 phase crossovers')
   const analysis = analyse({ ...loop.input, gainFloor: loop.gainFloor })
   const exceptions = analysis.coverage.exceptions.map(e => `${e.from} .. ${e.to}: ${e.reason}`)
   if (setAside.length > 0) return { differences: [], exceptions, setAside }

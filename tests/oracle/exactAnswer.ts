@@ -49,7 +49,7 @@ const DECIBELS = 20 / Math.LN10
 const BITS = 120
 const MEETS = 'L meets -1'
 /** An end gain this near to 1 (nepers) is a tie to within rounding of the factors. */
-const ROUNDING = 1e-14
+const ROUNDING = 1e-13
 /** Change of ln L (nepers, rad) that the rounding of the input's own doubles may stand for. */
 const UNCERTAIN = 1e-14
 

@@ -13,6 +13,9 @@ const FOUND: [string, LoopFamily, number, [number, number]][] = [
   ['a disk margin of 5e-9 lost all its digits', 'twelve decades', 18, [2, 9]],
   ['the arc about a double pole at z = -1 was swept on the wrong side: stable was said of an unstable loop', 'sampled whole numbers', 166, [2, 9]],
   ['the same, with the roots of the closed loop to contradict it', 'sampled whole numbers', 50, [2, 9]],
+  ['the limit of the phase at a triple undamped pair, exactly 180 deg, was taken with the error of its series', 'repeated roots', 50185, [2, 9]],
+  ['the same for a sampled loop: three unstable poles told where there is one', 'sampled whole numbers', 50085, [2, 9]],
+  ['half a sample of dead time: L(-1), which is imaginary, was taken for 0 and a closest approach beside it lost', 'sampled whole numbers with dead time', 50074, [2, 9]],
 ]
 
 describe('what the oracle has found stays mended', () => {

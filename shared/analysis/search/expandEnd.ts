@@ -96,5 +96,7 @@ export function expandEnd(axis: AxisLoop, end: AxisEnd, reach: number, log: LogS
   const logarithms = 2 ** -52 * (Math.abs(Math.log(Math.abs(axis.gain))) + axis.count * 40)
   log.steady[0] = log.steady[0]! + logarithms
   log.steadyRe[0] = log.steadyRe[0]! + logarithms
-  return { log, weight, reach, quarterTurns: Number.isInteger(wrapped) ? wrapped : Number.NaN }
+  // Half a sample of dead time also ends on an axis, but there L is not real and |1 + L| not even about the end.
+  const whole = Number.isInteger(wrapped) && (origin || Number.isInteger(halfTurns))
+  return { log, weight, reach, quarterTurns: whole ? wrapped : Number.NaN }
 }

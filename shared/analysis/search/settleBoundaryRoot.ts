@@ -87,7 +87,8 @@ export function settleBoundaryRoot(axis: AxisLoop, v: number, weight: number, fl
       result.settled = true
       break
     }
-    if (clear <= limitError && Math.abs(log.im[1]!) > restIm + bound1) {
+    // Within rounding, not within what the series leaves out: a limit beside 180 deg has a crossing near by.
+    if (clear <= limitError && log.tail[0]! <= log.steady[0]! && Math.abs(log.im[1]!) > restIm + bound1) {
       result.realLimit = true
       result.settled = true
       break

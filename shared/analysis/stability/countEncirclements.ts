@@ -99,9 +99,11 @@ function sweptHalfTurns(start: number, end: number, offset: number): number | nu
 
 function sweptAtUndamped(start: number, end: number, slope: number, realLimit: boolean): number | null {
   if (realLimit && slope === 0) return null
-  // The phase goes on with its slope on both sides: it comes from below the limit and leaves above it where it rises.
-  const nudge = realLimit ? slope * NUDGE : 0
-  return oddHalfTurnsWithin(end + nudge, start - nudge)
+  if (!realLimit) return oddHalfTurnsWithin(end, start)
+  // The limits are whole half turns, known here but for the end of a series. The phase goes on with its slope on both sides:
+  // it comes from below the limit and leaves above it where it rises.
+  const whole = (angle: number) => Math.round(angle / HALF_TURN) * HALF_TURN
+  return oddHalfTurnsWithin(whole(end) + slope * NUDGE, whole(start) - slope * NUDGE)
 }
 
 function oddHalfTurnsWithin(low: number, high: number): number {
