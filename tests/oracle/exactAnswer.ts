@@ -230,7 +230,7 @@ export function exactAnswer(input: OracleRoots | OracleCoefficients | ExactLoop,
   for (const { distance, frequency } of minima) consider(distance, frequency)
   if (startValue) consider(distanceOf(startValue), 0)
   if (endValue) consider(distanceOf(endValue), endFrequency)
-  if (vectorMargin.distance === 0 && !ties.includes(MEETS)) ties.push(MEETS)
+  if (vectorMargin.distance < ROUNDING && !ties.includes(MEETS)) ties.push(MEETS)
 
   /** sqrt of the greatest value of p / |N + D|^2 over the axis, ends included. */
   const peakOver = (p: IntegerPolynomial, factor: IntegerPolynomial): number => {
