@@ -18,6 +18,8 @@ const DEGREES = 180 / Math.PI
 const DECIBELS = 20 / Math.LN10
 const TWO_PI = 2 * Math.PI
 const DEFAULT_FLOOR = -60
+/** dB; farther down the rounding of doubles hides the phase of a loop that nears the real axis, and nothing is searched. */
+const LOWEST_FLOOR = -400
 
 /** Limits that only measurements of the engine itself change. */
 export interface AnalysisLimits {
@@ -39,7 +41,7 @@ export function analyseFactored(loop: FactoredLoop, input: CommonInput, limits: 
  * more than factors.
  */
 export function analyseAxisLoop(axis: AxisLoop, loop: FactoredLoop | null, input: CommonInput, limits: AnalysisLimits = DEFAULT_LIMITS): LoopAnalysis {
-  const floor = input.gainFloor ?? DEFAULT_FLOOR
+  const floor = Math.max(input.gainFloor ?? DEFAULT_FLOOR, LOWEST_FLOOR)
   const result = searchLoop(axis, { floorLog: floor / DECIBELS, maxFinds: limits.maxListed, maxEffort: limits.maxEffort })
   const scale = frequencyScale(axis, input)
   const band = readBand(axis, input, scale)
@@ -51,6 +53,11 @@ export function analyseAxisLoop(axis: AxisLoop, loop: FactoredLoop | null, input
   const phaseCrossovers = listPhaseCrossovers(result, scale, band, limits, floor)
   const closestApproaches = listClosestApproaches(result, scale, band, limits, floor)
   const vectorMargin: VectorMargin | null = lowest && { distance: lowest.distance, frequency: scale.listed(lowest.v) }
+  if ((input.gainFloor ?? DEFAULT_FLOOR) < LOWEST_FLOOR) {
+    result.exceptions.push({
+      from: result.infinity.edge, to: Number.POSITIVE_INFINITY, code: 'floor limit', reason: `|L| is searched down to ${LOWEST_FLOOR} dB, no farther`,
+    })
+  }
   const exceptions = listExceptions(result, scale, band, limits)
   let summary: MarginSummary | null = null
   let diskMargin: DiskMargin | null = null

@@ -100,7 +100,7 @@ function assembleSampled(loop: FactoredLoop, sampleTime: number, roots: Root[], 
 function assemble(loop: FactoredLoop, roots: Root[], gain: number, excess: number, unstablePoles: number,
   cancelled: AxisLoop['cancelled']): AxisLoop {
   const sampled = loop.sampleTime !== undefined
-  const delayInSamples = sampled ? loop.deadTime / loop.sampleTime! : 0
+  const delayInSamples = sampled ? wholeWhereMeant(loop.deadTime / loop.sampleTime!) : 0
   const re: number[] = []
   const im: number[] = []
   const weight: number[] = []
@@ -172,6 +172,12 @@ function assemble(loop: FactoredLoop, roots: Root[], gain: number, excess: numbe
     boundary: [...boundary].filter(([, w]) => w !== 0).map(([v, w]) => ({ v, weight: w })).sort((x, y) => x.v - y.v),
     unstablePoles, cancelled, smallestRoot, largestRoot,
   }
+}
+
+/** A number of samples, whole where the quotient of two decimal fractions misses that by rounding only (0.3/0.1). */
+function wholeWhereMeant(samples: number): number {
+  const whole = Math.round(samples)
+  return Math.abs(samples - whole) <= 8 * Number.EPSILON * whole ? whole : samples
 }
 
 /** Pairs poles with zeros close by, each with at most one; conjugates come out paired alike because the lists are symmetric. */

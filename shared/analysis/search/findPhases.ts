@@ -4,6 +4,7 @@ import { sortFinds, truncateFinds, type FindList } from './SearchFinds'
 
 const N = SERIES_DEGREE
 const TWO_PI = 2 * Math.PI
+const MOST_TURNS = 20_000
 
 /** A count of phase crossovers that are not listed, by the sign of their slope. */
 export interface TurnCount { count: number }
@@ -62,6 +63,8 @@ export function findPhases(box: SearchBox, finds: FindList, from: number, right:
     }
     return collectTurns(box, finds, firstTurn, lastTurn, yFrom, yTo, atTo > atFrom ? 1 : -1, from, end)
   }
+  // So many turns in a box that is not monotone: the rounding of a very long dead time hides the phase altogether.
+  if (lastTurn - firstTurn > MOST_TURNS) return box.giveUp(finds, mark, 'phase', from, end, true)
   for (let turn = firstTurn; turn <= lastTurn; turn++) {
     log.im[0] = centre - Math.PI - TWO_PI * turn
     const outcome = box.isolator.isolate(box.series, yFrom, yTo)

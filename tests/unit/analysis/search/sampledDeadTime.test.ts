@@ -28,6 +28,13 @@ describe('sampled loops', () => {
     expect(delayed.stability.closedLoopUnstablePoles).toBe(written.stability.closedLoopUnstablePoles)
   })
 
+  it('takes 0.3 s at 0.1 s a sample as three samples, though the doubles do not divide evenly', () => {
+    // closed form: 0.5 z^-3 at z = -1 is -0.5
+    const result = sampled([], [], 0.5, 0.3, 0.1)
+    expect(result.phaseCrossovers.at(-1)).toMatchObject({ frequency: expect.closeTo(Math.PI / 0.1, 12), gainMargin: expect.closeTo(20 * Math.log10(2), 12) })
+    expect(result.stability.verdict).toBe('stable')
+  })
+
   it('takes a dead time of a fraction of a sample as it stands', () => {
     // closed form: k/(z - 1) exp(-jw d): |L| = k/(2 sin(w/2)), arg L = -90 deg - w/2 - w d, so 180 deg at w = pi/2/(1/2 + d)
     const d = 2.3
