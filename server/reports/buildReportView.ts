@@ -22,6 +22,9 @@ function createFigureNumberer(): (figure: Omit<FigureView, 'number'>) => FigureV
   }
 }
 
+/** As a browser reads a title (HTML, document.title): white space stripped and collapsed. The printer compares the two. */
+const oneLine = (text: string) => text.replace(/[\t\n\f\r ]+/g, ' ').trim()
+
 const stamps: Record<EditionFacts['edition'], string | null> = { preview: 'PREVIEW', draft: 'DRAFT', issued: null }
 
 /**
@@ -57,7 +60,7 @@ export function buildReportView(snapshot: ReportSnapshot, edition: EditionFacts,
   const { report, brand, system } = snapshot
   const label = edition.edition === 'issued' ? `revision ${edition.label}` : edition.label
   return {
-    documentTitle: `${report.documentNumber} ${label}: ${report.title}`,
+    documentTitle: oneLine(`${report.documentNumber} ${label}: ${report.title}`),
     pageSize: brand.pageSize,
     accent: brand.accent,
     stamp: stamps[edition.edition],

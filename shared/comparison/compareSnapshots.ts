@@ -14,7 +14,8 @@ const sideOf = (cell: SnapshotCell | undefined): ComparedSide | null => (cell ==
       verdict: cell.judgement.verdict,
       closedLoop: cell.analysis?.stability.verdict ?? null,
       summary: cell.analysis?.summary ?? null,
-      vectorMargin: cell.analysis?.vectorMargin?.distance ?? null,
+      // A loop that is not shown to be stable has a distance but no margin.
+      vectorMargin: cell.analysis?.summary ? cell.analysis.vectorMargin?.distance ?? null : null,
       sourceName: cell.source?.name ?? null,
     })
 
@@ -29,8 +30,7 @@ function differencesOf(before: ComparedSide | null, after: ComparedSide | null):
     phaseLag: of('phaseLag'),
     phaseLead: of('phaseLead'),
     delay: of('delay'),
-    // A loop that is not shown to be stable has a distance but no margin.
-    vectorMargin: before?.summary && after?.summary ? difference(before.vectorMargin, after.vectorMargin) : null,
+    vectorMargin: difference(before?.vectorMargin, after?.vectorMargin),
   }
 }
 
@@ -78,7 +78,11 @@ function criteriaChanges(before: readonly Criterion[], after: readonly Criterion
 }
 
 function parameterChanges(before: ReportSnapshot, after: ReportSnapshot): string[] {
-  const words = ({ parameters }: ReportSnapshot, name: string, code: string) => String(parameters.find(parameter => parameter.name === name)?.values[code] ?? 'none')
+  const words = ({ parameters }: ReportSnapshot, name: string, code: string) => {
+    const values = parameters.find(parameter => parameter.name === name)?.values ?? {}
+    // Own entries only: a condition may be called 'constructor'.
+    return Object.hasOwn(values, code) ? String(values[code]) : 'none'
+  }
   const names = [...new Set([...after.parameters, ...before.parameters].map(({ name }) => name))]
   const codes = [...new Set([...after.conditions, ...before.conditions].map(({ code }) => code))]
   return names.flatMap(name => codes

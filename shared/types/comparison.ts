@@ -7,7 +7,7 @@ export interface ComparedSide {
   closedLoop: string | null
   /** null where there is no analysis or the closed loop is not stable */
   summary: MarginSummary | null
-  /** least |1 + L|; null where there is no analysis */
+  /** least |1 + L|; null where there is no analysis or the closed loop is not shown to be stable */
   vectorMargin: number | null
   sourceName: string | null
 }

@@ -1,7 +1,8 @@
 /** A value of a CSV cell; null is an empty cell. */
 export type CsvValue = string | number | null
 
-const isFormula = (text: string) => /^[=+\-@\t\r\0]/.test(text)
+/** White space before the sign counts too: some spreadsheets drop it. */
+const isFormula = (text: string) => /^\s*[=+\-@]|^[\t\r\n\0]/.test(text)
 
 function cellOf(value: CsvValue): string {
   if (value === null) return ''

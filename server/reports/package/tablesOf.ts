@@ -31,8 +31,9 @@ function crossingRows(cell: SnapshotCell): CsvValue[][] {
 }
 
 function approachRows(cell: SnapshotCell): CsvValue[][] {
+  const hasMargins = cell.analysis?.summary != null
   return (cell.analysis?.closestApproaches ?? []).map(approach => (
-    [...namesOf(cell), approach.frequency, approach.distance, approach.gainChange, approach.phaseChange]
+    [...namesOf(cell), approach.frequency, approach.distance, ...(hasMargins ? [approach.gainChange, approach.phaseChange] : [null, null])]
   ))
 }
 
@@ -50,7 +51,7 @@ function summaryRow(cell: SnapshotCell): CsvValue[] {
   return [
     ...namesOf(cell), source?.name ?? null, source?.kind ?? 'no data', judgement.verdict, analysis?.stability.verdict ?? null, coverageWord(cell),
     smallest('gainMargin', 'rise'), smallest('gainMargin', 'fall'), smallest('phaseMargin', 'lag'), smallest('phaseMargin', 'lead'), smallest('delayMargin', null),
-    analysis?.vectorMargin?.distance ?? null, analysis?.vectorMargin ? frequencyValue(analysis.vectorMargin.frequency) : null,
+    smallest('vectorMargin', null), analysis?.vectorMargin?.distance ?? null, analysis?.vectorMargin ? frequencyValue(analysis.vectorMargin.frequency) : null,
     summary?.sensitivityPeak ?? null, summary?.complementarySensitivityPeak ?? null,
   ]
 }
@@ -72,7 +73,7 @@ export function tablesOf(snapshot: ReportSnapshot): PackagedFile[] {
   return [
     table('crossings', ['what', `frequency, ${unit}`, 'slope', 'phase margin, deg (positive: lag reaches -1; negative: lead does)', 'delay margin, s', 'gain margin, dB (positive: gain may rise; negative: gain may fall)', '|1 + L|'], cells.flatMap(crossingRows)),
     table('closest-approaches', [`frequency, ${unit}`, '|1 + L|', 'gain change, dB', 'phase change, deg (negative: lag)'], cells.flatMap(approachRows)),
-    table('summary-margins', ['source', 'kind', 'verdict', 'closed loop', 'coverage', 'gain may rise, dB', 'gain may fall, dB', 'lag, deg', 'lead, deg', 'delay, s', 'vector margin', `at, ${unit}`, 'max |S|', 'max |T|'], cells.map(summaryRow)),
+    table('summary-margins', ['source', 'kind', 'verdict', 'closed loop', 'coverage', 'gain may rise, dB', 'gain may fall, dB', 'lag, deg', 'lead, deg', 'delay, s', 'vector margin', 'least |1 + L|', `at, ${unit}`, 'max |S|', 'max |T|'], cells.map(summaryRow)),
     table('criteria', ['quantity', 'direction', 'limit (dB, deg, s or ratio)', 'smallest', 'set by', `at, ${unit}`, 'verdict', 'reason'], cells.flatMap(criterionRows)),
     table('coverage', [`from, ${unit}`, `to, ${unit}`, 'reason'], cells.flatMap(coverageRows)),
   ]

@@ -35,7 +35,8 @@ function parameterTables({ parameters, conditions }: ReportSnapshot): TableView[
         cells: [
           { text: parameter.name, isHead: true, isMono: true },
           { text: parameter.unit },
-          ...shown.map(condition => ({ text: valueText(parameter.values[condition.code]) })),
+          // Own entries only: a condition may be called 'constructor'.
+          ...shown.map(({ code }) => ({ text: valueText(Object.hasOwn(parameter.values, code) ? parameter.values[code] : undefined) })),
           { text: parameter.notes },
         ],
       })),

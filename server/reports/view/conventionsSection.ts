@@ -9,7 +9,7 @@ const signs = [
   { term: 'Closest approach', words: 'a local minimum of |1 + L|, the distance of L to \u22121. Beside it stands one change of gain and phase together that takes this very point to \u22121. It is one such change, not the smallest combination.' },
   { term: 'Vector margin', words: 'the least |1 + L| over all frequencies, a ratio. A vector margin d lets the gain rise by 1/(1 \u2212 d), fall by 1/(1 + d), and the phase move by 2 asin(d/2) either way, each alone. Gain and phase margin together do not imply a vector margin.' },
   { term: 'Closed loop', words: 'judged by counting encirclements of \u22121 (Nyquist, Regeneration Theory, 1932), or observed during the test where L was measured; the basis is printed with each verdict. A closed loop that is not shown to be stable has no margins: only distances to \u22121 are printed.' },
-  { term: 'Frequencies', words: 'stand in the unit given in each head. Crossings whose |L| lies below the gain floor of the analysis are left out.' },
+  { term: 'Frequencies', words: 'stand in the unit given in each head; s, zeros and poles are in rad/s. Crossings whose |L| lies below the gain floor of the analysis are left out.' },
 ]
 
 const method = [

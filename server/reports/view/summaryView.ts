@@ -31,6 +31,9 @@ function findingOf(cells: readonly PlacedCell[]): { finding: string, findingTone
     ...(open > 0 ? [`${pairs(open)} ${open === 1 ? 'is' : 'are'} without data or not shown`] : []),
     ...(accepted > 0 ? [`${pairs(accepted)} not met, accepted by deviation`] : []),
   ]
+  if (total > 0 && count('met, no limit') === total) {
+    return { finding: `No limits are agreed, so none of the ${total} loop-condition pairs is judged; every closed loop is stable.`, findingTone: 'plain' }
+  }
   if (parts.length === 0) return { finding: `All ${total} loop-condition pairs meet the criteria.`, findingTone: 'met' }
   return { finding: `Of ${total} loop-condition pairs, ${parts.join(', ')}.`, findingTone: unstable + notMet > 0 ? 'bad' : 'open' }
 }

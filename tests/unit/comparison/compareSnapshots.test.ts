@@ -42,8 +42,15 @@ describe('comparison of two frozen states', () => {
     const unstable = buildAnalysis({ summary: null, stability: { verdict: 'unstable', basis: 'counted', openLoopUnstablePoles: 0, encirclements: -2, closedLoopUnstablePoles: 2 } })
     const after = buildSnapshot({ cells: [buildCell('SL-R', 'C1', unstable), ...before.cells.slice(1)] })
     const cell = compareSnapshots(before, after).cells[0]
-    expect(cell?.after).toMatchObject({ verdict: 'unstable', closedLoop: 'unstable', summary: null })
+    expect(cell?.after).toMatchObject({ verdict: 'unstable', closedLoop: 'unstable', summary: null, vectorMargin: null })
     expect(Object.values(cell?.differences ?? { none: 0 })).toEqual([null, null, null, null, null, null])
+  })
+
+  it('tells a parameter that has no value as none, whatever the condition is called', () => {
+    const { conditions, parameters } = buildSnapshot()
+    const before = buildSnapshot({ conditions: [conditions[0]!, { ...conditions[1]!, code: 'constructor' }], cells: [] })
+    const after = { ...before, parameters: [{ ...parameters[0]!, values: { constructor: 3 } }] } as typeof before
+    expect(compareSnapshots(before, after).parameterChanges).toEqual(['parameter wz in C1: 2 -> none', 'parameter wz in constructor: none -> 3'])
   })
 
   it('names loops and conditions that only one of them covers, and lists what only the earlier one has last', () => {

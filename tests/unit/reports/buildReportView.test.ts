@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { judgeAnalysis } from '#shared/analysis/criteria/judgeAnalysis'
 import { buildReportView } from '#server/reports/buildReportView'
 import type { DrawnReport } from '#server/reports/figures/DrawnReport'
 import type { TableView } from '#server/reports/view/ReportView'
@@ -86,6 +87,34 @@ describe('the view of a report', () => {
     const field = (name: string) => view.cover.titleBlock.find(entry => entry.name === name)?.value
     expect([field('Prepared by'), field('Approved by'), field('Date of issue')]).toEqual(['Mara Okafor, 2026-03-02 10:20 UTC', 'Ines Duval, 2026-03-09 08:00 UTC', '2026-03-09'])
     expect(texts(view.cover.history)).toEqual([['A', '2026-01-12', 'First issue', 'Mara Okafor', 'Ines Duval'], ['B', '2026-03-09', 'Position gain lowered', 'Mara Okafor', 'Ines Duval']])
+  })
+
+  it('does not say that criteria are met where none are agreed', () => {
+    const criteria = buildSnapshot().criteria.map(criterion => ({ ...criterion, limit: null }))
+    const cells = buildSnapshot().cells.map(cell => ({ ...cell, judgement: judgeAnalysis(cell.analysis, criteria) }))
+    const { finding, findingTone } = viewOf(buildSnapshot({ criteria, cells })).summary
+    expect([finding, findingTone]).toEqual(['No limits are agreed, so none of the 4 loop-condition pairs is judged; every closed loop is stable.', 'plain'])
+  })
+
+  it('leaves a parameter without a value blank, whatever the condition is called', () => {
+    const { conditions, cells } = buildSnapshot()
+    const snapshot = buildSnapshot({
+      conditions: [conditions[0]!, { ...conditions[1]!, code: 'constructor' }],
+      cells: cells.map(cell => (cell.conditionCode === 'C2' ? { ...cell, conditionCode: 'constructor' } : cell)),
+      parameters: [{ name: 'wz', unit: 'rad/s', notes: '', values: { C1: 2 } }],
+    })
+    const table = viewOf(snapshot).sections[0]?.blocks.at(-1)?.table ?? null
+    expect(texts(table)).toEqual([['wz', 'rad/s', '2', '', '']])
+  })
+
+  it('says that s, zeros and poles are in rad/s, for the frequencies of the report may be in Hz', () => {
+    const words = viewOf().sections[1]?.blocks[0]?.items.find(({ term }) => term === 'Frequencies')?.words
+    expect(words).toContain('s, zeros and poles are in rad/s')
+  })
+
+  it('has a title that a browser reads back as it stands: white space is one space', () => {
+    const { report } = buildSnapshot()
+    expect(viewOf(buildSnapshot({ report: { ...report, title: 'Margins  of\tall\naxes' } })).documentTitle).toBe('WB-0042 B draft 2: Margins of all axes')
   })
 
   it('stamps what is not issued', () => {

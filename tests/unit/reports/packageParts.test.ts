@@ -8,6 +8,7 @@ import { buildAnalysis, buildCell, buildSnapshot } from '../../factories/buildSn
 describe('CSV of the package', () => {
   it('writes a text that begins like a formula so that no spreadsheet runs it, and leaves numbers alone', () => {
     expect(csvOf(['a'], [['=1+1'], ['@x'], ['-cmd'], [-3.5], [-0]])).toBe('a\r\n\'=1+1\r\n\'@x\r\n\'-cmd\r\n-3.5\r\n0\r\n')
+    expect(csvOf(['a'], [[' =1+1'], ['\n=1+1']])).toBe('a\r\n\' =1+1\r\n"\'\n=1+1"\r\n')
   })
 
   it('quotes commas, quotes and line ends (RFC 4180, section 2)', () => {
@@ -23,7 +24,9 @@ describe('CSV of the package', () => {
     const snapshot = buildSnapshot({ cells: [buildCell('SL-R', 'C1', unstable)] })
     const table = (name: string) => String(tablesOf(snapshot).find(file => file.name === `tables/${name}.csv`)?.data).split('\r\n')
     expect(table('crossings').slice(1, 3)).toEqual(['SL-R,C1,gain crossover,23.25,falling,,,,1.476', 'SL-R,C1,phase crossover,163.9,falling,,,,0.847'])
-    expect(table('summary-margins')[1]).toBe('SL-R,C1,design model,expression,unstable,unstable,proven,,,,,,0.846,158.2,,')
+    expect(table('closest-approaches')[1]).toBe('SL-R,C1,158.2,0.846,,')
+    expect(table('summary-margins')[1]).toBe('SL-R,C1,design model,expression,unstable,unstable,proven,,,,,,,0.846,158.2,,')
+    expect(table('criteria').slice(1, 7).map(row => row.split(',')[5])).toEqual(['', '', '', '', '', ''])
   })
 })
 
