@@ -9,7 +9,7 @@ const resolve = { alias: { '#shared': folder('./shared'), '#server': folder('./s
 export default defineConfig({
   test: {
     projects: [
-      { resolve, test: { name: 'unit', include: ['tests/unit/**/*.test.ts'] } },
+      { resolve, test: { name: 'unit', include: ['tests/unit/**/*.test.ts'], testTimeout: 60_000 } },
       { resolve, test: { name: 'reference', include: ['tests/reference/**/*.test.ts'], testTimeout: 600_000 } },
       { resolve, test: { name: 'integration', globalSetup: ['tests/integration/globalSetup.ts'], include: ['tests/integration/**/*.test.ts'], testTimeout: 60_000 } },
       { resolve, test: { name: 'api', globalSetup: ['tests/api/globalSetup.ts'], include: ['tests/api/**/*.test.ts'], testTimeout: 120_000, hookTimeout: 300_000, fileParallelism: false } },

@@ -10,6 +10,7 @@ import { readLoopInput } from '#shared/analysis/readLoopInput'
 import type { ExpressionInput, LoopAnalysis, LoopInput, ZerosPolesInput } from '#shared/types/analysis'
 import { constant, delay, difference, expressionOf, polynomial, product, quotient, sum, type LoopTree } from '../../tests/oracle/LoopTree'
 import { benchLoop } from './engine/benchFamily'
+import { expandRoots } from './engine/expandRoots'
 import { plainEvaluation } from './engine/plainEvaluation'
 import { plainTree } from './engine/plainTree'
 import { leastMilliseconds, logSpaced, quantile, spread } from './engine/timing'
@@ -49,23 +50,6 @@ function family(): void {
   console.log(`    all: ratio ${spread(rows.map(r => r.ratio))}; ms ${spread(rows.map(r => r.engine))}; finds ${spread(rows.map(r => r.finds), 4)}`)
   console.log(`    100 finds and more, ${many.length} loops: microseconds a find ${spread(many.map(r => r.engine * 1000 / r.finds))} (goal: at most 15)`)
   console.log(`    not proven: ${rows.filter(r => !r.proven).length}`)
-}
-
-function expandRoots(loop: ZerosPolesInput): { numerator: number[], denominator: number[] } {
-  const expand = (list: [number, number][], lead: number) => {
-    let p = [lead]
-    for (const [re, im] of list) {
-      if (im < 0) continue
-      const q = im === 0 ? [1, -re] : [1, -2 * re, re * re + im * im]
-      const product = new Array<number>(p.length + q.length - 1).fill(0)
-      p.forEach((a, i) => q.forEach((b, j) => {
-        product[i + j]! += a * b
-      }))
-      p = product
-    }
-    return p
-  }
-  return { numerator: expand(loop.zeros, loop.gain), denominator: expand(loop.poles, 1) }
 }
 
 function coefficients(): void {
