@@ -74,7 +74,7 @@ function criteriaChanges(before: readonly Criterion[], after: readonly Criterion
   }
   return (Object.keys(quantities) as CriterionQuantity[])
     .filter(quantity => words(before, quantity) !== words(after, quantity))
-    .map(quantity => `${quantities[quantity].name}: ${words(before, quantity)} -> ${words(after, quantity)}`)
+    .map(quantity => `${quantities[quantity].name}: ${words(before, quantity)} to ${words(after, quantity)}`)
 }
 
 function parameterChanges(before: ReportSnapshot, after: ReportSnapshot): string[] {
@@ -87,7 +87,7 @@ function parameterChanges(before: ReportSnapshot, after: ReportSnapshot): string
   const codes = [...new Set([...after.conditions, ...before.conditions].map(({ code }) => code))]
   return names.flatMap(name => codes
     .filter(code => words(before, name, code) !== words(after, name, code))
-    .map(code => `parameter ${name} in ${code}: ${words(before, name, code)} -> ${words(after, name, code)}`))
+    .map(code => `parameter ${name} in ${code}: ${words(before, name, code)} to ${words(after, name, code)}`))
 }
 
 /**

@@ -33,9 +33,18 @@ const halfWidth = 317
 
 type LoopFigureName = Exclude<FigureName, 'crossingChart'>
 
-/** px; the large figures of a loop, so that two with their captions share a page. */
-const largeHeights: Record<LoopFigureName, number> = { berthChart: 430, returnDifferenceProfile: 300, magnitudePhase: 430, gainOverPhase: 370 }
-const smallHeight = 232
+/**
+ * The large figures of a loop in the order they are printed, and their heights in px: the first is low enough to follow the tables of the
+ * chapter's first page, the next two with their captions fill a page, and the last leaves room for two rows of small ones.
+ */
+const largeFigures = [
+  { name: 'returnDifferenceProfile', height: 280 },
+  { name: 'berthChart', height: 415 },
+  { name: 'magnitudePhase', height: 415 },
+  { name: 'gainOverPhase', height: 350 },
+] as const
+/** px; four rows with their captions fill a page */
+const smallHeight = 180
 
 /** Conditions beside the governing one that are drawn, the worst of them: beyond that a reader looks at the tables. */
 const drawnOthers = 9
@@ -113,8 +122,8 @@ export async function drawReportFigures(snapshot: ReportSnapshot, { prepareGain,
       const input = cell.cell.input
       if (input) drawn.responses.push({ name: responseName(stemOf(cell), '.csv'), csv: responseCsv(input, data.curves[0].curve, unit) })
       if (isGoverning) {
-        for (const name of ['berthChart', 'returnDifferenceProfile', 'magnitudePhase', 'gainOverPhase'] as const) {
-          figuresOfLoop.governing.push(draw(name, data, idOf(name), stemOf(cell), { size: 'full', height: largeHeights[name] }))
+        for (const { name, height } of largeFigures) {
+          figuresOfLoop.governing.push(draw(name, data, idOf(name), stemOf(cell), { size: 'full', height }))
           await breathe()
         }
       }

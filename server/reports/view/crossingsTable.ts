@@ -14,6 +14,9 @@ import { withoutUnit } from './withoutUnit'
 /** Crossings and approaches printed for one loop in one condition; the package holds every one. */
 const printedRows = 200
 
+/** Dips no deeper than the noise of the samples have rows of their own while they are as few as this; else one line tells where they are. */
+const noisyRows = 3
+
 interface Entry {
   frequency: ListedFrequency
   what: string
@@ -31,7 +34,7 @@ const distanceText = (distance: number | undefined) => (distance === undefined ?
 const phaseText = (degrees: number) => (degrees === 0 ? 'none' : `${degrees > 0 ? 'lag' : 'lead'} ${withoutUnit(formatDegrees(degrees))} deg`)
 const gainText = (decibels: number) => (decibels === 0 ? 'none' : `gain may ${decibels > 0 ? 'rise' : 'fall'} ${withoutUnit(formatDecibels(decibels))} dB`)
 
-function entriesOf(analysis: LoopAnalysis): Entry[] {
+function entriesOf(analysis: LoopAnalysis, approaches: LoopAnalysis['closestApproaches']): Entry[] {
   const entries: Entry[] = [
     ...analysis.gainCrossovers.map((crossing): Entry => ({
       frequency: crossing.frequency,
@@ -51,7 +54,7 @@ function entriesOf(analysis: LoopAnalysis): Entry[] {
       distance: distanceText(crossing.distance),
       change: '',
     })),
-    ...analysis.closestApproaches.map((approach): Entry => ({
+    ...approaches.map((approach): Entry => ({
       frequency: approach.frequency,
       what: 'closest approach',
       slope: '',
@@ -65,13 +68,26 @@ function entriesOf(analysis: LoopAnalysis): Entry[] {
   return entries.sort((a, b) => order(a.frequency) - order(b.frequency) || 0)
 }
 
+/** The closest approaches that noise alone would make, where they are so many that they would hide the others; never the vector margin. */
+function noiseOf({ closestApproaches, vectorMargin }: LoopAnalysis): LoopAnalysis['closestApproaches'] {
+  const noisy = closestApproaches.filter(({ withinNoise, frequency }) => withinNoise === true && frequency !== vectorMargin?.frequency)
+  return noisy.length > noisyRows ? noisy : []
+}
+
+function noiseNote(noisy: LoopAnalysis['closestApproaches'], unit: string): string {
+  const shown = noisy.slice(0, printedRows).map(({ frequency }) => formatFrequency(frequency))
+  const least = Math.min(...noisy.map(({ distance }) => distance))
+  return `${noisy.length} more closest approaches are no deeper than the noise of the samples, none nearer than ${formatDistance(least)}: at ${shown.join(', ')}${shown.length < noisy.length ? ' and on' : ''} ${unit}; their values are in the package.`
+}
+
 /**
  * Every crossing and closest approach of one analysis in order of frequency. Where the closed loop is not stable there are no
  * margins: only places and distances to -1 are printed. Null where the analysis found nothing.
  */
 export function crossingsTable(analysis: LoopAnalysis): TableView | null {
   const hasMargins = analysis.summary !== null
-  const entries = entriesOf(analysis)
+  const noisy = noiseOf(analysis)
+  const entries = entriesOf(analysis, analysis.closestApproaches.filter(approach => !noisy.includes(approach)))
   if (entries.length === 0) return null
   const left = entries.length - printedRows
   const columns = [
@@ -95,6 +111,7 @@ export function crossingsTable(analysis: LoopAnalysis): TableView | null {
   }))
   const notes = [
     ...(hasMargins ? [] : ['The closed loop is not shown to be stable, so there are no margins: distances to \u22121 only.']),
+    ...(noisy.length > 0 ? [noiseNote(noisy, analysis.frequencyUnit)] : []),
     ...(left > 0 ? [`${left} more are in tables/crossings.csv and tables/closest-approaches.csv of this revision's package.`] : []),
   ]
   return tableOf({ caption: 'Every crossing and closest approach, in order of frequency', columns, rows, notes, kind: 'crossings' })

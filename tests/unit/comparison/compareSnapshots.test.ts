@@ -72,7 +72,7 @@ describe('comparison of two frozen states', () => {
       parameters: [{ name: 'wz', unit: 'rad/s', notes: '', values: { C1: 2, C2: 2.5 } }],
     })
     const comparison = compareSnapshots(before, after)
-    expect(comparison.criteriaChanges).toEqual(['delay margin: no limit -> 0.01 s'])
-    expect(comparison.parameterChanges).toEqual(['parameter wz in C2: 2 -> 2.5'])
+    expect(comparison.criteriaChanges).toEqual(['delay margin: no limit to 0.01 s'])
+    expect(comparison.parameterChanges).toEqual(['parameter wz in C2: 2 to 2.5'])
   })
 })

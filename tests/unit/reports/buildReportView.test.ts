@@ -45,6 +45,17 @@ describe('the view of a report', () => {
     ])
   })
 
+  it('tells many dips within the noise in one line that names each place, and keeps the vector margin and the others as rows', () => {
+    const dip = (frequency: number, distance: number, withinNoise: boolean) => ({ frequency, distance, gainChange: 1, phaseChange: -1, ...(withinNoise && { withinNoise }) })
+    const analysis = buildAnalysis({
+      closestApproaches: [dip(30, 0.7, false), dip(40, 0.6, true), dip(50, 0.95, true), dip(60, 0.97, true), dip(70, 0.98, true), dip(80, 0.99, true)],
+      vectorMargin: { distance: 0.6, frequency: 40 },
+    })
+    const crossings = viewOf(buildSnapshot({ cells: [buildCell('SL-R', 'C1', analysis), ...buildSnapshot().cells.slice(1)] })).chapters[0]?.conditions[0]?.crossings ?? null
+    expect(texts(crossings).filter(row => row[1] === 'closest approach').map(row => row[0])).toEqual(['30.00', '40.00'])
+    expect(crossings?.notes).toEqual(['4 more closest approaches are no deeper than the noise of the samples, none nearer than 0.950: at 50.00, 60.00, 70.00, 80.00 rad/s; their values are in the package.'])
+  })
+
   it('puts a phase crossover at the end of the axis last, and one at zero first', () => {
     const analysis = buildAnalysis({ phaseCrossovers: [{ frequency: 0, gainMargin: -6.02, slope: 'falling' }, { frequency: 'infinity', gainMargin: 20, slope: 'rising' }] })
     const snapshot = buildSnapshot({ cells: [buildCell('SL-R', 'C1', analysis), ...buildSnapshot().cells.slice(1)] })
