@@ -13,7 +13,7 @@ export interface SpreadLabel {
  */
 export function spreadLabels(labels: readonly SpreadLabel[], from: number, to: number, gap: number, most: number): (number | null)[] {
   const result: (number | null)[] = labels.map(() => null)
-  let order = labels.map((_, i) => i).sort((a, b) => labels[a]!.x - labels[b]!.x || a - b)
+  let order = (labels.length > crowd ? thinned(labels, gap, most) : labels.map((_, i) => i)).sort((a, b) => labels[a]!.x - labels[b]!.x || a - b)
   for (;;) {
     const middles = settle(order.map(i => labels[i]!), from, to, gap)
     let drop = -1
@@ -31,6 +31,25 @@ export function spreadLabels(labels: readonly SpreadLabel[], from: number, to: n
     }
     order = order.filter(index => index !== drop)
   }
+}
+
+/** Beyond this many labels those that cannot find room are left out first: what follows grows with the cube of their number. */
+const crowd = 200
+
+/** Of each stretch `most` wide the weightiest labels, as many as could stand there if each moved as far as it may. */
+function thinned(labels: readonly SpreadLabel[], gap: number, most: number): number[] {
+  const stretches = new Map<number, number[]>()
+  labels.forEach(({ x }, index) => {
+    const stretch = Math.floor(x / most)
+    const indices = stretches.get(stretch)
+    if (indices) indices.push(index)
+    else stretches.set(stretch, [index])
+  })
+  return [...stretches.values()].flatMap((indices) => {
+    const narrowest = indices.reduce((least, index) => Math.min(least, labels[index]!.width), Infinity)
+    const room = Math.ceil(3 * most / (narrowest + gap)) + 1
+    return indices.sort((a, b) => labels[b]!.weight - labels[a]!.weight || a - b).slice(0, room)
+  })
 }
 
 /** Blocks of touching labels, each block as near to the wishes of its labels as can be in the mean. */

@@ -96,6 +96,17 @@ describe('spreading labels along a line', () => {
     expect(spreadLabels(labels, 0, 100, 2, 15)).toEqual([39, null, 61])
   })
 
+  it('finds room for the few of ten thousand that fit, the weightiest among them', () => {
+    const labels = Array.from({ length: 10_000 }, (_, index) => ({ x: 600 * index / 10_000, width: 24, weight: index === 5000 ? 2 : 1 }))
+    const middles = spreadLabels(labels, 0, 600, 4, 20)
+    const kept = middles.flatMap((x, index) => (x === null ? [] : [{ x, moved: Math.abs(x - labels[index]!.x) }]))
+    expect(middles[5000]).not.toBeNull()
+    expect(kept.length).toBeGreaterThan(10)
+    expect(Math.max(...kept.map(({ moved }) => moved))).toBeLessThanOrEqual(20)
+    const places = kept.map(({ x }) => x).sort((a, b) => a - b)
+    expect(Math.min(...places.slice(1).map((x, index) => x - places[index]!))).toBeGreaterThan(24 + 4 - 1e-9)
+  })
+
   it('keeps labels between the ends', () => {
     expect(spreadLabels([{ x: 0, width: 20, weight: 1 }], 0, 100, 2, 20)).toEqual([10])
   })
