@@ -1,10 +1,10 @@
 import { z } from 'zod'
-import { codeField, finiteNumber, nameField, notesField, versionField } from './fields'
+import { codeField, finiteNumber, lineText, nameField, notesField, versionField } from './fields'
 import { limits } from './limits'
 
-const coordinate = z.strictObject({ name: nameField, unit: z.string().trim().max(limits.unit), value: finiteNumber })
+const coordinate = z.strictObject({ name: nameField, unit: lineText.max(limits.unit), value: finiteNumber })
 const coordinatesField = z.array(coordinate).max(limits.coordinates, `At most ${limits.coordinates} coordinates.`)
-const tagsField = z.array(z.string().trim().min(1, 'Must not be empty.').max(limits.tag, `At most ${limits.tag} characters.`)).max(limits.tags, `At most ${limits.tags} tags.`)
+const tagsField = z.array(lineText.min(1, 'Must not be empty.').max(limits.tag, `At most ${limits.tag} characters.`)).max(limits.tags, `At most ${limits.tags} tags.`)
 
 const fields = {
   code: codeField,

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { finiteNumber, idField, notesField, versionField } from './fields'
+import { finiteNumber, idField, lineText, notesField, versionField } from './fields'
 import { limits } from './limits'
 
 /** Names an expression gives a meaning of its own. */
@@ -11,7 +11,7 @@ const parameterSchema = z.strictObject({
   name: z.string().trim().max(limits.unit, `At most ${limits.unit} characters.`)
     .regex(/^[A-Za-z][A-Za-z0-9_]*$/, 'A letter, then letters, digits and underscores.')
     .refine(name => !reservedNames.has(name), 'This name has a meaning of its own in expressions.'),
-  unit: z.string().trim().max(limits.unit, `At most ${limits.unit} characters.`),
+  unit: lineText.max(limits.unit, `At most ${limits.unit} characters.`),
   notes: notesField,
   /** by operating condition id */
   values: z.record(z.string().regex(/^[1-9]\d{0,15}$/, 'Must be the id of a condition.'), finiteNumber),

@@ -1,12 +1,12 @@
 import { z } from 'zod'
-import { idField, nameField, versionField } from './fields'
+import { idField, lineText, linesText, nameField, versionField } from './fields'
 import { limits } from './limits'
 
 /** Characters of the remarks of a report, or of one of its loops. */
 const remarksLength = 20_000
 
-const documentNumberField = z.string().trim().min(1, 'Must not be empty.').max(60, 'At most 60 characters.')
-const remarksField = z.string().max(remarksLength, `At most ${remarksLength} characters.`)
+const documentNumberField = lineText.min(1, 'Must not be empty.').max(60, 'At most 60 characters.')
+const remarksField = linesText.max(remarksLength, `At most ${remarksLength} characters.`)
 
 const coverageField = z.array(idField).max(limits.rows, `At most ${limits.rows}.`)
   .refine(ids => new Set(ids).size === ids.length, 'Each must stand once.')

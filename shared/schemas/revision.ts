@@ -1,8 +1,9 @@
 import { z } from 'zod'
+import { linesText } from './fields'
 
 /** Freezing a report: why this revision is made, as printed in the revision history. */
 export const newRevisionSchema = z.strictObject({
-  changeNote: z.string().trim().min(1, 'Say what changed, or \u2018First issue\u2019.').max(500, 'At most 500 characters.'),
+  changeNote: linesText.trim().min(1, 'Say what changed, or \u2018First issue\u2019.').max(500, 'At most 500 characters.'),
 })
 
 /** Issuing takes no fields: what is issued was frozen before. */
