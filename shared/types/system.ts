@@ -18,8 +18,9 @@ export interface System extends Versioned {
 }
 
 export interface SystemSummary extends System {
-  loopCount: number
-  conditionCount: number
+  /** null for who may read issued revisions only */
+  loopCount: number | null
+  conditionCount: number | null
   /** the caller's roles in this system */
   roles: Role[]
   /** letter of the newest issued revision over all its reports */

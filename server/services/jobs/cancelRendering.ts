@@ -15,7 +15,9 @@ export async function cancelRendering(jobId: number, systemId: number | null, ro
   const facts = { signedIn: true, isAdministrator: context.actor.isAdministrator, roles }
   const mayCancel = found.requestedBy === context.actor.id || can(found.edition === 'issued' ? 'issue a revision' : 'freeze a revision', facts)
   if (!mayCancel) throw new AppError('notAllowed', 'Your role does not allow this.')
-  const job = await cancelJob(jobId, context.clock())
-  await writeTransaction(() => recordAudit(context, 'rendering cancelled', { ...(systemId !== null && { systemId }), subjectId: job.revisionId, payload: { jobId, edition: job.edition } }))
-  return presentJob(job)
+  return writeTransaction(async () => {
+    const job = await cancelJob(jobId, context.clock())
+    await recordAudit(context, 'rendering cancelled', { ...(systemId !== null && { systemId }), subjectId: job.revisionId, payload: { jobId, edition: job.edition } })
+    return presentJob(job)
+  })
 }

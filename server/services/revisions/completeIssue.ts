@@ -3,18 +3,21 @@ import { recordAudit } from '../../audit/recordAudit'
 import type { PersonRow } from '../../database/models/PersonRow'
 import { RevisionRow } from '../../database/models/RevisionRow'
 import { findReport } from '../reports/findReport'
+import { approverObstacle } from './approverObstacle'
 import { obstaclesOf } from './obstaclesOf'
 
 /**
  * Makes a draft the issued revision and the former one superseded, in the write transaction that stores its issued artefacts.
- * The guards are asked again here: between the approver's act and the end of rendering a newer draft may have been frozen.
+ * The guards are asked again here: between the approver's act and the end of rendering a newer draft may have been frozen, or the approver's
+ * role taken away.
  */
 export async function completeIssue(revisionId: number, approver: PersonRow, issuedAt: string): Promise<void> {
   const revision = await RevisionRow.findByPk(revisionId)
   if (revision === null) throw new AppError('notFound', 'There is no such revision.')
-  const obstacles = await obstaclesOf(revision, approver.id, { whileIssuing: true })
-  if (obstacles.length > 0) throw new AppError('refused', `This draft could not be issued. ${obstacles.join(' ')}`, { details: { obstacles } })
   const { systemId } = await findReport(revision.reportId)
+  const obstacle = await approverObstacle(approver.id, systemId)
+  const obstacles = [...(obstacle === null ? [] : [obstacle]), ...await obstaclesOf(revision, approver.id, { whileIssuing: true })]
+  if (obstacles.length > 0) throw new AppError('refused', `This draft could not be issued. ${obstacles.join(' ')}`, { details: { obstacles } })
   const context = { actor: { id: approver.id, name: approver.name, email: approver.email, isAdministrator: approver.isAdministrator }, clock: () => new Date(issuedAt) }
   const former = await RevisionRow.findOne({ where: { reportId: revision.reportId, state: 'issued' } })
   if (former !== null) {

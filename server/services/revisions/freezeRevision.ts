@@ -27,9 +27,10 @@ async function assertFreezable(report: ReportRow): Promise<void> {
 
 /** The revision stored if nothing changed since the stamp was taken; null where it must be tried again. */
 async function tryToFreeze(reportId: number, changeNote: string, context: ServiceContext): Promise<RevisionRow | null> {
+  // The stamp first: whatever is read after it and changed in between, the report's own row too, differs from it at the end.
+  const stamp = await reportStamp(await findReport(reportId))
   const report = await findReport(reportId)
   await assertFreezable(report)
-  const stamp = await reportStamp(report)
   const revisions = await RevisionRow.findAll({ where: { reportId } })
   const draft = { ...nextDraft(revisions), changeNote }
   const snapshot = await collectSnapshot(report, draft, context)

@@ -8,6 +8,7 @@ import { RevisionRow } from '../../database/models/RevisionRow'
 import { enqueueJob } from '../../jobs/enqueueJob'
 import { presentJob } from '../../presenters/presentJob'
 import type { ServiceContext } from '../context'
+import { approverObstacle } from './approverObstacle'
 import { findReport } from '../reports/findReport'
 
 /**
@@ -23,9 +24,12 @@ export function renderAgain(revisionId: number, context: ServiceContext): Promis
     if (last?.state === 'queued' || last?.state === 'running') throw new AppError('conflict', 'This document is being rendered already.')
     if (await ArtefactRow.count({ where: { revisionId, edition } }) > 0) throw new AppError('conflict', 'This document is rendered already.')
     if (edition === 'issued' && last?.state === 'cancelled') throw new AppError('refused', 'Issuing was cancelled: an approver has to issue this draft again.')
-    const requestedBy = edition === 'issued' && last ? last.requestedBy : context.actor.id
-    const job = await enqueueJob({ revisionId, edition, requestedBy }, context.clock())
     const { systemId } = await findReport(revision.reportId)
+    const issue = edition === 'issued' ? last : null
+    const obstacle = issue && await approverObstacle(issue.requestedBy, systemId)
+    if (obstacle) throw new AppError('refused', obstacle, { details: { obstacles: [obstacle] } })
+    // The date of issue is that of the approver's act, whenever the document is rendered.
+    const job = await enqueueJob({ revisionId, edition, requestedBy: issue?.requestedBy ?? context.actor.id }, issue ? new Date(issue.createdAt) : context.clock())
     await recordAudit(context, 'rendering asked for', { systemId, subjectId: revisionId, payload: { edition } })
     return presentJob(job)
   })

@@ -1,3 +1,4 @@
+import { can } from '#shared/access/rules'
 import type { Role } from '#shared/types/person'
 import type { SystemSummary } from '#shared/types/system'
 import { col, fn } from 'sequelize'
@@ -17,13 +18,15 @@ export async function listSystems(context: ServiceContext): Promise<SystemSummar
   const systems = await SystemRow.findAll({ where, order: ['name', 'id'] })
   const ids = systems.map(system => system.id)
   const [loopCounts, conditionCounts, newestIssues] = await Promise.all([countBySystem(LoopRow, ids), countBySystem(ConditionRow, ids), newestIssueBySystem(ids)])
-  return systems.map(system => ({
-    ...presentSystem(system),
-    loopCount: loopCounts.get(system.id) ?? 0,
-    conditionCount: conditionCounts.get(system.id) ?? 0,
-    roles: memberships.filter(membership => membership.systemId === system.id).map((membership): Role => membership.role),
-    newestIssue: newestIssues.get(system.id) ?? null,
-  }))
+  return systems.map((system) => {
+    const roles = memberships.filter(membership => membership.systemId === system.id).map((membership): Role => membership.role)
+    const newestIssue = newestIssues.get(system.id) ?? null
+    // To a customer nothing is told of what was not issued.
+    if (!can('see loops, data and drafts', { signedIn: true, isAdministrator: context.actor.isAdministrator, roles })) {
+      return { ...presentSystem(system), description: '', loopCount: null, conditionCount: null, roles, newestIssue }
+    }
+    return { ...presentSystem(system), loopCount: loopCounts.get(system.id) ?? 0, conditionCount: conditionCounts.get(system.id) ?? 0, roles, newestIssue }
+  })
 }
 
 async function countBySystem(model: typeof LoopRow | typeof ConditionRow, systemId: number[]): Promise<Map<number, number>> {

@@ -4,6 +4,7 @@ import type { Report, Revision } from '#shared/types/report'
 import { closeAnalysisPool } from '#server/adapters/analysisPool/analysisPool'
 import { createChromiumPrinter } from '#server/adapters/chromium/chromiumPrinter'
 import type { PdfPrinter } from '#server/adapters/chromium/PdfPrinter'
+import { database as connection } from '#server/database/database'
 import { ArtefactRow } from '#server/database/models/ArtefactRow'
 import { JobEvent } from '#server/database/models/JobEvent'
 import { JobRow } from '#server/database/models/JobRow'
@@ -93,6 +94,20 @@ describe('the queue of jobs', () => {
     expect(job.state).toBe('cancelled')
     expect(await artefacts(revision.id)).toBe(0)
     await expect(cancelRendering(job.id, team.system.id, ['engineer'], engineer())).rejects.toMatchObject({ code: 'conflict' })
+  })
+
+  it('is not cancelled where the audit cannot say so: both or neither', async () => {
+    const { printer, begun } = waitingPrinter()
+    start(printer)
+    const revision = await freeze()
+    await begun
+    const jobId = revision.job?.id ?? 0
+    await connection().query('CREATE TRIGGER audit_is_full BEFORE INSERT ON audit_events BEGIN SELECT RAISE(ABORT, \'full\'); END')
+    const refused = await cancelRendering(jobId, team.system.id, ['engineer'], engineer()).then(() => 'cancelled', String)
+    await connection().query('DROP TRIGGER audit_is_full')
+    expect(refused).toMatch(/^Sequelize.*Error/)
+    expect((await JobRow.findByPk(jobId))?.state).toBe('running')
+    expect((await cancelRendering(jobId, team.system.id, ['engineer'], engineer())).state).toBe('cancelled')
   })
 
   it('is not cancelled by someone who may neither freeze nor asked for it', async () => {

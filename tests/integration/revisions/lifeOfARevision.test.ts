@@ -1,20 +1,24 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
 import type { Report, Revision } from '#shared/types/report'
 import type { Role } from '#shared/types/person'
 import { AuditEvent } from '#server/database/models/AuditEvent'
+import { ReportRow } from '#server/database/models/ReportRow'
 import { RevisionRow } from '#server/database/models/RevisionRow'
 import type { Actor } from '#server/services/context'
 import { updateLoop } from '#server/services/loops/updateLoop'
+import { replaceMembers } from '#server/services/members/replaceMembers'
 import { createReport } from '#server/services/reports/createReport'
 import { listReports } from '#server/services/reports/listReports'
 import { updateReport } from '#server/services/reports/updateReport'
 import { compareRevisions } from '#server/services/revisions/compareRevisions'
 import { freezeRevision } from '#server/services/revisions/freezeRevision'
 import { issueRevision } from '#server/services/revisions/issueRevision'
+import { renderAgain } from '#server/services/revisions/renderAgain'
 import { readArtefact } from '#server/services/revisions/readArtefact'
 import { readRevision } from '#server/services/revisions/readRevision'
 import { readSnapshot, readSnapshotText } from '#server/services/revisions/readSnapshot'
 import { revisionReader } from '#server/services/revisions/RevisionReader'
+import { listSystems } from '#server/services/systems/listSystems'
 import { updateSystem } from '#server/services/systems/updateSystem'
 import { closeAnalysisPool } from '#server/adapters/analysisPool/analysisPool'
 import { canonicalJson } from '#server/reports/canonicalJson'
@@ -24,7 +28,7 @@ import { buildRunner } from '../../factories/buildRunner'
 import { buildCondition, buildLoop, buildSource } from '../../factories/buildSystem'
 import { contextOf } from '../../factories/contextOf'
 import { openTestDatabase } from '../../factories/openTestDatabase'
-import { seedTeam } from '../../factories/seedTeam'
+import { seedTeam, teamEmails } from '../../factories/seedTeam'
 import type { SeededTeam } from '../../factories/seedTeam'
 import { waitForJob } from '../../factories/waitForJob'
 
@@ -96,6 +100,20 @@ describe('freezing a report', () => {
     expect(job.error).toBeNull()
     const { revision: rendered } = await readRevision(revision.id, readerOf(team.people.engineer, 'engineer'))
     expect(rendered.artefacts.map(({ kind, edition }) => `${edition} ${kind}`)).toEqual(['draft html', 'draft pdf', 'draft zip'])
+  })
+
+  it('freezes the newest report when somebody changes it between its first reading and the snapshot', async () => {
+    const findByPk = ReportRow.findByPk.bind(ReportRow)
+    const other = await createReport(team.system.id, { title: 'Old title', documentNumber: 'D-5' }, engineer())
+    const spy = vi.spyOn(ReportRow, 'findByPk').mockImplementationOnce(async (id, options) => {
+      const stale = await findByPk(id, options)
+      await updateReport(other.id, { version: 1, title: 'New title', loopIds: [team.loop.id], conditionIds: [team.condition.id] }, engineer())
+      return stale
+    })
+    const revision = await freezeRevision(other.id, { changeNote: 'x' }, engineer())
+    spy.mockRestore()
+    expect((await readSnapshot(revision.id)).report.title).toBe('New title')
+    await waitForJob(revision.id, 'done')
   })
 
   it('keeps what was frozen when the system changes afterwards', async () => {
@@ -182,14 +200,41 @@ describe('issuing a draft', () => {
   })
 })
 
+describe('an approver whose role is taken away while the issued document is rendered', () => {
+  const roles = (withApprover: boolean) => replaceMembers(team.system.id, [
+    { email: teamEmails.engineer, roles: ['engineer'] }, { email: teamEmails.customer, roles: ['customer'] },
+    ...(withApprover ? [{ email: teamEmails.approver, roles: ['approver' as const] }] : []),
+  ], engineer())
+
+  it('issues nothing; asked for again in their name it is refused until they are approver again, and bears the time of their own act', async () => {
+    const draft = await frozenAndRendered('Fourth issue')
+    duringPrint = async () => {
+      duringPrint = async () => undefined
+      await roles(false)
+    }
+    await issueRevision(draft.id, approver())
+    const job = await waitForJob(draft.id, 'failed', 'done')
+    const words = 'This draft could not be issued. Cy Approver is no approver of this system any more: another approver has to issue it.'
+    expect(job).toMatchObject({ state: 'failed', error: words })
+    expect((await readRevision(draft.id, readerOf(team.people.engineer, 'engineer'))).revision.state).toBe('draft')
+    await expect(renderAgain(draft.id, engineer())).rejects.toMatchObject({ code: 'refused' })
+    await roles(true)
+    await renderAgain(draft.id, engineer())
+    await waitForJob(draft.id, 'done')
+    expect((await readRevision(draft.id, readerOf(team.people.engineer, 'engineer'))).revision).toMatchObject({ state: 'issued', issuedBy: 'Cy Approver', issuedAt: job.createdAt })
+  })
+})
+
 describe('a customer', () => {
   it('sees issued and superseded revisions, nothing of any draft, and no report that was never issued', async () => {
     const reader = readerOf(team.people.customer, 'customer')
     const reports = await listReports(team.system.id, reader)
     expect(reports.map(({ report: { id, loopIds, remarks } }) => [id, loopIds, remarks])).toEqual([[report.id, [], '']])
     expect(reports[0]?.revisions.map(({ label, state, job, artefacts }) => [label, state, job, [...new Set(artefacts.map(({ edition }) => edition))]])).toEqual([
-      ['B', 'issued', null, ['issued']], ['A', 'superseded', null, ['issued']],
+      ['C', 'issued', null, ['issued']], ['B', 'superseded', null, ['issued']], ['A', 'superseded', null, ['issued']],
     ])
+    const [system] = await listSystems(contextOf(team.people.customer))
+    expect(system).toMatchObject({ name: team.system.name, newestIssue: 'C', description: '', loopCount: null, conditionCount: null })
     const draft = await RevisionRow.findOne({ where: { reportId: report.id, state: 'draft' } })
     await expect(readRevision(draft?.id ?? 0, reader)).rejects.toMatchObject({ code: 'notFound' })
     const issued = reports[0]?.revisions[0]?.id ?? 0
@@ -202,7 +247,7 @@ describe('a customer', () => {
     const [newer, older] = (await listReports(team.system.id, reader))[0]?.revisions ?? []
     for (const [one, two] of [[newer, older], [older, newer]]) {
       const comparison = await compareRevisions(one?.id ?? 0, two?.id ?? 0, reader)
-      expect([comparison.before.label, comparison.after.label]).toEqual(['A', 'B'])
+      expect([comparison.before.label, comparison.after.label]).toEqual(['B', 'C'])
     }
   })
 })
