@@ -19,7 +19,7 @@ export interface MeasurementPreview {
   comments: string[]
   /** a first mapping for a person to confirm; null where the head and the numbers say too little */
   guess: MeasurementMapping | null
-  /** rows that hold something that is no number; where the file is no table, one problem at line 0 */
+  /** rows that hold something that is no number; where the file is no table, the one problem that says so */
   rejectedRows: MeasurementProblem[]
 }
 
@@ -32,7 +32,7 @@ export interface MeasurementPreview {
 export function previewMeasurement(text: string, shown = 12): MeasurementPreview {
   const table = readTable(text)
   if ('message' in table) {
-    return { columns: [], rows: [], rowCount: 0, dialect: null, comments: [], guess: null, rejectedRows: [{ line: 0, message: table.message }] }
+    return { columns: [], rows: [], rowCount: 0, dialect: null, comments: [], guess: null, rejectedRows: [{ line: table.line ?? 0, message: table.message }] }
   }
   const columns = readColumns(table)
   const { dialect, comments, rows } = table

@@ -18,7 +18,7 @@ export interface MeasurementReading {
  */
 export function readMeasurement(text: string, mapping: MeasurementMapping): MeasurementReading {
   const table = readTable(text)
-  if ('message' in table) return failed([{ line: 0, message: table.message }])
+  if ('message' in table) return failed([{ line: table.line ?? 0, message: table.message }])
   const mappingProblem = problemOfMapping(table, mapping)
   if (mappingProblem !== null) return failed([{ line: 0, message: mappingProblem }])
   if (table.rows.length > measurementLimits.rows) {

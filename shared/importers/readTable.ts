@@ -24,9 +24,9 @@ const comment = /^\s*(?:#|%|\/\/)\s?(.*)$/
 
 /**
  * A text file as a table: byte order mark, line ends, comments and blank lines taken away, line numbers kept.
- * Returns a message in place of the table where the file cannot be one.
+ * Returns a message, where it can with the line, in place of the table where the file cannot be one.
  */
-export function readTable(text: string): Table | { message: string } {
+export function readTable(text: string): Table | { message: string, line?: number } {
   if (text.length > measurementLimits.characters) {
     return { message: `The file has ${text.length} characters; at most ${measurementLimits.characters} (20 MB) are read.` }
   }
@@ -43,14 +43,19 @@ export function readTable(text: string): Table | { message: string } {
     return { message: 'No line of the file reads as three numbers: columns may be separated by comma, semicolon or tabulator, and there must be at least frequency and two values.' }
   }
   const rows = rowsOf(lines.join('\n'), dialect)
+  if ('message' in rows) return rows
   const first = rows.findIndex(row => isNumeric(row.cells, dialect))
   return { dialect, comments, head: rows.slice(0, first), rows: rows.slice(first) }
 }
 
-function rowsOf(text: string, dialect: Dialect): TableRow[] {
+function rowsOf(text: string, dialect: Dialect): TableRow[] | { message: string, line: number } {
   const rows: TableRow[] = []
   let line = 1
-  for (const cells of Papa.parse<string[]>(text, { delimiter: dialect.delimiter, newline: '\n' }).data) {
+  const { data, errors } = Papa.parse<string[]>(text, { delimiter: dialect.delimiter, newline: '\n' })
+  const unquoted = errors.find(error => error.type === 'Quotes')?.row
+  for (const [index, cells] of data.entries()) {
+    // The rows a stray quotation mark swallows would be missing without a word.
+    if (index === unquoted) return { line, message: 'A quotation mark in this line is not closed, or not where a cell ends: all up to the end of the file would be one cell. Take it away.' }
     if (cells.some(cell => cell.trim() !== '')) rows.push({ line, cells: cells.map(cell => cell.trim()) })
     // A quoted cell may hold line ends of its own.
     line += 1 + cells.reduce((sum, cell) => sum + (cell.includes('\n') ? cell.split('\n').length - 1 : 0), 0)

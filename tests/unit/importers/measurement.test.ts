@@ -36,6 +36,7 @@ describe('readMeasurement tells what is wrong by line number and stores nothing'
     ['a negative frequency', '-1,0,-90\n2,-3,-100', 1, /negative/],
     ['a repeated frequency', '1,0,-90\n2,-3,-100\n\n2,-3,-100', 4, /repeats that of line 2/],
     ['an unsorted frequency', '1,0,-90\n3,-3,-100\n2,-3,-100', 3, /below that of line 2 \(3\)/],
+    ['a quotation mark that never ends, in a column of remarks', 'f,dB,deg,remark\n1,0,-90,\n2,-3,-100,"ok\n3,-6,-120,\n4,-9,-130,', 3, /quotation mark .* end of the file/],
     ['a gain too large for a number', '1,0,-90\n2,99999,-100', 2, /out of range/],
   ])('%s', (_, text, line, message) => {
     const reading = readMeasurement(text, mapping)

@@ -33,6 +33,8 @@ describe('CSV of the package', () => {
 describe('names inside the package', () => {
   it('holds nothing a file system could take for a path, a device or an option', () => {
     expect([fileNameOf('../../etc/passwd'), fileNameOf('-rf'), fileNameOf('NUL'), fileNameOf(''), fileNameOf('\u00c5xe 1')]).toEqual(['etc-passwd', 'rf', 'NUL_', 'unnamed', 'Axe-1'])
+    // A device's name stays one before a point, and a name cut to length ends in no point.
+    expect([fileNameOf('con.1'), fileNameOf(`${'x'.repeat(59)}.y`), fileNameOf('console')]).toEqual(['con_.1', 'x'.repeat(59), 'console'])
   })
 
   it('gives two loops whose codes read alike different names', () => {
