@@ -9,6 +9,8 @@ export interface SampledCurve {
   frequency: Float64Array
   re: Float64Array
   im: Float64Array
+  /** the line ends here, short of the range asked for: beyond it the loop gain turns too often to be drawn; in the unit of `frequency` */
+  drawnTo?: number
 }
 
 /** A measured point of L with the radius of its confidence disc, where coherence and averages were given. */

@@ -52,8 +52,8 @@ function buildCurve({ name, analysis, gain, sampleFrequencies, sampleTime }: Cur
     ...(untrusted ?? []).flatMap(({ from, to }) => [from, to]),
   ].filter((frequency): frequency is number => typeof frequency === 'number' && frequency > 0).map(frequency => frequency * unit)
   const seeds = Array.from(sampleFrequencies ?? [], frequency => frequency * unit)
-  const { frequency, re, im } = sampleLoopGain(gain, { from: range.from * unit, to: range.to * unit, exact, seeds })
-  const curve: FigureCurve = { name, analysis, curve: { frequency: frequency.map(w => w / unit), re, im } }
+  const { frequency, re, im, drawnTo } = sampleLoopGain(gain, { from: range.from * unit, to: range.to * unit, exact, seeds })
+  const curve: FigureCurve = { name, analysis, curve: { frequency: frequency.map(w => w / unit), re, im, ...(drawnTo !== undefined && { drawnTo: drawnTo / unit }) } }
   if (measured) {
     curve.samples = measuredSamples(analysis, gain, sampleFrequencies, unit)
     curve.untrusted = untrusted

@@ -1,5 +1,5 @@
 import type { LoopFigureData } from '../FigureData'
-import { measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
+import { drawnToWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in a berth chart. */
 export function captionOfBerthChart({ title, curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
@@ -11,6 +11,7 @@ export function captionOfBerthChart({ title, curves: [main], requiredVectorMargi
     stabilityWords(main.analysis),
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
     'Triangles are gain crossovers (point down: gain falling), diamonds phase crossovers, circles closest approaches.',
+    drawnToWords(main, frequencyUnit),
     measuredWords(main, true),
   )
 }

@@ -1,6 +1,6 @@
 import type { LoopFigureData } from '../FigureData'
 import { hasMargins } from '../text/markWords'
-import { measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
+import { drawnToWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in gain over phase. */
 export function captionOfGainOverPhase({ title, curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
@@ -10,6 +10,7 @@ export function captionOfGainOverPhase({ title, curves: [main], requiredVectorMa
     stabilityWords(main.analysis),
     hasMargins(main.analysis) ? 'The way from a cross to the curve is gain margin when vertical, phase margin when horizontal.' : '',
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
+    drawnToWords(main, frequencyUnit),
     measuredWords(main, true).replace(', with their 95 % confidence discs where coherence was recorded', ''),
   )
 }

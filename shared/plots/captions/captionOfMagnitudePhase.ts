@@ -1,6 +1,6 @@
 import type { LoopFigureData } from '../FigureData'
 import { hasMargins } from '../text/markWords'
-import { countWords, halfSampleRateWords, measuredWords, sentences, stabilityWords } from './captionWords'
+import { countWords, drawnToWords, halfSampleRateWords, measuredWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in gain and phase over frequency. */
 export function captionOfMagnitudePhase({ title, curves: [main], frequencyUnit }: LoopFigureData): string {
@@ -13,6 +13,7 @@ export function captionOfMagnitudePhase({ title, curves: [main], frequencyUnit }
     stabilityWords(analysis),
     bars,
     halfSampleRateWords(main.halfSampleRate, frequencyUnit),
+    drawnToWords(main, frequencyUnit),
     measuredWords(main, false),
   )
 }

@@ -1,5 +1,5 @@
 import type { LoopFigureData } from '../FigureData'
-import { countWords, halfSampleRateWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
+import { countWords, drawnToWords, halfSampleRateWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in a return difference profile. */
 export function captionOfReturnDifferenceProfile({ title, curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
@@ -11,6 +11,7 @@ export function captionOfReturnDifferenceProfile({ title, curves: [main], requir
     stabilityWords(main.analysis),
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
     halfSampleRateWords(main.halfSampleRate, frequencyUnit),
+    drawnToWords(main, frequencyUnit),
     measuredWords(main, false),
   )
 }

@@ -43,6 +43,11 @@ export function measuredWords({ samples, untrusted, analysis }: FigureCurve, inP
   return sentences(points, trust, noise)
 }
 
+/** Where the line ends short of the last crossing. */
+export function drawnToWords({ curve: { drawnTo } }: FigureCurve, unit: FrequencyUnit): string {
+  return drawnTo === undefined ? '' : `Beyond ${formatFrequency(drawnTo, unit)} the loop gain turns too often to be drawn: the line ends there, the marks go on.`
+}
+
 /** Where the axis of a sampled loop ends. */
 export function halfSampleRateWords(frequency: number | undefined, unit: FrequencyUnit): string {
   return frequency === undefined ? '' : `The axis ends at half the sample rate, ${formatFrequency(frequency, unit)}.`

@@ -21,7 +21,7 @@ export interface SampleOptions {
 
 /** dB; beyond these no figure shows a difference. */
 const clampedGain = 130
-/** Evaluations after which a stretch is taken as it is. */
+/** Evaluations after which the line ends: a chord over what was not looked at would be a made-up curve. */
 const effort = 60_000
 /** deg */
 const longestPhaseStep = 60
@@ -38,6 +38,7 @@ const decadePixels = Math.LN10
  * in every figure at once: gain, phase and |1 + L| over frequency, gain over phase, and the neighbourhood of -1.
  * Features (roots near the axis, with their widths) are looked at first, so that a resonance of damping 1e-5 is drawn whole; the samples the
  * drawing does not need are dropped again. Frequencies of the result are in rad/s; a sample of NaN parts breaks the line (a pole on the boundary).
+ * Where so many turns would have to be followed that the effort ends, the line ends too, and `drawnTo` says where.
  */
 export function sampleLoopGain(gain: LoopGain, options: SampleOptions): SampledCurve {
   const from = Math.max(options.from, gain.axisStart)
@@ -53,11 +54,17 @@ export function sampleLoopGain(gain: LoopGain, options: SampleOptions): SampledC
   // Stage 1: enough points that every chord is close to the curve.
   const dense: SamplePoint[] = []
   let evaluations = starts.length
+  let drawnTo: number | undefined
   let previous: SamplePoint | undefined
   const refine = (a: SamplePoint, b: SamplePoint, depth: number): void => {
     const tooNarrow = depth >= 48 || b.w - a.w <= 4e-14 * b.w
-    if (tooNarrow || evaluations > effort) {
-      if (a.valid && b.valid && Math.abs(wrapDegrees(b.phase - a.phase)) > 120 && tooNarrow) dense.push(invalidBetween(a, b))
+    if (evaluations > effort && !tooNarrow) {
+      drawnTo ??= a.w
+      dense.push(invalidBetween(a, b), b)
+      return
+    }
+    if (tooNarrow) {
+      if (a.valid && b.valid && Math.abs(wrapDegrees(b.phase - a.phase)) > 120) dense.push(invalidBetween(a, b))
       dense.push(b)
       return
     }
@@ -101,6 +108,7 @@ export function sampleLoopGain(gain: LoopGain, options: SampleOptions): SampledC
     frequency: Float64Array.from(kept, point => point.w),
     re: Float64Array.from(kept, point => point.valid ? point.re : Number.NaN),
     im: Float64Array.from(kept, point => point.valid ? point.im : Number.NaN),
+    ...(drawnTo !== undefined && { drawnTo }),
   }
 }
 
