@@ -22,6 +22,8 @@ function createFigureNumberer(): (figure: Omit<FigureView, 'number'>) => FigureV
   }
 }
 
+const counted = (count: number, noun: string) => `${count} ${noun}${count === 1 ? '' : 's'}`
+
 /** As a browser reads a title (HTML, document.title): white space stripped and collapsed. The printer compares the two. */
 const oneLine = (text: string) => text.replace(/[\t\n\f\r ]+/g, ' ').trim()
 
@@ -76,7 +78,7 @@ export function buildReportView(snapshot: ReportSnapshot, edition: EditionFacts,
     matrix: {
       number: '2',
       anchor: 'matrix',
-      introduction: `${system.name}: ${snapshot.loops.length} loops in ${snapshot.conditions.length} operating conditions. Criteria: ${criteriaLine(snapshot.criteria)}. The bar runs to the vector margin; its dotted mark is the limit.`,
+      introduction: `${system.name}: ${counted(snapshot.loops.length, 'loop')} in ${counted(snapshot.conditions.length, 'operating condition')}. Criteria: ${criteriaLine(snapshot.criteria)}. The bar runs to the vector margin; its dotted mark is the limit.`,
       tables: matrixTables(snapshot, cells),
     },
     chapters,

@@ -13,15 +13,16 @@ const meetsCriticalPoint = 1e-14
  */
 export function measuredStability(input: MeasuredInput, curve: MeasuredCurve, openGap: { from: number, to: number } | null): Stability {
   const { stayedStable } = input.measured
+  const unit = input.frequencyUnit ?? 'rad/s'
   const poles = input.openLoopUnstablePoles ?? null
   const meeting = curve.re.findIndex((re, i) => Math.hypot(1 + re, curve.im[i]!) <= meetsCriticalPoint)
   if (meeting >= 0) {
     return { verdict: 'marginal', basis: 'counted', openLoopUnstablePoles: poles, encirclements: null, closedLoopUnstablePoles: null,
-      reason: `The sample at ${figure(curve.frequency[meeting]!)} lies on -1.` }
+      reason: `The sample at ${figure(curve.frequency[meeting]!)} ${unit} lies on -1.` }
   }
   const count = openGap === null
     ? countEncirclements(curve, input.openLoopOriginPoles)
-    : { reason: `between the samples at ${figure(openGap.from)} and ${figure(openGap.to)} the locus may pass -1 on either side` }
+    : { reason: `between the samples at ${figure(openGap.from)} and ${figure(openGap.to)} ${unit} the locus may pass -1 on either side` }
   const encirclements = 'encirclements' in count ? count.encirclements : null
   const closed = encirclements === null || poles === null ? null : poles - encirclements
   const numbers = { openLoopUnstablePoles: poles, encirclements, closedLoopUnstablePoles: closed }

@@ -123,6 +123,12 @@ describe('the view of a report', () => {
     expect(words).toContain('s, zeros and poles are in rad/s')
   })
 
+  it('counts one loop as one', () => {
+    const { loops, cells } = buildSnapshot()
+    const snapshot = buildSnapshot({ loops: loops.slice(0, 1), cells: cells.slice(0, 2) })
+    expect(viewOf(snapshot).matrix.introduction).toMatch(/^Tern 30 access gangway: 1 loop in 2 operating conditions\. /)
+  })
+
   it('has a title that a browser reads back as it stands: white space is one space', () => {
     const { report } = buildSnapshot()
     expect(viewOf(buildSnapshot({ report: { ...report, title: 'Margins  of\tall\naxes' } })).documentTitle).toBe('WB-0042 B draft 2: Margins of all axes')

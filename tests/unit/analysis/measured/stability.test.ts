@@ -56,7 +56,7 @@ describe('the verdict where the loop was seen to stay stable', () => {
     const coarse = logSpaced(0.01, 200, 12)
     const verdict = stabilityOf([2], [1, 1, 0], { ...known, stayedStable: true }, coarse)
     expect(verdict).toMatchObject({ verdict: 'stable', basis: 'observed', encirclements: null })
-    expect(verdict.reason).toMatch(/may pass -1 on either side/)
+    expect(verdict.reason).toMatch(/between the samples at [\d.]+ and [\d.]+ rad\/s the locus may pass -1 on either side/)
   })
 })
 
