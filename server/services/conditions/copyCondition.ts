@@ -6,6 +6,7 @@ import { ConditionRow } from '../../database/models/ConditionRow'
 import { ParameterValue } from '../../database/models/ParameterValue'
 import { presentCondition } from '../../presenters/presentCondition'
 import { assertCodeFree } from '../assertCodeFree'
+import { assertRoom } from '../assertRoom'
 import { nowOf, type ServiceContext } from '../context'
 import { nextPosition } from '../nextPosition'
 import { copySources } from '../sources/copySources'
@@ -16,6 +17,7 @@ export function copyCondition(conditionId: number, fields: ConditionCopy, contex
   return writeTransaction(async () => {
     const original = await findCondition(conditionId)
     await assertCodeFree(ConditionRow, original.systemId, fields.code)
+    await assertRoom(ConditionRow, original.systemId)
     const { systemId, coordinates, tags, notes } = original
     const copy = await ConditionRow.create({ systemId, coordinates, tags, notes, ...fields, position: await nextPosition(ConditionRow, systemId), version: 1, createdAt: nowOf(context) })
     const values = await ParameterValue.findAll({ where: { conditionId } })

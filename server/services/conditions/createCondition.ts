@@ -1,5 +1,3 @@
-import { AppError } from '#shared/errors/AppError'
-import { limits } from '#shared/schemas/limits'
 import type { NewCondition } from '#shared/schemas/condition'
 import type { OperatingCondition } from '#shared/types/system'
 import { recordAudit } from '../../audit/recordAudit'
@@ -7,6 +5,7 @@ import { writeTransaction } from '../../database/database'
 import { ConditionRow } from '../../database/models/ConditionRow'
 import { presentCondition } from '../../presenters/presentCondition'
 import { assertCodeFree } from '../assertCodeFree'
+import { assertRoom } from '../assertRoom'
 import { nowOf, type ServiceContext } from '../context'
 import { nextPosition } from '../nextPosition'
 
@@ -14,7 +13,7 @@ import { nextPosition } from '../nextPosition'
 export function createCondition(systemId: number, fields: NewCondition, context: ServiceContext): Promise<OperatingCondition> {
   return writeTransaction(async () => {
     await assertCodeFree(ConditionRow, systemId, fields.code)
-    if (await ConditionRow.count({ where: { systemId } }) >= limits.rows) throw new AppError('refused', `A system holds at most ${limits.rows} operating conditions.`)
+    await assertRoom(ConditionRow, systemId)
     const condition = await ConditionRow.create({ ...fields, systemId, position: await nextPosition(ConditionRow, systemId), version: 1, createdAt: nowOf(context) })
     await recordAudit(context, 'condition created', { systemId, subjectId: condition.id, payload: { ...fields } })
     return presentCondition(condition)

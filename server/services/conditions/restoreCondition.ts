@@ -5,6 +5,7 @@ import { writeTransaction } from '../../database/database'
 import { ConditionRow } from '../../database/models/ConditionRow'
 import { presentCondition } from '../../presenters/presentCondition'
 import { assertCodeFree } from '../assertCodeFree'
+import { assertRoom } from '../assertRoom'
 import type { ServiceContext } from '../context'
 
 /** Brings a deleted operating condition back to its place. Throws 'conflict' where its code has been taken since. */
@@ -14,6 +15,7 @@ export function restoreCondition(conditionId: number, context: ServiceContext): 
     if (condition === null) throw new AppError('notFound', 'There is no such operating condition.')
     if (condition.deletedAt !== null) {
       await assertCodeFree(ConditionRow, condition.systemId, condition.code)
+      await assertRoom(ConditionRow, condition.systemId)
       await condition.update({ deletedAt: null })
       await recordAudit(context, 'condition restored', { systemId: condition.systemId, subjectId: conditionId })
     }

@@ -5,6 +5,7 @@ import { writeTransaction } from '../../database/database'
 import { LoopRow } from '../../database/models/LoopRow'
 import { presentLoop } from '../../presenters/presentLoop'
 import { assertCodeFree } from '../assertCodeFree'
+import { assertRoom } from '../assertRoom'
 import { nowOf, type ServiceContext } from '../context'
 import { nextPosition } from '../nextPosition'
 import { copySources } from '../sources/copySources'
@@ -15,6 +16,7 @@ export function copyLoop(loopId: number, fields: LoopCopy, context: ServiceConte
   return writeTransaction(async () => {
     const original = await findLoop(loopId)
     await assertCodeFree(LoopRow, original.systemId, fields.code)
+    await assertRoom(LoopRow, original.systemId)
     const { systemId, axis, breakPoint, otherLoops, notes } = original
     const copy = await LoopRow.create({ systemId, axis, breakPoint, otherLoops, notes, ...fields, position: await nextPosition(LoopRow, systemId), version: 1, createdAt: nowOf(context) })
     await copySources({ loopId }, source => ({ loopId: copy.id, conditionId: source.conditionId }), context)

@@ -1,5 +1,3 @@
-import { AppError } from '#shared/errors/AppError'
-import { limits } from '#shared/schemas/limits'
 import type { NewLoop } from '#shared/schemas/loop'
 import type { Loop } from '#shared/types/system'
 import { recordAudit } from '../../audit/recordAudit'
@@ -7,6 +5,7 @@ import { writeTransaction } from '../../database/database'
 import { LoopRow } from '../../database/models/LoopRow'
 import { presentLoop } from '../../presenters/presentLoop'
 import { assertCodeFree } from '../assertCodeFree'
+import { assertRoom } from '../assertRoom'
 import { nowOf, type ServiceContext } from '../context'
 import { nextPosition } from '../nextPosition'
 
@@ -14,7 +13,7 @@ import { nextPosition } from '../nextPosition'
 export function createLoop(systemId: number, fields: NewLoop, context: ServiceContext): Promise<Loop> {
   return writeTransaction(async () => {
     await assertCodeFree(LoopRow, systemId, fields.code)
-    if (await LoopRow.count({ where: { systemId } }) >= limits.rows) throw new AppError('refused', `A system holds at most ${limits.rows} loops.`)
+    await assertRoom(LoopRow, systemId)
     const loop = await LoopRow.create({ ...fields, systemId, position: await nextPosition(LoopRow, systemId), version: 1, createdAt: nowOf(context) })
     await recordAudit(context, 'loop created', { systemId, subjectId: loop.id, payload: { ...fields } })
     return presentLoop(loop)
