@@ -50,7 +50,7 @@ describe('comparison of two frozen states', () => {
     const { conditions, parameters } = buildSnapshot()
     const before = buildSnapshot({ conditions: [conditions[0]!, { ...conditions[1]!, code: 'constructor' }], cells: [] })
     const after = { ...before, parameters: [{ ...parameters[0]!, values: { constructor: 3 } }] } as typeof before
-    expect(compareSnapshots(before, after).parameterChanges).toEqual(['parameter wz in C1: 2 -> none', 'parameter wz in constructor: none -> 3'])
+    expect(compareSnapshots(before, after).parameterChanges).toEqual(['parameter wz in C1: 2 to none', 'parameter wz in constructor: none to 3'])
   })
 
   it('names loops and conditions that only one of them covers, and lists what only the earlier one has last', () => {
