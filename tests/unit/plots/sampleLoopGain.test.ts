@@ -56,6 +56,19 @@ describe('sampling a loop gain for the figures', () => {
     for (let i = 1; i < frequency.length; i++) expect(frequency[i]! - frequency[i - 1]!).toBeLessThan(Math.PI)
   })
 
+  it('ends the line, and says where, when the turns are more than it can follow: never a chord over what it did not look at', () => {
+    // closed form: 80 s of dead time turn L by 80 rad for each rad/s, some 13 turns; 1e4 rad/s hold more than 1e5 turns
+    const gain = loopGainOfRoots({ gain: 5, poles: [[-1, 0]], deadTime: 80 })
+    const exact = [5000, 5001, 9000]
+    const { frequency, re, drawnTo } = sampleLoopGain(gain, { from: 1, to: 1e4, exact, mostPoints: 200_000 })
+    expect(drawnTo).toBeGreaterThan(1)
+    expect(drawnTo).toBeLessThan(5000)
+    for (let i = 1; i < frequency.length; i++) {
+      if (frequency[i]! > drawnTo! && Number.isFinite(re[i]!)) expect(re[i - 1]).toBeNaN()
+    }
+    expect(sampleLoopGain(resonant(0.01), { from: 1, to: 1000 }).drawnTo).toBeUndefined()
+  })
+
   it('stays within its tolerance of the curve everywhere near -1', () => {
     const gain = resonant(0.003)
     const { frequency, re, im } = sampleLoopGain(gain, { from: 1, to: 1000 })
