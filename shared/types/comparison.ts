@@ -36,7 +36,7 @@ export interface RevisionComparison {
   loopsRemoved: string[]
   conditionsAdded: string[]
   conditionsRemoved: string[]
-  /** in words, such as 'gain margin: 6 dB -> 8 dB', 'parameter kSlP in C1: 7.2 -> 6.6' */
+  /** in words, such as 'gain margin: 6 dB to 8 dB', 'parameter kSlP in C1: 7.2 to 6.6' */
   criteriaChanges: string[]
   parameterChanges: string[]
   /** in the order of the newer revision, cells that only the older one has last */
