@@ -24,6 +24,8 @@ export default defineNuxtConfig({
   compatibilityDate: '2026-11-01',
   nitro: {
     compressPublicAssets: true,
+    // The engine's extended precision uses BigInt literals.
+    esbuild: { options: { target: 'es2022' } },
     serverAssets: [
       { baseName: 'templates', dir: inRoot('./templates') },
       // what a report may embed; only the files of the styles it uses go into the build

@@ -32,7 +32,11 @@ export async function startDemoServer({ demo = true } = {}): Promise<DemoServer>
   let said = ''
   server.stdout.on('data', (chunk: Buffer) => said += chunk.toString())
   server.stderr.on('data', (chunk: Buffer) => said += chunk.toString())
-  const ended = new Promise<void>(resolve => server.on('exit', () => resolve()))
+  let isStopping = false
+  const ended = new Promise<void>(resolve => server.on('exit', (code, signal) => {
+    if (!isStopping) console.error(`The server ended by itself (${signal ?? code}):\n${said.slice(-4000)}`)
+    resolve()
+  }))
   for (let tries = 0; tries < 300; tries++) {
     if (server.exitCode !== null) break
     const isUp = await fetch(`${url}/api/health`).then(reply => reply.ok, () => false)
@@ -40,6 +44,7 @@ export async function startDemoServer({ demo = true } = {}): Promise<DemoServer>
       return {
         url,
         stop: async () => {
+          isStopping = true
           server.kill('SIGTERM')
           await ended
           rmSync(folder, { recursive: true, force: true })
@@ -48,6 +53,7 @@ export async function startDemoServer({ demo = true } = {}): Promise<DemoServer>
     }
     await new Promise(resolve => setTimeout(resolve, 200))
   }
+  isStopping = true
   server.kill('SIGKILL')
   throw new Error(`The server did not come up:\n${said}`)
 }
