@@ -14,7 +14,8 @@ describe('the table of every crossing', () => {
     const table = await mountSuspended(CrossingTable, { props: { analysis: buildAnalysis(unstable) } })
     expect(table.find('caption').text()).toContain('is unstable')
     expect(table.text()).not.toMatch(/margin(?!s\.)/)
-    expect(rowsOf(table)[0]).toEqual(['10.00', 'gain crossover', 'gain falling', '1.000', ''])
+    expect(rowsOf(table)[0]).toEqual(['10.00', 'gain crossover', 'gain falling', '1.000'])
+    expect(table.text()).not.toContain('change that reaches')
   })
 
   it('mixes the kinds in order of frequency, from 0 to infinity', () => {
