@@ -84,9 +84,13 @@ export function createJobRunner(options: JobRunnerOptions): JobRunner {
 
   function progressOf(job: JobRow): (step: string, done: number, total: number) => Promise<void> {
     let storedAt = -Infinity
+    let storedKind = ''
     return async (step, done, total) => {
       const now = clock().getTime()
-      if (now - storedAt < progressTime) return
+      // A step of another kind ('Drawing ...', 'Printing ...') is always told: it may be the longest and the last.
+      const kind = step.split(' ', 1)[0] ?? ''
+      if (kind === storedKind && now - storedAt < progressTime) return
+      storedKind = kind
       storedAt = now
       await writeTransaction(async () => {
         if (await isStillRunning(job)) await recordJob(job, { step, done, total, leaseUntil: leaseEnd() }, clock())

@@ -34,7 +34,7 @@ describe('a rendering job', () => {
   it('is finished by the next server when the one that ran it was killed, with one set of artefacts', async () => {
     const revision = await freeze()
     const jobId = revision.job?.id ?? 0
-    expect((await running(jobId, /Printing/)).state).toBe('running')
+    expect((await running(jobId, /Drawing|Printing/)).state).toBe('running')
     await server.killAndRestart()
     expect(await ended(jobId)).toMatchObject({ state: 'done', error: null })
     const { body } = await engineer.get<{ revision: Revision }>(`/api/revisions/${revision.id}`)
