@@ -1,12 +1,12 @@
 import { spawn, type ChildProcess } from 'node:child_process'
 import { mkdtemp, rm } from 'node:fs/promises'
-import { createServer } from 'node:net'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { inject } from 'vitest'
 import { closeDatabase, openDatabase } from '#server/database/database'
 import { migrateDatabase } from '#server/database/migrateDatabase'
 import { migrations } from '#server/database/migrations/migrations'
+import { freePort } from '../factories/freePort'
 import { ApiCaller } from './ApiCaller'
 
 export interface TestServer {
@@ -29,15 +29,6 @@ export interface ServerOptions<Seed> {
   seed?: () => Promise<Seed>
   environment?: Record<string, string>
 }
-
-const freePort = () => new Promise<number>((resolve, reject) => {
-  const probe = createServer()
-  probe.on('error', reject)
-  probe.listen(0, '127.0.0.1', () => {
-    const address = probe.address()
-    probe.close(() => typeof address === 'object' && address !== null ? resolve(address.port) : reject(new Error('No free port.')))
-  })
-})
 
 const ended = (child: ChildProcess) => new Promise<void>((resolve) => {
   if (child.exitCode !== null || child.signalCode !== null) resolve()

@@ -1,24 +1,15 @@
 import { spawn } from 'node:child_process'
 import { mkdtempSync, rmSync } from 'node:fs'
-import { createServer } from 'node:net'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { ensureBuild } from '../../scripts/setUp/ensureBuild.mjs'
 import { ensureDemoData } from '../../scripts/setUp/ensureDemoData.mjs'
+import { freePort } from '../factories/freePort'
 
 export interface DemoServer {
   url: string
   stop: () => Promise<void>
 }
-
-const freePort = () => new Promise<number>((resolve, reject) => {
-  const probe = createServer()
-  probe.on('error', reject)
-  probe.listen(0, '127.0.0.1', () => {
-    const address = probe.address()
-    probe.close(() => typeof address === 'object' && address !== null ? resolve(address.port) : reject(new Error('no port')))
-  })
-})
 
 /** The built application as `npm start` serves it, on a data folder and a port of its own; with the demo's data unless asked otherwise. */
 export async function startDemoServer({ demo = true } = {}): Promise<DemoServer> {

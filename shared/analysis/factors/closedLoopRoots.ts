@@ -1,3 +1,4 @@
+import { aberthStep } from '../../numeric/extended/aberthStep'
 import { initialRoots } from '../../numeric/extended/initialRoots'
 import { ScaledPolynomial } from '../../numeric/extended/ScaledPolynomial'
 import type { ReturnDifferenceNumerator } from './ReturnDifferenceNumerator'
@@ -20,6 +21,7 @@ export function closedLoopRoots(sum: ReturnDifferenceNumerator): { re: Float64Ar
     im[k] = (im[k] as number) * sigma
   }
   const out = new Float64Array(6)
+  const step = new Float64Array(2)
   const settled = new Uint8Array(n)
   let open = n
   for (let sweep = 0; open > 0; sweep++) {
@@ -39,30 +41,9 @@ export function closedLoopRoots(sum: ReturnDifferenceNumerator): { re: Float64Ar
         open--
         continue
       }
-      const dr = out[2] as number
-      const di = out[3] as number
-      let ur = (dr * pr + di * pi) / square
-      let ui = (di * pr - dr * pi) / square
-      for (let j = 0; j < n; j++) {
-        if (j === k) continue
-        const a = (x - (re[j] as number)) * scaling
-        const b = (y - (im[j] as number)) * scaling
-        const distance = a * a + b * b
-        if (distance === 0) continue
-        ur -= a / distance
-        ui += b / distance
-      }
-      const size = ur * ur + ui * ui
-      let stepRe = ur / size
-      let stepIm = -ui / size
-      const length = Math.sqrt(stepRe * stepRe + stepIm * stepIm)
-      if (!(length < 4)) {
-        const limit = length < Infinity ? 4 / length : 0
-        stepRe *= limit
-        stepIm *= limit
-      }
-      re[k] = x - stepRe * scale
-      im[k] = y - stepIm * scale
+      const length = aberthStep(re, im, k, scaling, out, step)
+      re[k] = x - step[0]! * scale
+      im[k] = y - step[1]! * scale
       if (length <= 1e-15 || Math.sqrt(square) <= 4e-16 * (out[4] as number)) {
         settled[k] = 1
         open--

@@ -1,3 +1,4 @@
+import { aberthStep } from './aberthStep'
 import { initialRoots } from './initialRoots'
 import type { ScaledPolynomial } from './ScaledPolynomial'
 
@@ -18,6 +19,7 @@ export type WithDerivative = (polynomial: ScaledPolynomial, shift: number, a: nu
 export function aberthRoots(polynomial: ScaledPolynomial, evaluate: WithDerivative = evaluateWithDerivative): { re: Float64Array, im: Float64Array } {
   const n = polynomial.degree
   const at = new Float64Array(4)
+  const step = new Float64Array(2)
   const { re, im } = initialRoots(polynomial)
   const settled = new Uint8Array(n)
   let open = n
@@ -34,38 +36,14 @@ export function aberthRoots(polynomial: ScaledPolynomial, evaluate: WithDerivati
       const noise = evaluate(polynomial, shift, a, b, at)
       const pr = at[0]!
       const pi = at[1]!
-      const dr = at[2]!
-      const di = at[3]!
-      // Newton step N = P / P'; then N / (1 - N sum 1/(r - r_j)) = 1 / (P'/P - sum)
-      const denominator = pr * pr + pi * pi
-      if (denominator === 0) {
+      if (pr * pr + pi * pi === 0) {
         settled[k] = 1
         open--
         continue
       }
-      let ur = (dr * pr + di * pi) / denominator
-      let ui = (di * pr - dr * pi) / denominator
-      for (let j = 0; j < n; j++) {
-        if (j === k) continue
-        const p = (x - (re[j] as number)) * scaling
-        const q = (y - (im[j] as number)) * scaling
-        const square = p * p + q * q
-        if (square === 0) continue
-        ur -= p / square
-        ui += q / square
-      }
-      const square = ur * ur + ui * ui
-      let stepRe = ur / square
-      let stepIm = -ui / square
-      const length = Math.sqrt(stepRe * stepRe + stepIm * stepIm)
-      if (!(length < 4)) {
-        // Steps far beyond the root's own size only throw it out of its place.
-        const limit = length < Infinity ? 4 / length : 0
-        stepRe *= limit
-        stepIm *= limit
-      }
-      re[k] = x - stepRe * 2 ** shift
-      im[k] = y - stepIm * 2 ** shift
+      const length = aberthStep(re, im, k, scaling, at, step)
+      re[k] = x - step[0]! * 2 ** shift
+      im[k] = y - step[1]! * 2 ** shift
       // Below the noise of the evaluation a further step would be random.
       if (noise || length <= 1e-15 * modulus) {
         settled[k] = 1
