@@ -6,6 +6,8 @@
  * Gains in dB, phases in degrees, times in seconds. Lists are in order of frequency and hold every entry.
  */
 
+import type { BlockGain } from './block'
+
 export type FrequencyUnit = 'rad/s' | 'Hz'
 
 /** A frequency in a list: a number in the input's unit, or the end of the axis of a continuous biproper loop. */
@@ -43,11 +45,16 @@ export interface ZerosPolesInput extends CommonInput {
   sampleTime?: number
 }
 
-/** A typed expression in s, or in z with a sample time, with named parameters. */
+/**
+ * A typed expression in s, or in z with a sample time, with named parameters and blocks. With a sampled block or a hold among its blocks the
+ * loop is sampled at theirs: continuous blocks behind a hold are taken by their exact discrete equivalent.
+ */
 export interface ExpressionInput extends CommonInput {
   expression: string
   parameters?: Record<string, number>
   sampleTime?: number
+  /** by name; one with several channels is written G[output, input], by number from 1 or by name */
+  blocks?: Record<string, BlockGain>
 }
 
 export type MeasuredQuantity = 'loopGain' | 'returnDifference' | 'sensitivity' | 'complementarySensitivity'
@@ -79,6 +86,36 @@ export type LoopInput = CoefficientsInput | ZerosPolesInput | ExpressionInput | 
 
 export type CrossingSlope = 'falling' | 'rising'
 
+/** A sampled controller on a continuous plant: what the continuous approximation C(e^jwT) hold delay G(jw) says at a frequency, less what the exact discrete equivalent says. */
+export interface ApproximationDifference {
+  /** dB */
+  gain: number
+  /** deg, wrapped into (-180, 180] */
+  phase: number
+  /** of |1 + L| */
+  distance: number
+}
+
+/** What a reader must know of how the loop gain was built. */
+export interface StructureNote {
+  /** the block it is about; '' for the loop */
+  block: string
+  /** stable name, for tests and screens */
+  code: 'unreachable' | 'unobservable' | 'hidden unstable' | 'hidden boundary' | 'averaged hold' | 'coherence dropped' | 'other'
+  message: string
+}
+
+/** How the loop gain was built from blocks. */
+export interface LoopStructure {
+  /** s, of a sampled loop */
+  sampleTime?: number
+  /** relative size by which the factors analysed may differ from the loop gain as given, on the axis, where matrices or discrete equivalents stand in it */
+  accuracy?: { relative: number, basis: string }
+  /** whether a continuous approximation was compared at each crossing */
+  approximated: boolean
+  notes: StructureNote[]
+}
+
 export interface GainCrossover {
   frequency: number
   /** deg, 180 + arg L wrapped into (-180, 180]; positive: that much lag reaches -1; negative: that much lead does */
@@ -88,6 +125,7 @@ export interface GainCrossover {
   slope: CrossingSlope
   /** |1 + L| at this frequency */
   distance?: number
+  approximation?: ApproximationDifference
 }
 
 export interface PhaseCrossover {
@@ -100,6 +138,7 @@ export interface PhaseCrossover {
   distance?: number
   /** measured: the 95 % confidence circle of a sample beside it holds L = 0, so its phase is noise */
   withinNoise?: boolean
+  approximation?: ApproximationDifference
 }
 
 export interface ClosestApproach {
@@ -111,6 +150,7 @@ export interface ClosestApproach {
   phaseChange: number
   /** measured: the dip is no deeper than the 95 % confidence circle of its sample is wide, so it may be noise */
   withinNoise?: boolean
+  approximation?: ApproximationDifference
 }
 
 export interface VectorMargin {
@@ -203,6 +243,8 @@ export interface LoopAnalysis {
   samples?: number
   /** Measured with coherence and averages: one for each sample in the band. */
   discs?: ConfidenceDisc[]
+  /** Present where the loop gain was built from blocks. */
+  structure?: LoopStructure
 }
 
 /** In the place of an analysis that could not be made. */

@@ -27,13 +27,27 @@ export interface SystemSummary extends System {
   newestIssue: string | null
 }
 
+/** The block at which a loop is opened. */
+export interface BreakAt {
+  block: string
+  side: 'input' | 'output'
+}
+
+/** What another loop of the system does while this one is open. One that is not listed is at nominal. */
+export interface OtherLoopState {
+  loopId: number
+  state: 'closed' | 'open' | 'held'
+  /** the gain it is held at */
+  gain?: number
+}
+
 export interface Loop extends Versioned {
   systemId: number
   code: string
   name: string
   /** axis or channel */
   axis: string
-  /** the signal at which the loop is opened; needed before freezing */
+  /** the signal at which the loop is opened, in words */
   breakPoint: string
   /** the state of every other loop while this one is open; needed before freezing */
   otherLoops: string
