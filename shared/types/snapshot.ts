@@ -1,7 +1,10 @@
 import type { LoopAnalysis, LoopInput, FrequencyUnit } from './analysis'
 import type { Criterion, Judgement } from './criterion'
 import type { PageSize } from './brand'
+import type { BlockDefinition, BlockRole } from './block'
 import type { SourceDefinition } from './source'
+import type { ClosedLoopPoles, ModeShiftTable, SourceDifference } from './structure'
+import type { BreakAt } from './system'
 
 /**
  * Everything a frozen draft was made from and everything that was found: plain data, canonical JSON (keys sorted),
@@ -22,12 +25,51 @@ export interface ReportSnapshot {
   report: { title: string, documentNumber: string, remarks: string }
   criteria: Criterion[]
   conditions: { code: string, name: string, coordinates: { name: string, unit: string, value: number }[], tags: string[], notes: string }[]
-  loops: { code: string, name: string, axis: string, breakPoint: string, otherLoops: string, notes: string, remarks: string }[]
+  loops: SnapshotLoop[]
   parameters: { name: string, unit: string, notes: string, values: Record<string, number> }[]
+  /** the parts the loop gains are built from; not in snapshots frozen before there were blocks */
+  blocks?: SnapshotBlock[]
   /** one for each loop and condition covered, in order of loops, then conditions */
   cells: SnapshotCell[]
   /** the issued revisions before this one, oldest first */
   history: { letter: string, changeNote: string, frozenBy: string, issuedBy: string, issuedAt: string }[]
+}
+
+export interface SnapshotLoop {
+  code: string
+  name: string
+  axis: string
+  breakPoint: string
+  otherLoops: string
+  notes: string
+  remarks: string
+  /** the block at which the loop is opened */
+  breakAt?: BreakAt | null
+  /** loops that are not at nominal while this one is open */
+  loopStates?: { code: string, state: 'closed' | 'open' | 'held', gain?: number }[]
+}
+
+export interface SnapshotBlock {
+  name: string
+  role: BlockRole
+  unitIn: string
+  unitOut: string
+  notes: string
+  /** by condition code, as it holds there; a condition without one has no gain of this block */
+  definitions: Record<string, BlockDefinition>
+}
+
+/** A source kept beside the one of record. */
+export interface SnapshotOtherSource {
+  name: string
+  kind: SourceDefinition['kind']
+  /** why it is not the one of record */
+  setAsideReason: string
+  input: LoopInput | null
+  analysis: LoopAnalysis | null
+  failure: { message: string, path: string } | null
+  /** from the source of record */
+  difference: SourceDifference | null
 }
 
 export interface SnapshotCell {
@@ -44,6 +86,11 @@ export interface SnapshotCell {
   analysis: LoopAnalysis | null
   failure: { message: string, path: string } | null
   judgement: Judgement
+  closedLoopPoles?: ClosedLoopPoles | null
+  modeShifts?: ModeShiftTable | null
+  otherSources?: SnapshotOtherSource[]
+  /** another break point of the same closed system says otherwise of it, in words */
+  disagreement?: string | null
 }
 
 /** What an edition adds to a snapshot when the document is printed. */
