@@ -46,6 +46,8 @@ export interface ModeShiftTable {
   modes: { block: string, mode: string, frequency: number, damping: number, shifts: ModeShift[] }[]
   /** why there is no table (no blocks, no flexible mode); null where there is */
   reason: string | null
+  /** what was left out and why, and what a block was replaced by, in sentences */
+  notes: string[]
 }
 
 export interface DifferenceBand {
@@ -65,6 +67,9 @@ export interface SourceDifference {
   reference: string
   other: string
   bands: DifferenceBand[]
+  /** at which frequencies they were compared, in a sentence; '' where they were not */
+  basis: string
+  /** why they were not compared; null where they were */
   reason: string | null
 }
 
