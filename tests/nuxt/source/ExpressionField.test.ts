@@ -29,4 +29,41 @@ describe('the field of an expression', () => {
     const field = await mount('<img src=x>')
     expect(field.find('img').exists()).toBe(false)
   })
+
+  describe('completes names by keyboard', () => {
+    const names = [{ name: 'servo', kind: 'block' as const, detail: 'controller' }, { name: 'sensor', kind: 'block' as const }, { name: 'k', kind: 'parameter' as const }]
+    const typing = async (text: string) => {
+      const field = await mountSuspended(ExpressionField, { props: { modelValue: '', variable: 's', faults: [], names }, attachTo: document.body })
+      const area = field.find('textarea')
+      area.element.value = text
+      area.element.setSelectionRange(text.length, text.length)
+      await area.trigger('input')
+      return { field, area }
+    }
+
+    it('offers what fits, and Enter takes the one that is chosen', async () => {
+      const { field, area } = await typing('2*se')
+      expect(field.findAll('[role=option]').map(option => option.text())).toEqual(['servocontroller', 'sensorblock'])
+      await area.trigger('keydown', { key: 'ArrowDown' })
+      expect(field.find('[aria-selected=true]').text()).toContain('sensor')
+      expect(area.attributes('aria-activedescendant')).toBe(field.find('[aria-selected=true]').attributes('id'))
+      await area.trigger('keydown', { key: 'Enter' })
+      expect(field.emitted('update:modelValue')?.at(-1)).toEqual(['2*sensor'])
+      expect(field.find('[role=listbox]').exists()).toBe(false)
+    })
+
+    it('closes with Escape and leaves what is typed', async () => {
+      const { field, area } = await typing('2*se')
+      await area.trigger('keydown', { key: 'Escape' })
+      expect(field.find('[role=listbox]').exists()).toBe(false)
+      expect(field.emitted('update:modelValue')?.at(-1)).toEqual(['2*se'])
+    })
+
+    it('leaves Enter to a new line where what is typed is the variable itself', async () => {
+      const { field, area } = await typing('1/s')
+      expect(field.find('[aria-selected=true]').exists()).toBe(false)
+      await area.trigger('keydown', { key: 'Enter' })
+      expect(field.emitted('update:modelValue')?.at(-1)).toEqual(['1/s'])
+    })
+  })
 })
