@@ -1,4 +1,4 @@
-import type { ClosedLoopVerdict, ComplexPair, FrequencyUnit, MarginSummary, VectorMargin } from './analysis'
+import type { ClosedLoopVerdict, ComplexPair, FrequencyUnit, LoopAnalysis, MarginSummary, VectorMargin } from './analysis'
 import type { Judgement } from './criterion'
 
 /** One pole of the closed loop (one of a conjugate pair is listed, the one above the real axis). */
@@ -86,3 +86,11 @@ export interface BlockEffect {
   /** whether any margin or the verdict differs */
   moved: boolean
 }
+
+/** What the engine can be asked of a loop in a thread of its own, and what it answers. */
+export interface EngineAnswers {
+  analysis: LoopAnalysis
+  closedLoopPoles: ClosedLoopPoles
+  modeShifts: ModeShiftTable
+}
+export type EngineAnswer = EngineAnswers[keyof EngineAnswers]

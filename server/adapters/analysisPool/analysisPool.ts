@@ -16,17 +16,20 @@ let pool: Piscina | undefined
 /** The bundle stands beside the server's entry (see modules/workers.ts); tests name one of their own. */
 const workerFile = () => process.env.WIDEBERTH_ANALYSIS_WORKER || fileURLToPath(new URL('./analysis-worker.mjs', import.meta.url))
 
+/** Analyses one entry of the contract in a thread of its own. */
+export const analyseInPool = (value: unknown, longest = 60_000) => runInPool('analysis', value, longest) as Promise<LoopAnalysis | AnalysisFailure>
+
 /**
- * Analyses one entry of the contract in a thread of its own, so that requests are answered meanwhile. Never throws for an input: what takes longer than
+ * Has one of the worker's functions answer in a thread of its own, so that requests are answered meanwhile. Never throws for an input: what takes longer than
  * `longest` (ms) is stopped with its thread, and what breaks off says so.
  */
-export function analyseInPool(value: unknown, longest = 60_000): Promise<LoopAnalysis | AnalysisFailure> {
+export function runInPool(task: string, value: unknown, longest = 60_000): Promise<unknown> {
   return gate.add(async () => {
     pool ??= new Piscina({ filename: workerFile(), minThreads: 1, maxThreads: threads, idleTimeout: 60_000 })
     const stop = new AbortController()
     const timer = setTimeout(() => stop.abort(), longest)
     try {
-      return await pool.run(value, { signal: stop.signal }) as LoopAnalysis | AnalysisFailure
+      return await pool.run(value, { signal: stop.signal, ...task !== 'analysis' && { name: task } }) as unknown
     }
     catch (error) {
       logger.error({ err: error }, 'An analysis broke off.')

@@ -1,13 +1,13 @@
 import { Model, type CreationOptional, type InferAttributes, type InferCreationAttributes, type Sequelize } from 'sequelize'
-import type { LoopAnalysis } from '#shared/types/analysis'
+import type { EngineAnswer } from '#shared/types/structure'
 import { id, json, text } from './columns'
 
-/** What the engine found for one input, kept under the hash of the input and the engine's version. */
+/** What the engine answered to one question, kept under the hash of the question and the engine's version. */
 export class AnalysisRow extends Model<InferAttributes<AnalysisRow>, InferCreationAttributes<AnalysisRow>> {
   declare id: CreationOptional<number>
   declare inputHash: string
   declare engineVersion: string
-  declare result: LoopAnalysis
+  declare result: EngineAnswer
   declare createdAt: string
 }
 
@@ -15,7 +15,7 @@ export const defineAnalysisRow = (sequelize: Sequelize) => AnalysisRow.init({
   id: id(),
   inputHash: text(),
   engineVersion: text(),
-  result: json<LoopAnalysis>('result'),
+  result: json<EngineAnswer>('result'),
   createdAt: text(),
 }, {
   sequelize,
