@@ -18,7 +18,7 @@ import { gangway } from '#server/demo/gangway'
 import { storeDemoPeople } from '#server/demo/storeDemoPeople'
 import { storeDemoSystem } from '#server/demo/storeDemoSystem'
 import { buildReportView } from '#server/reports/buildReportView'
-import { canonicalJson } from '#server/reports/canonicalJson'
+import { writeSnapshot } from '#server/reports/snapshotText'
 import { collectSnapshot } from '#server/reports/collectSnapshot'
 import { createHtmlRenderer } from '#server/reports/createHtmlRenderer'
 import { drawReportFigures } from '#server/reports/figures/drawReportFigures'
@@ -47,7 +47,7 @@ async function frozenDemo(folder: string): Promise<{ text: string, collecting: n
     const { id } = await createReport(system.id, gangway.report, context)
     const report = await findReport(id)
     const start = performance.now()
-    const text = canonicalJson(await collectSnapshot(report, { letter: 'A', draftNumber: 1, changeNote: 'First issue' }, context))
+    const text = writeSnapshot(await collectSnapshot(report, { letter: 'A', draftNumber: 1, changeNote: 'First issue' }, context))
     return { text, collecting: performance.now() - start }
   }
   finally {

@@ -2,7 +2,7 @@ import { AppError } from '#shared/errors/AppError'
 import type { LoopGain } from '#shared/analysis/LoopGain'
 import type { LoopInput } from '#shared/types/analysis'
 import type { ArtefactKind } from '#shared/types/report'
-import type { EditionFacts, ReportSnapshot } from '#shared/types/snapshot'
+import type { EditionFacts } from '#shared/types/snapshot'
 import type { PdfPrinter } from '../adapters/chromium/PdfPrinter'
 import { buildReportView } from './buildReportView'
 import type { HtmlRenderer } from './createHtmlRenderer'
@@ -10,6 +10,7 @@ import { drawReportFigures } from './figures/drawReportFigures'
 import { packageReport } from './packageReport'
 import { fileNameOf } from './package/fileNameOf'
 import { sha256Of } from './sha256Of'
+import { parseSnapshot } from './snapshotText'
 
 export interface ProducedArtefact {
   kind: ArtefactKind
@@ -37,7 +38,7 @@ const mediaTypes: Record<ArtefactKind, string> = { html: 'text/html; charset=utf
  */
 export async function produceReport(snapshotText: string, edition: EditionFacts, tools: ProduceTools): Promise<ProducedArtefact[]> {
   if (sha256Of(snapshotText) !== edition.snapshotSha256) throw new AppError('unexpected', 'The stored snapshot is not the one that was frozen: its SHA-256 differs.')
-  const snapshot = JSON.parse(snapshotText) as ReportSnapshot
+  const snapshot = parseSnapshot(snapshotText)
   const { renderHtml, printer, prepareGain, progress, signal } = tools
   const total = snapshot.loops.length + laterSteps
   const drawn = await drawReportFigures(snapshot, { prepareGain, progress: (step, done) => progress(step, done, total), signal })

@@ -1,5 +1,6 @@
 import type { SourceDefinition, SourceKind } from '#shared/types/source'
-import { significantDigits } from '#shared/formatting/significantDigits'
+import { describeBlockGain } from '#shared/formatting/describeBlockGain'
+import { formatDelay } from '#shared/formatting/formatDelay'
 
 export const kindNames: Record<SourceKind, string> = {
   coefficients: 'model, coefficients',
@@ -11,14 +12,10 @@ export const kindNames: Record<SourceKind, string> = {
 /** Characters of a definition that are printed; the package holds the whole. */
 const printedLength = 700
 
-const figure = (value: number) => String(Number(value.toPrecision(10)))
-const rootText = ([re, im]: readonly [number, number]) => (im === 0 ? figure(re) : `${figure(re)} ${im < 0 ? '\u2212' : '+'} ${figure(Math.abs(im))}j`)
-const list = (values: readonly string[]) => (values.length === 0 ? 'none' : values.join(', '))
-
 function timing({ deadTime, sampleTime }: { deadTime?: number, sampleTime?: number }): string[] {
   return [
-    ...(deadTime ? [`dead time ${significantDigits(deadTime * 1000)} ms`] : []),
-    ...(sampleTime ? [`sample time ${significantDigits(sampleTime * 1000)} ms`] : []),
+    ...(deadTime ? [`dead time ${formatDelay(deadTime)}`] : []),
+    ...(sampleTime ? [`sampled every ${formatDelay(sampleTime)}`] : []),
   ]
 }
 
@@ -27,9 +24,8 @@ function partsOf(definition: SourceDefinition): string[] {
     case 'expression':
       return [`L(${definition.sampleTime ? 'z' : 's'}) = ${definition.expression}`, ...timing(definition)]
     case 'coefficients':
-      return [`numerator ${list(definition.numerator.map(figure))}`, `denominator ${list(definition.denominator.map(figure))}`, ...timing(definition)]
     case 'zerosPoles':
-      return [`zeros ${list(definition.zeros.map(rootText))}`, `poles ${list(definition.poles.map(rootText))}`, `gain ${figure(definition.gain)}`, ...timing(definition)]
+      return [describeBlockGain(definition)]
     case 'measured':
       return [
         `measured as ${quantityNames[definition.mapping.quantity]}`,

@@ -2,7 +2,7 @@ import { prepareLoopGain } from '#shared/analysis/prepareLoopGain'
 import { nextDraft } from '#shared/workflow/nextDraft'
 import { RevisionRow } from '../../database/models/RevisionRow'
 import { buildReportView } from '../../reports/buildReportView'
-import { canonicalJson } from '../../reports/canonicalJson'
+import { writeSnapshot } from '../../reports/snapshotText'
 import { collectSnapshot } from '../../reports/collectSnapshot'
 import type { HtmlRenderer } from '../../reports/createHtmlRenderer'
 import { drawReportFigures } from '../../reports/figures/drawReportFigures'
@@ -17,6 +17,6 @@ export async function previewReport(reportId: number, renderHtml: HtmlRenderer, 
   const snapshot = await collectSnapshot(report, { ...draft, changeNote: 'Not frozen yet' }, context)
   const drawn = await drawReportFigures(snapshot, { prepareGain: prepareLoopGain, progress: async () => undefined })
   return renderHtml(buildReportView(snapshot, {
-    edition: 'preview', label: 'Preview', preparedBy: context.actor.name, preparedAt: snapshot.frozenAt, approvedBy: null, issuedAt: null, snapshotSha256: sha256Of(canonicalJson(snapshot)),
+    edition: 'preview', label: 'Preview', preparedBy: context.actor.name, preparedAt: snapshot.frozenAt, approvedBy: null, issuedAt: null, snapshotSha256: sha256Of(writeSnapshot(snapshot)),
   }, drawn))
 }

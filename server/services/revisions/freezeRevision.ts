@@ -8,9 +8,9 @@ import { writeTransaction } from '../../database/database'
 import type { ReportRow } from '../../database/models/ReportRow'
 import { RevisionRow } from '../../database/models/RevisionRow'
 import { enqueueJob } from '../../jobs/enqueueJob'
-import { canonicalJson } from '../../reports/canonicalJson'
 import { collectSnapshot, coverageOf } from '../../reports/collectSnapshot'
 import { sha256Of } from '../../reports/sha256Of'
+import { writeSnapshot } from '../../reports/snapshotText'
 import type { ServiceContext } from '../context'
 import { findReport } from '../reports/findReport'
 import { reportStamp } from '../reports/reportStamp'
@@ -34,7 +34,7 @@ async function tryToFreeze(reportId: number, changeNote: string, context: Servic
   const revisions = await RevisionRow.findAll({ where: { reportId } })
   const draft = { ...nextDraft(revisions), changeNote }
   const snapshot = await collectSnapshot(report, draft, context)
-  const text = canonicalJson(snapshot)
+  const text = writeSnapshot(snapshot)
   return writeTransaction(async () => {
     if (await reportStamp(report) !== stamp) return null
     const row = await RevisionRow.create({

@@ -1,6 +1,7 @@
 import { AppError } from '#shared/errors/AppError'
 import type { ReportSnapshot } from '#shared/types/snapshot'
 import { RevisionRow } from '../../database/models/RevisionRow'
+import { parseSnapshot } from '../../reports/snapshotText'
 
 /** The frozen snapshot of a revision as it is stored: the text whose SHA-256 the revision carries. */
 export async function readSnapshotText(revisionId: number): Promise<string> {
@@ -9,4 +10,4 @@ export async function readSnapshotText(revisionId: number): Promise<string> {
   return row.snapshot
 }
 
-export const readSnapshot = async (revisionId: number): Promise<ReportSnapshot> => JSON.parse(await readSnapshotText(revisionId)) as ReportSnapshot
+export const readSnapshot = async (revisionId: number): Promise<ReportSnapshot> => parseSnapshot(await readSnapshotText(revisionId))
