@@ -23,7 +23,8 @@ export interface DemoLoop {
   name: string
   axis: string
   breakPoint: string
-  otherLoops: string
+  /** loops that are not at nominal while this one is open, by code */
+  loopStates: Record<string, 'closed' | 'open'>
   notes: string
   /** of record, by the code of the condition or for all of them */
   model: { name: string, definition: Exclude<SourceDefinition, { kind: 'measured' }> } | ((values: Record<string, number>) => { name: string, definition: Exclude<SourceDefinition, { kind: 'measured' }> })

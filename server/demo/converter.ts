@@ -34,11 +34,11 @@ export const converter: DemoSystem = {
   ],
   loops: [
     {
-      code: 'CU', name: 'Inductor current', axis: 'converter', breakPoint: 'duty cycle command', otherLoops: 'voltage loop open', notes: '',
+      code: 'CU', name: 'Inductor current', axis: 'converter', breakPoint: 'duty cycle command', loopStates: { VO: 'open' }, notes: '',
       model: { name: 'design model', definition: { kind: 'expression', expression: currentLoop, sampleTime } },
     },
     {
-      code: 'VO', name: 'Output voltage', axis: 'converter', breakPoint: 'current command', otherLoops: 'current loop closed', notes: 'The closed current loop stands in the expression as it is, L/(1 + L).',
+      code: 'VO', name: 'Output voltage', axis: 'converter', breakPoint: 'current command', loopStates: { CU: 'closed' }, notes: 'The closed current loop stands in the expression as it is, L/(1 + L).',
       model: { name: 'design model', definition: { kind: 'expression', expression: `kV*(z-0.995)/(z-1) * (${currentLoop})/(1 + ${currentLoop}) * bC/(z-pC)`, sampleTime } },
     },
   ],

@@ -43,15 +43,15 @@ export const gangway: DemoSystem = {
   ],
   loops: [
     {
-      code: 'SL-R', name: 'Slew rate', axis: 'slew', breakPoint: 'servo valve command of the slew motor', otherLoops: 'slew position loop open; luff, telescope and roll loops closed', notes: '',
+      code: 'SL-R', name: 'Slew rate', axis: 'slew', breakPoint: 'servo valve command of the slew motor', loopStates: { 'SL-P': 'open' }, notes: '',
       model: { name: 'design model', definition: { kind: 'expression', expression: 'kSlR*(1+s/40)/s / (s^2/whSl^2+2*zh*s/whSl+1) * (s^2/(0.9*wLat)^2+0.04*s/wLat+1)/(s^2/wLat^2+0.03*s/wLat+1) / (s/160+1)^2 * exp(-0.006*s)' } },
     },
     {
-      code: 'SL-P', name: 'Slew position', axis: 'slew', breakPoint: 'slew rate command', otherLoops: 'slew rate loop closed; luff, telescope and roll loops closed', notes: 'The closed rate loop stands in the model as a second-order lag at 0.62 of the hydraulic frequency.',
+      code: 'SL-P', name: 'Slew position', axis: 'slew', breakPoint: 'slew rate command', loopStates: { 'SL-R': 'closed' }, notes: 'The closed rate loop stands in the model as a second-order lag at 0.62 of the hydraulic frequency.',
       model: { name: 'design model', definition: { kind: 'expression', expression: 'kSlP*(1+0.15/s)/s / (s^2/(0.62*whSl)^2+1.0*s/(0.62*whSl)+1) * (1+0.9*s/wLat)/(s^2/wLat^2+0.03*s/wLat+1) * exp(-0.008*s)' } },
     },
     {
-      code: 'LU-R', name: 'Luff rate', axis: 'luff', breakPoint: 'servo valve command of the luff cylinders', otherLoops: 'luff position loop open; slew, telescope and roll loops closed', notes: '',
+      code: 'LU-R', name: 'Luff rate', axis: 'luff', breakPoint: 'servo valve command of the luff cylinders', loopStates: { 'LU-P': 'open' }, notes: '',
       model: { name: 'design model', definition: { kind: 'expression', expression: 'kLuR*(1+s/60)/s / (s^2/whLu^2+2*zh*s/whLu+1) / (s/200+1) * (s^2/(1.12*wVer)^2+0.04*s/wVer+1)/(s^2/wVer^2+0.03*s/wVer+1) * exp(-0.005*s)' } },
       sweeps: {
         conditionCodes: ['C1', 'C2', 'C3', 'C4', 'C5'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 0.8, to: 140, pointsPerDecade: 110, fine: [{ around: 'wVer', from: 0.9, to: 1.25, points: 90 }],
@@ -59,11 +59,11 @@ export const gangway: DemoSystem = {
       },
     },
     {
-      code: 'LU-P', name: 'Luff position', axis: 'luff', breakPoint: 'luff rate command', otherLoops: 'luff rate loop closed; slew, telescope and roll loops closed', notes: '',
+      code: 'LU-P', name: 'Luff position', axis: 'luff', breakPoint: 'luff rate command', loopStates: { 'LU-R': 'closed' }, notes: '',
       model: { name: 'design model', definition: { kind: 'expression', expression: 'kLuP*(1+0.2/s)/s / (s/20+1) / (s^2/whLu^2+0.7*s/whLu+1) * (1+0.2*s/wVer)/(s^2/wVer^2+0.02*s/wVer+1) * exp(-0.010*s)' } },
     },
     {
-      code: 'TE-R', name: 'Telescope rate', axis: 'telescope', breakPoint: 'servo valve command of the telescope winch', otherLoops: 'telescope position loop open; slew, luff and roll loops closed', notes: '',
+      code: 'TE-R', name: 'Telescope rate', axis: 'telescope', breakPoint: 'servo valve command of the telescope winch', loopStates: { 'TE-P': 'open' }, notes: '',
       model: rootsOfTelescopeRate,
       sweeps: {
         conditionCodes: ['C2', 'C3'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 1, to: 220, pointsPerDecade: 120, fine: [{ around: 'wAx', from: 0.9, to: 1.1, points: 80 }],
@@ -71,15 +71,15 @@ export const gangway: DemoSystem = {
       },
     },
     {
-      code: 'TE-P', name: 'Telescope position', axis: 'telescope', breakPoint: 'telescope rate command', otherLoops: 'telescope rate loop closed; slew, luff and roll loops closed', notes: 'Two integrators in the compensator: the loop is conditionally stable, the gain may not fall far.',
+      code: 'TE-P', name: 'Telescope position', axis: 'telescope', breakPoint: 'telescope rate command', loopStates: { 'TE-R': 'closed' }, notes: 'Two integrators in the compensator: the loop is conditionally stable, the gain may not fall far.',
       model: { name: 'design model', definition: { kind: 'expression', expression: 'kTeP*(1+1.2/s)^2/s / (s/30+1) / (s^2/whTe^2+0.8*s/whTe+1) * exp(-0.006*s)' } },
     },
     {
-      code: 'RO-R', name: 'Roll rate', axis: 'roll', breakPoint: 'servo valve command of the roll actuator', otherLoops: 'roll position loop open; slew, luff and telescope loops closed', notes: 'The torsion mode of the boom tip lifts the gain above one a second time.',
+      code: 'RO-R', name: 'Roll rate', axis: 'roll', breakPoint: 'servo valve command of the roll actuator', loopStates: { 'RO-P': 'open' }, notes: 'The torsion mode of the boom tip lifts the gain above one a second time.',
       model: { name: 'design model', definition: { kind: 'expression', expression: 'kRoR*(1+s/40)/s / (s^2/whRo^2+0.84*s/whRo+1) * (s^2/(1.3*wTor)^2+0.02*s/wTor+1)/(s^2/wTor^2+2*zTor*s/wTor+1) * exp(-0.003*s)' } },
     },
     {
-      code: 'RO-P', name: 'Roll position', axis: 'roll', breakPoint: 'roll rate command', otherLoops: 'roll rate loop closed; slew, luff and telescope loops closed', notes: '',
+      code: 'RO-P', name: 'Roll position', axis: 'roll', breakPoint: 'roll rate command', loopStates: { 'RO-R': 'closed' }, notes: '',
       model: coefficientsOfRollPosition,
     },
   ],

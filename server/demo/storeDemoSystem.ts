@@ -1,7 +1,8 @@
-import type { OperatingCondition, System } from '#shared/types/system'
+import type { Loop, OperatingCondition, System } from '#shared/types/system'
 import { createCondition } from '../services/conditions/createCondition'
 import type { ServiceContext } from '../services/context'
 import { createLoop } from '../services/loops/createLoop'
+import { updateLoop } from '../services/loops/updateLoop'
 import { replaceMembers } from '../services/members/replaceMembers'
 import { replaceParameters } from '../services/parameters/replaceParameters'
 import { createSources } from '../services/sources/createSources'
@@ -23,16 +24,30 @@ export async function storeDemoSystem(demo: DemoSystem, context: ServiceContext)
     ...parameter,
     values: Object.fromEntries(conditions.map((condition, index) => [condition.id, values[index] ?? Number.NaN])),
   })), context)
-  for (const loop of demo.loops) await storeDemoLoop(system, demo, loop, conditions, context)
+  const loops = new Map<string, Loop>()
+  for (const loop of demo.loops) loops.set(loop.code, await storeDemoLoop(system, demo, loop, conditions, context))
+  for (const { code, loopStates } of demo.loops) await storeDemoStates(loops, code, loopStates, context)
   return system
 }
 
-async function storeDemoLoop(system: System, demo: DemoSystem, loop: DemoLoop, conditions: OperatingCondition[], context: ServiceContext): Promise<void> {
-  const { code, name, axis, breakPoint, otherLoops, notes, model } = loop
-  const { id } = await createLoop(system.id, { code, name, axis, breakPoint, otherLoops, notes }, context)
+async function storeDemoLoop(system: System, demo: DemoSystem, loop: DemoLoop, conditions: OperatingCondition[], context: ServiceContext): Promise<Loop> {
+  const { code, name, axis, breakPoint, notes, model } = loop
+  const stored = await createLoop(system.id, { code, name, axis, breakPoint, otherLoops: '', breakAt: null, loopStates: [], notes }, context)
   const store = (conditionIds: number[], source: { name: string, definition: Exclude<DemoLoop['model'], (...values: never[]) => unknown>['definition'] }) =>
-    createSources(id, { conditionIds, name: source.name, definition: source.definition, ofRecord: true, setAsideReason: '' }, context)
+    createSources(stored.id, { conditionIds, name: source.name, definition: source.definition, ofRecord: true, setAsideReason: '' }, context)
   if (typeof model !== 'function') await store(conditions.map(condition => condition.id), model)
   else for (const [index, condition] of conditions.entries()) await store([condition.id], model(valuesIn(demo, index)))
-  if (loop.sweeps !== undefined) await storeDemoSweeps(system, demo, loop, loop.sweeps, id, conditions, context)
+  if (loop.sweeps !== undefined) await storeDemoSweeps(system, demo, loop, loop.sweeps, stored.id, conditions, context)
+  return stored
+}
+
+/** What the others do while a loop is open, once all of them are there. */
+async function storeDemoStates(loops: ReadonlyMap<string, Loop>, code: string, states: DemoLoop['loopStates'], context: ServiceContext): Promise<void> {
+  const loopOf = (wanted: string) => {
+    const loop = loops.get(wanted)
+    if (loop === undefined) throw new Error(`The demo has no loop ${wanted}.`)
+    return loop
+  }
+  const { id, version } = loopOf(code)
+  await updateLoop(id, { version, loopStates: Object.entries(states).map(([other, state]) => ({ loopId: loopOf(other).id, state })) }, context)
 }

@@ -1,6 +1,6 @@
 import { ENGINE_VERSION } from '#shared/analysis/engineVersion'
 import { judgeAnalysis } from '#shared/analysis/criteria/judgeAnalysis'
-import type { ReportSnapshot, SnapshotCell } from '#shared/types/snapshot'
+import type { ReportSnapshot, SnapshotCell, SnapshotLoop } from '#shared/types/snapshot'
 import type { AnalysedSource, SourceDefinition } from '#shared/types/source'
 import type { Criterion } from '#shared/types/criterion'
 import type { Loop, OperatingCondition, Parameter } from '#shared/types/system'
@@ -10,6 +10,7 @@ import { UploadRow } from '../database/models/UploadRow'
 import { readBrandForPrint } from '../services/brand/readBrandForPrint'
 import type { ServiceContext } from '../services/context'
 import { nowOf } from '../services/context'
+import { listLoops } from '../services/loops/listLoops'
 import { listParameters } from '../services/parameters/listParameters'
 import { analyseSources } from '../services/sources/analyseSources'
 import { listSourcesOfRecord } from '../services/sources/listSourcesOfRecord'
@@ -48,6 +49,11 @@ function parametersOf(parameters: readonly Parameter[], conditions: readonly Ope
   }))
 }
 
+function snapshotLoop({ id, code, name, axis, breakPoint, otherLoops, breakAt, loopStates, notes }: Loop, codes: ReadonlyMap<number, string>, report: ReportRow): SnapshotLoop {
+  const states = loopStates.flatMap(({ loopId, ...state }) => codes.has(loopId) ? [{ code: codes.get(loopId) ?? '', ...state }] : [])
+  return { code, name, axis, breakPoint, otherLoops, notes, remarks: report.loopRemarks[id] ?? '', breakAt, loopStates: states }
+}
+
 async function historyOf(reportId: number): Promise<ReportSnapshot['history']> {
   const rows = await RevisionRow.findAll({ where: { reportId }, order: [['id', 'ASC']] })
   return rows.flatMap(({ letter, changeNote, frozenByName, issuedByName, issuedAt }) => (
@@ -75,6 +81,7 @@ export async function collectSnapshot(report: ReportRow, draft: DraftFacts, cont
   const [{ system, criteria }, { loops, conditions }, parameters, brand, history] = await Promise.all([
     readSystem(report.systemId), coverageOf(report), listParameters(report.systemId), readBrandForPrint(), historyOf(report.id),
   ])
+  const codes = new Map((await listLoops(report.systemId)).map(({ id, code }) => [id, code]))
   const sources = await listSourcesOfRecord(loops.map(({ id }) => id), conditions.map(({ id }) => id))
   const analysed = await analyseSources(sources, system, context)
   const cells = await Promise.all(loops.flatMap(loop => conditions.map(condition => cellOf(
@@ -92,7 +99,7 @@ export async function collectSnapshot(report: ReportRow, draft: DraftFacts, cont
     report: { title: report.title, documentNumber: report.documentNumber, remarks: report.remarks },
     criteria,
     conditions: conditions.map(({ code, name, coordinates, tags, notes }) => ({ code, name, coordinates, tags, notes })),
-    loops: loops.map(({ id, code, name, axis, breakPoint, otherLoops, notes }) => ({ code, name, axis, breakPoint, otherLoops, notes, remarks: report.loopRemarks[id] ?? '' })),
+    loops: loops.map(loop => snapshotLoop(loop, codes, report)),
     parameters: parametersOf(parameters, conditions),
     cells,
     history,

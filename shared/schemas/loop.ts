@@ -1,5 +1,17 @@
 import { z } from 'zod'
-import { codeField, lineField, nameField, notesField, versionField } from './fields'
+import { codeField, finiteNumber, idField, lineField, nameField, notesField, versionField } from './fields'
+import { limits } from './limits'
+
+/** The block at which a loop is opened. */
+export const breakAtField = z.strictObject({ block: nameField, side: z.enum(['input', 'output'], 'Must be input or output.') }).nullable()
+
+const loopState = z.discriminatedUnion('state', [
+  z.strictObject({ loopId: idField, state: z.enum(['closed', 'open']) }),
+  z.strictObject({ loopId: idField, state: z.literal('held'), gain: finiteNumber }),
+], 'Must be closed, open or held at a gain.')
+
+const loopStatesField = z.array(loopState).max(limits.rows, `At most ${limits.rows} loops.`)
+  .refine(states => new Set(states.map(state => state.loopId)).size === states.length, 'Each loop must stand once.')
 
 const fields = {
   code: codeField,
@@ -7,6 +19,8 @@ const fields = {
   axis: lineField,
   breakPoint: notesField,
   otherLoops: notesField,
+  breakAt: breakAtField,
+  loopStates: loopStatesField,
   notes: notesField,
 }
 
@@ -15,6 +29,8 @@ export const newLoopSchema = z.strictObject({
   axis: lineField.default(''),
   breakPoint: notesField.default(''),
   otherLoops: notesField.default(''),
+  breakAt: breakAtField.default(null),
+  loopStates: loopStatesField.default([]),
   notes: notesField.default(''),
 })
 export const loopChangeSchema = z.strictObject(fields).partial().extend({ version: versionField })

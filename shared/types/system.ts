@@ -47,10 +47,14 @@ export interface Loop extends Versioned {
   name: string
   /** axis or channel */
   axis: string
-  /** the signal at which the loop is opened, in words */
+  /** the signal at which the loop is opened, in words; needed before freezing */
   breakPoint: string
-  /** the state of every other loop while this one is open; needed before freezing */
+  /** what else is to be said of the other loops while this one is open */
   otherLoops: string
+  /** the block at which it is opened; null while none is chosen */
+  breakAt: BreakAt | null
+  /** what the other loops do meanwhile: those that are not at nominal */
+  loopStates: OtherLoopState[]
   notes: string
   position: number
 }
@@ -85,6 +89,8 @@ export interface BoardCell {
   analysis: LoopAnalysis | null
   /** why there is no analysis though there is a source */
   failure: { message: string, path: string } | null
+  /** why its verdict cannot be right beside that of another loop of the same closed system; null where it agrees */
+  disagreement: string | null
   judgement: Judgement
 }
 

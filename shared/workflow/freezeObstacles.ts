@@ -1,5 +1,5 @@
 export interface FreezeFacts {
-  loops: readonly { code: string, breakPoint: string, otherLoops: string }[]
+  loops: readonly { code: string, breakPoint: string }[]
   conditions: readonly unknown[]
 }
 
@@ -8,9 +8,6 @@ export function freezeObstacles({ loops, conditions }: FreezeFacts): string[] {
   return [
     ...(loops.length === 0 ? ['The report covers no loop: choose at least one.'] : []),
     ...(conditions.length === 0 ? ['The report covers no operating condition: choose at least one.'] : []),
-    ...loops.flatMap(({ code, breakPoint, otherLoops }) => [
-      ...(breakPoint.trim() === '' ? [`${code} does not say at which signal it is opened: state its break point.`] : []),
-      ...(otherLoops.trim() === '' ? [`${code} does not say what the other loops do while it is open: state each as closed, open or held.`] : []),
-    ]),
+    ...loops.flatMap(({ code, breakPoint }) => breakPoint.trim() === '' ? [`${code} does not say at which signal it is opened: state its break point.`] : []),
   ]
 }

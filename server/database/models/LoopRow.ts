@@ -1,5 +1,6 @@
 import { Model, type CreationOptional, type InferAttributes, type InferCreationAttributes, type Sequelize } from 'sequelize'
-import { id, liveRows, text, textOrNull, whole } from './columns'
+import type { BreakAt, OtherLoopState } from '#shared/types/system'
+import { id, json, jsonOrNull, liveRows, text, textOrNull, whole } from './columns'
 
 /** A loop of a system: where it is opened and what the others do meanwhile. */
 export class LoopRow extends Model<InferAttributes<LoopRow>, InferCreationAttributes<LoopRow>> {
@@ -15,6 +16,10 @@ export class LoopRow extends Model<InferAttributes<LoopRow>, InferCreationAttrib
   declare version: number
   declare createdAt: string
   declare deletedAt: CreationOptional<string | null>
+  /** the block it is opened at */
+  declare breakAt: CreationOptional<BreakAt | null>
+  /** the other loops that are not at nominal meanwhile */
+  declare loopStates: OtherLoopState[]
 }
 
 export const defineLoopRow = (sequelize: Sequelize) => LoopRow.init({
@@ -30,6 +35,8 @@ export const defineLoopRow = (sequelize: Sequelize) => LoopRow.init({
   version: whole(),
   createdAt: text(),
   deletedAt: textOrNull(),
+  breakAt: jsonOrNull<BreakAt>('breakAt'),
+  loopStates: json<OtherLoopState[]>('loopStates'),
 }, {
   sequelize,
   tableName: 'loops',

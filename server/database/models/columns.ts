@@ -32,5 +32,18 @@ export const json = <Value>(name: string) => ({
   },
 })
 
+/** The same where there may be none. */
+export const jsonOrNull = <Value>(name: string) => ({
+  type: DataTypes.TEXT,
+  allowNull: true,
+  get(this: Model): Value | null | undefined {
+    const stored: unknown = this.getDataValue(name)
+    return typeof stored === 'string' ? JSON.parse(stored) as Value : stored as null | undefined
+  },
+  set(this: Model, value: Value | null): void {
+    this.setDataValue(name, value === null ? null : JSON.stringify(value))
+  },
+})
+
 /** What rows with a soft delete are read with; `unscoped()` sees the deleted ones too. */
 export const liveRows = { where: { deletedAt: null } }

@@ -3,6 +3,8 @@ import { defineAnalysisRow } from './AnalysisRow'
 import { defineArtefactBlob } from './ArtefactBlob'
 import { defineArtefactRow } from './ArtefactRow'
 import { defineAuditEvent } from './AuditEvent'
+import { defineBlockGainRow } from './BlockGainRow'
+import { defineBlockRow } from './BlockRow'
 import { defineConditionRow } from './ConditionRow'
 import { defineCriterionRow } from './CriterionRow'
 import { defineJobEvent } from './JobEvent'
@@ -29,6 +31,8 @@ export const defineModels = (sequelize: Sequelize) => [
   defineArtefactBlob(sequelize),
   defineArtefactRow(sequelize),
   defineAuditEvent(sequelize),
+  defineBlockGainRow(sequelize),
+  defineBlockRow(sequelize),
   defineConditionRow(sequelize),
   defineCriterionRow(sequelize),
   defineJobEvent(sequelize),

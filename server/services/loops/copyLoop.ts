@@ -17,8 +17,8 @@ export function copyLoop(loopId: number, fields: LoopCopy, context: ServiceConte
     const original = await findLoop(loopId)
     await assertCodeFree(LoopRow, original.systemId, fields.code)
     await assertRoom(LoopRow, original.systemId)
-    const { systemId, axis, breakPoint, otherLoops, notes } = original
-    const copy = await LoopRow.create({ systemId, axis, breakPoint, otherLoops, notes, ...fields, position: await nextPosition(LoopRow, systemId), version: 1, createdAt: nowOf(context) })
+    const { systemId, axis, breakPoint, otherLoops, breakAt, loopStates, notes } = original
+    const copy = await LoopRow.create({ systemId, axis, breakPoint, otherLoops, breakAt, loopStates, notes, ...fields, position: await nextPosition(LoopRow, systemId), version: 1, createdAt: nowOf(context) })
     await copySources({ loopId }, source => ({ loopId: copy.id, conditionId: source.conditionId }), context)
     await recordAudit(context, 'loop copied', { systemId, subjectId: copy.id, payload: { from: loopId, ...fields } })
     return presentLoop(copy)

@@ -1,8 +1,8 @@
+import { AppError } from '#shared/errors/AppError'
 import type { Criterion } from '#shared/types/criterion'
 import type { Source } from '#shared/types/source'
 import type { BoardCell, Loop, OperatingCondition, Parameter, System } from '#shared/types/system'
 import { SourceRow } from '../../database/models/SourceRow'
-import { presentLoop } from '../../presenters/presentLoop'
 import { presentSource } from '../../presenters/presentSource'
 import { presentSystem } from '../../presenters/presentSystem'
 import { listConditions } from '../conditions/listConditions'
@@ -12,9 +12,12 @@ import { listParameters } from '../parameters/listParameters'
 import { findSystem } from '../systems/findSystem'
 import { judgeCells } from '../systems/judgeCells'
 import { findLoop } from './findLoop'
+import { listLoops } from './listLoops'
 
 export interface LoopContent {
   loop: Loop
+  /** all of the system, in their order */
+  loops: Pick<Loop, 'id' | 'code' | 'name'>[]
   system: System
   conditions: OperatingCondition[]
   parameters: Parameter[]
@@ -27,13 +30,15 @@ export interface LoopContent {
 
 /** A loop with all that its page shows. */
 export async function readLoop(loopId: number, context: OpenContext): Promise<LoopContent> {
-  const loop = await findLoop(loopId)
-  const [systemRow, conditions, parameters, criteria] = await Promise.all([
-    findSystem(loop.systemId), listConditions(loop.systemId), listParameters(loop.systemId), listCriteria(loop.systemId),
+  const { systemId } = await findLoop(loopId)
+  const [systemRow, loops, conditions, parameters, criteria] = await Promise.all([
+    findSystem(systemId), listLoops(systemId), listConditions(systemId), listParameters(systemId), listCriteria(systemId),
   ])
+  const loop = loops.find(({ id }) => id === loopId)
+  if (!loop) throw new AppError('notFound', 'There is no such loop.')
   const system = presentSystem(systemRow)
   const conditionIds = conditions.map(condition => condition.id)
   const sources = await SourceRow.findAll({ where: { loopId, conditionId: conditionIds }, order: ['id'] })
   const cells = await judgeCells(system, [loopId], conditionIds, criteria, context)
-  return { loop: presentLoop(loop), system, conditions, parameters, criteria, sources: sources.map(presentSource), cells }
+  return { loop, loops: loops.map(({ id, code, name }) => ({ id, code, name })), system, conditions, parameters, criteria, sources: sources.map(presentSource), cells }
 }

@@ -55,7 +55,7 @@ async function tryToFreeze(reportId: number, changeNote: string, context: Servic
 
 /**
  * Freezes a report: takes a snapshot of every input and result as the next draft of the letter after the newest issued one, and queues its
- * rendering. Throws 'refused' with the obstacles in words where a loop lacks its break point or the state of the others, or nothing is covered.
+ * rendering. Throws 'refused' with the obstacles in words where a loop lacks its break point, or nothing is covered.
  */
 export async function freezeRevision(reportId: number, { changeNote }: NewRevision, context: ServiceContext): Promise<Revision> {
   for (let attempt = 1; attempt <= mostTries; attempt++) {

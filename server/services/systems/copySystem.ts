@@ -41,9 +41,15 @@ type Twins = Map<number, number>
 
 async function copyLoops(systemId: number, copyId: number, context: ServiceContext): Promise<Twins> {
   const twins: Twins = new Map()
+  const copies: LoopRow[] = []
   for (const loop of await LoopRow.findAll({ where: { systemId }, order: ['position', 'id'] })) {
-    const { code, name, axis, breakPoint, otherLoops, notes, position } = loop
-    twins.set(loop.id, (await LoopRow.create({ systemId: copyId, code, name, axis, breakPoint, otherLoops, notes, position, version: 1, createdAt: nowOf(context) })).id)
+    const { code, name, axis, breakPoint, otherLoops, breakAt, loopStates, notes, position } = loop
+    const copy = await LoopRow.create({ systemId: copyId, code, name, axis, breakPoint, otherLoops, breakAt, loopStates, notes, position, version: 1, createdAt: nowOf(context) })
+    copies.push(copy)
+    twins.set(loop.id, copy.id)
+  }
+  for (const copy of copies) {
+    await copy.update({ loopStates: copy.loopStates.flatMap(state => twins.has(state.loopId) ? [{ ...state, loopId: twins.get(state.loopId) ?? 0 }] : []) })
   }
   return twins
 }

@@ -20,6 +20,7 @@ export async function judgeCells(
       source: entry ? { id: entry.source.id, name: entry.source.name, kind: entry.source.kind } : null,
       analysis,
       failure: entry?.failure ?? null,
+      disagreement: null,
       judgement: judgeAnalysis(analysis, criteria),
     }
   }))

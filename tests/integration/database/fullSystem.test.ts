@@ -29,7 +29,7 @@ describe('a system that holds as many rows as it may', () => {
     const systemId = team.system.id
     await deleteLoop((await buildLoop(systemId, engineer(), { code: 'GONE' })).id, engineer())
     const gone = await LoopRow.unscoped().findOne({ where: { code: 'GONE' }, rejectOnEmpty: true })
-    await LoopRow.bulkCreate(numbered(limits.rows - 1).map(row => ({ ...row, systemId, axis: '', breakPoint: '', otherLoops: '' })))
+    await LoopRow.bulkCreate(numbered(limits.rows - 1).map(row => ({ ...row, systemId, axis: '', breakPoint: '', otherLoops: '', loopStates: [] })))
     const refused = { code: 'refused', message: `A system holds at most ${limits.rows} loops.` }
     await expect(buildLoop(systemId, engineer())).rejects.toMatchObject(refused)
     await expect(copyLoop(team.loop.id, { code: 'COPY', name: 'Copy' }, engineer())).rejects.toMatchObject(refused)

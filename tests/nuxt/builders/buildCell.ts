@@ -8,13 +8,14 @@ export function buildCell(loopId: number, conditionId: number, analysis: LoopAna
     loopId, conditionId, analysis,
     source: { id: 100 * loopId + conditionId, name: 'design model', kind: 'coefficients' },
     failure: null,
+    disagreement: null,
     judgement: judgeAnalysis(analysis, defaultCriteria),
     ...fields,
   }
 }
 
 export const buildLoop = (id: number, code: string): Loop =>
-  ({ id, version: 1, systemId: 1, code, name: `Loop ${code}`, axis: '', breakPoint: 'command', otherLoops: 'closed', notes: '', position: id })
+  ({ id, version: 1, systemId: 1, code, name: `Loop ${code}`, axis: '', breakPoint: 'command', otherLoops: 'closed', breakAt: null, loopStates: [], notes: '', position: id })
 
 export const buildCondition = (id: number, code: string): OperatingCondition =>
   ({ id, version: 1, systemId: 1, code, name: `Condition ${code}`, coordinates: [], tags: [], notes: '', position: id })

@@ -33,7 +33,7 @@ describe('what stands against freezing a report', () => {
   })
 
   it('takes a blank break point for none', () => {
-    expect(freezeObstacles({ loops: [{ code: 'SL-P', breakPoint: ' \n', otherLoops: 'closed' }], conditions: [{}] })).toEqual(['SL-P does not say at which signal it is opened: state its break point.'])
+    expect(freezeObstacles({ loops: [{ code: 'SL-P', breakPoint: ' \n' }], conditions: [{}] })).toEqual(['SL-P does not say at which signal it is opened: state its break point.'])
   })
 })
 
