@@ -8,6 +8,7 @@ import type { MeasurementProblem } from '#shared/importers/MeasurementProblem'
 import { previewMeasurement, type MeasurementPreview } from '#shared/importers/previewMeasurement'
 import { readMeasurement } from '#shared/importers/readMeasurement'
 import { buildLoopFigureData, type CurveSource } from '#shared/plots/buildLoopFigureData'
+import { curveSourceOf } from '#shared/plots/curveSourceOf'
 import type { LoopFigureData } from '#shared/plots/FigureData'
 import { loopInputFromDefinition, type DefinitionFacts } from '#shared/sources/loopInputFromDefinition'
 import type { LoopAnalysis, LoopInput } from '#shared/types/analysis'
@@ -47,13 +48,7 @@ export interface DrawnCurve {
 
 const requiredVectorMarginOf = (criteria: readonly Criterion[]) => criteria.find(criterion => criterion.quantity === 'vectorMargin')?.limit ?? null
 
-function curveSource({ name, input, analysis }: DrawnCurve): CurveSource {
-  return {
-    name, analysis, gain: prepareLoopGain(input),
-    ...'measured' in input && { sampleFrequencies: input.measured.points.map(point => point.frequency) },
-    ...'sampleTime' in input && input.sampleTime !== undefined && { sampleTime: input.sampleTime },
-  }
-}
+const curveSource = ({ name, input, analysis }: DrawnCurve): CurveSource => curveSourceOf(name, input, analysis, prepareLoopGain(input))
 
 function analyseDefinition({ title, name, definition, facts, criteria }: LiveRequest): LiveAnalysis | AnalysisFailed {
   try {

@@ -39,6 +39,8 @@ export interface FigureCurve {
   untrusted?: UntrustedGap[]
   /** in the figure's unit; pi/T of a sampled loop */
   halfSampleRate?: number
+  /** The continuous approximation of a sampled loop, drawn thin; its analysis is that of the loop gain it stands beside. */
+  isApproximation?: boolean
 }
 
 /** What the figures of one loop show. The first curve is the main one: it carries the marks and the labels. */

@@ -14,6 +14,8 @@ export interface CurveSource {
   sampleFrequencies?: ArrayLike<number>
   /** s; of a sampled loop */
   sampleTime?: number
+  /** The continuous approximation of a sampled loop; its analysis is that of the loop gain it stands beside. */
+  isApproximation?: boolean
 }
 
 export interface LoopFigureSource {
@@ -39,9 +41,9 @@ export function buildLoopFigureData(source: LoopFigureSource): LoopFigureData {
   }
 }
 
-function buildCurve({ name, analysis, gain, sampleFrequencies, sampleTime }: CurveSource, range: FrequencyRange): FigureCurve {
+function buildCurve({ name, analysis, gain, sampleFrequencies, sampleTime, isApproximation = false }: CurveSource, range: FrequencyRange): FigureCurve {
   const unit = analysis.frequencyUnit === 'Hz' ? 2 * Math.PI : 1
-  const measured = sampleFrequencies !== undefined || analysis.samples !== undefined
+  const measured = !isApproximation && (sampleFrequencies !== undefined || analysis.samples !== undefined)
   const untrusted = measured
     ? analysis.coverage.exceptions.map(({ from, to, reason }) => ({ from, to: to === 'infinity' ? range.to : to, reason }))
     : undefined
@@ -54,6 +56,7 @@ function buildCurve({ name, analysis, gain, sampleFrequencies, sampleTime }: Cur
   const seeds = Array.from(sampleFrequencies ?? [], frequency => frequency * unit)
   const { frequency, re, im, drawnTo } = sampleLoopGain(gain, { from: range.from * unit, to: range.to * unit, exact, seeds })
   const curve: FigureCurve = { name, analysis, curve: { frequency: frequency.map(w => w / unit), re, im, ...(drawnTo !== undefined && { drawnTo: drawnTo / unit }) } }
+  if (isApproximation) curve.isApproximation = true
   if (measured) {
     curve.samples = measuredSamples(analysis, gain, sampleFrequencies, unit)
     curve.untrusted = untrusted

@@ -3,6 +3,7 @@ import type { LoopGain } from '#shared/analysis/LoopGain'
 import type { LoopInput } from '#shared/types/analysis'
 import type { CurveSource } from '#shared/plots/buildLoopFigureData'
 import { buildLoopFigureData } from '#shared/plots/buildLoopFigureData'
+import { curveSourceOf } from '#shared/plots/curveSourceOf'
 import type { FigureDataOf, FigureName } from '#shared/plots/figures'
 import { figures } from '#shared/plots/figures'
 import type { LoopFigureData } from '#shared/plots/FigureData'
@@ -67,10 +68,7 @@ interface DrawableCell extends PlacedCell {
 function drawable(placed: PlacedCell, gain: LoopGain | null): DrawableCell | null {
   const { cell: { analysis, input }, condition } = placed
   if (!analysis || !input || !gain) return null
-  const source: CurveSource = { name: `${condition.code} ${condition.name}`, analysis, gain }
-  if ('measured' in input) source.sampleFrequencies = input.measured.points.map(point => point.frequency)
-  if ('sampleTime' in input && input.sampleTime !== undefined) source.sampleTime = input.sampleTime
-  return { ...placed, gain, source }
+  return { ...placed, gain, source: curveSourceOf(`${condition.code} ${condition.name}`, input, analysis, gain) }
 }
 
 /**

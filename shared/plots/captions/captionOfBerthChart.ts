@@ -1,8 +1,9 @@
 import type { LoopFigureData } from '../FigureData'
-import { drawnToWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
+import { drawnToWords, measuredWords, nearestWords, otherCurvesWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in a berth chart. */
-export function captionOfBerthChart({ title, curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
+export function captionOfBerthChart({ title, curves, requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
+  const [main] = curves
   const rings = requiredVectorMargin === null
     ? 'Rings are lines of equal distance to −1.'
     : 'Rings are lines of equal distance to −1; L must stay outside the dashed one.'
@@ -11,6 +12,7 @@ export function captionOfBerthChart({ title, curves: [main], requiredVectorMargi
     stabilityWords(main.analysis),
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
     'Triangles are gain crossovers (point down: gain falling), diamonds phase crossovers, circles closest approaches.',
+    otherCurvesWords(curves),
     drawnToWords(main, frequencyUnit),
     measuredWords(main, true),
   )

@@ -1,9 +1,10 @@
 import type { LoopFigureData } from '../FigureData'
 import { hasMargins } from '../text/markWords'
-import { countWords, drawnToWords, halfSampleRateWords, measuredWords, sentences, stabilityWords } from './captionWords'
+import { countWords, drawnToWords, halfSampleRateWords, measuredWords, otherCurvesWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in gain and phase over frequency. */
-export function captionOfMagnitudePhase({ title, curves: [main], frequencyUnit }: LoopFigureData): string {
+export function captionOfMagnitudePhase({ title, curves, frequencyUnit }: LoopFigureData): string {
+  const [main] = curves
   const { analysis } = main
   const bars = hasMargins(analysis)
     ? 'Vertical bars are margins: of phase at each gain crossover, to an odd multiple of 180 deg; of gain at each phase crossover, to 0 dB.'
@@ -13,6 +14,7 @@ export function captionOfMagnitudePhase({ title, curves: [main], frequencyUnit }
     stabilityWords(analysis),
     bars,
     halfSampleRateWords(main.halfSampleRate, frequencyUnit),
+    otherCurvesWords(curves),
     drawnToWords(main, frequencyUnit),
     measuredWords(main, false),
   )

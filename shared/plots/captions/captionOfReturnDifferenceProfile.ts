@@ -1,8 +1,9 @@
 import type { LoopFigureData } from '../FigureData'
-import { countWords, drawnToWords, halfSampleRateWords, measuredWords, nearestWords, sentences, stabilityWords } from './captionWords'
+import { countWords, drawnToWords, halfSampleRateWords, measuredWords, nearestWords, otherCurvesWords, sentences, stabilityWords } from './captionWords'
 
 /** What there is to see in a return difference profile. */
-export function captionOfReturnDifferenceProfile({ title, curves: [main], requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
+export function captionOfReturnDifferenceProfile({ title, curves, requiredVectorMargin, frequencyUnit }: LoopFigureData): string {
+  const [main] = curves
   const tint = requiredVectorMargin === null
     ? 'In the tinted part the closed loop amplifies disturbances.'
     : 'In the tinted part the closed loop amplifies disturbances; the curve must stay above the dashed line.'
@@ -11,6 +12,7 @@ export function captionOfReturnDifferenceProfile({ title, curves: [main], requir
     stabilityWords(main.analysis),
     nearestWords(main.analysis, requiredVectorMargin, frequencyUnit),
     halfSampleRateWords(main.halfSampleRate, frequencyUnit),
+    otherCurvesWords(curves),
     drawnToWords(main, frequencyUnit),
     measuredWords(main, false),
   )

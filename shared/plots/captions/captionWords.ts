@@ -43,6 +43,18 @@ export function measuredWords({ samples, untrusted, analysis }: FigureCurve, inP
   return sentences(points, trust, noise)
 }
 
+/** What the curves beside the main one are, and whose the marks are. */
+export function otherCurvesWords([main, ...others]: readonly FigureCurve[]): string {
+  if (main === undefined || others.length === 0) return ''
+  const sources = others.filter(curve => !curve.isApproximation)
+  const names = sources.map(({ name, samples }) => samples ? `${name} (measured, its samples marked)` : name)
+  const listed = names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`
+  return sentences(
+    sources.length === 0 ? '' : `${sources.length === 1 ? 'Broken line' : 'Broken lines'}: ${listed}; marks and words are those of ${main.name}.`,
+    sources.length === others.length ? '' : 'Thin line: the continuous approximation.',
+  )
+}
+
 /** Where the line ends short of the last crossing. */
 export function drawnToWords({ curve: { drawnTo } }: FigureCurve, unit: FrequencyUnit): string {
   return drawnTo === undefined ? '' : `Beyond ${formatFrequency(drawnTo, unit)} the loop gain turns too often to be drawn: the line ends there, the marks go on.`

@@ -2,6 +2,7 @@ import type { DrawFigure, FigureOptions } from '../Figure'
 import type { FigureCurve, LoopFigureData } from '../FigureData'
 import type { Pen } from '../Pen'
 import { circlePath } from '../curves/circlePath'
+import { curveStyle } from '../curves/curveStyle'
 import { curveUpTo } from '../curves/curveUpTo'
 import { curveViews } from '../curves/curveViews'
 import { interpolateCurve } from '../curves/interpolateCurve'
@@ -15,6 +16,7 @@ import { drawCurveKey } from '../marks/drawCurveKey'
 import { drawDirection, drawFrequencyMarks } from '../marks/drawFrequencyMarks'
 import { drawLabel } from '../marks/drawLabel'
 import { drawApproachMark, drawGainMark, drawPhaseMark, markGroup } from '../marks/drawMark'
+import { drawOtherSamples } from '../marks/drawSamples'
 import { drawStanding } from '../marks/drawStanding'
 import { loopMarks } from '../marks/loopMarks'
 import { withoutCovered } from '../marks/withoutCovered'
@@ -55,9 +57,10 @@ export const drawBerthChart: DrawFigure<LoopFigureData> = (pen, data, options) =
     const figureCurve = data.curves[index]!
     const { xs, ys } = project(figureCurve, plane)
     const end = windingEnd(figureCurve, plane)
-    const pieces = drawCurve(pen, figureCurve, index, xs.subarray(0, end), ys.subarray(0, end), panel, theme)
+    const pieces = drawCurve(pen, figureCurve, curveStyle(data.curves, index, theme), xs.subarray(0, end), ys.subarray(0, end), panel)
     field.blockPolylines(pieces)
-    if (index === 0) {
+    if (index > 0) drawOtherSamples(pen, figureCurve.samples, index, ({ re, im }) => [plane.x.toPixel(re), plane.y.toPixel(im)], panel, theme)
+    else {
       mainPieces = pieces
       drawWinding(pen, field, figureCurve, end, plane, theme)
     }

@@ -1,10 +1,11 @@
 import type { DrawFigure, FigureMark, FigureOptions } from '../Figure'
-import type { FigureCurve, LoopFigureData } from '../FigureData'
+import type { FigureCurve, LoopFigureData, MeasuredSample } from '../FigureData'
 import type { Pen } from '../Pen'
+import { alignedViews } from '../curves/alignedViews'
 import { curveUpTo } from '../curves/curveUpTo'
 import { clipPolyline } from '../curves/clipPolyline'
 import type { CurveViews } from '../curves/curveViews'
-import { curveViews } from '../curves/curveViews'
+import { curveStyle } from '../curves/curveStyle'
 import { distanceContour } from '../curves/distanceContour'
 import { nearestOnCurve } from '../curves/nearestOnCurve'
 import { pathData } from '../curves/pathData'
@@ -12,6 +13,7 @@ import type { PhaseWindow } from '../curves/phaseWindow'
 import { phaseWindow, shownPhase } from '../curves/phaseWindow'
 import type { Rectangle } from '../curves/Rectangle'
 import { pointsInside } from '../curves/pointsInside'
+import { samplePhase } from '../curves/samplePhase'
 import { shoalDistances } from '../curves/shoalDistances'
 import { valueOfView } from '../curves/valueOfView'
 import { windingStart } from '../curves/windingStart'
@@ -26,7 +28,7 @@ import { drawHatching } from '../marks/drawHatching'
 import { drawLabel } from '../marks/drawLabel'
 import { drawLevel, drawLevels } from '../marks/drawLevels'
 import { drawApproachMark, drawGainMark, drawPhaseMark, markGroup } from '../marks/drawMark'
-import { drawSamples } from '../marks/drawSamples'
+import { drawOtherSamples, drawSamples } from '../marks/drawSamples'
 import { drawStanding } from '../marks/drawStanding'
 import type { LoopMark } from '../marks/loopMarks'
 import { approachColour } from '../marks/approachStyle'
@@ -58,7 +60,7 @@ const title = '|L|, dB'
 export const drawGainOverPhase: DrawFigure<LoopFigureData> = (pen, data, options) => {
   const { theme, width } = options
   const main = data.curves[0]
-  const views = data.curves.map(({ curve }) => curveViews(curve))
+  const views = alignedViews(data.curves)
   const window = phaseWindow(views.map(view => view.phase))
   const keyHeight = drawCurveKey(pen, data.curves, 0, 0, width, theme)
   const height = options.height ?? Math.round(Math.min(width * 0.7, 560)) + keyHeight
@@ -84,9 +86,10 @@ export const drawGainOverPhase: DrawFigure<LoopFigureData> = (pen, data, options
     const wrapped = wrapPhase(figureCurve.curve.frequency, viewsUpTo(views[index]!, end), window)
     const shown: FigureCurve = { ...figureCurve, curve: { ...figureCurve.curve, frequency: wrapped.frequency } }
     const [xs, ys] = [wrapped.phase.map(plane.x.toPixel), wrapped.gain.map(plane.y.toPixel)]
-    const pieces = drawCurve(pen, shown, index, xs, ys, panel, theme)
+    const pieces = drawCurve(pen, shown, curveStyle(data.curves, index, theme), xs, ys, panel)
     field.blockPolylines(pieces)
-    if (index === 0) {
+    if (index > 0) drawOtherSamples(pen, figureCurve.samples, index, sample => samplePlace(sample, figureCurve, views[index]!.phase, window, plane), panel, theme)
+    else {
       mainPieces = pieces
       mainShown = { xs, ys, shown, end }
       drawWinding(pen, field, figureCurve, views[0]!, end, plane, options)
@@ -188,12 +191,8 @@ function blockGround(field: LabelField, { panel, x, y }: Plane, criticals: numbe
   field.blockPolylines([[panel.x, y.toPixel(0), panel.x + panel.width, y.toPixel(0)], ...criticals.map(at => [at, panel.y, at, panel.y + panel.height])], true)
 }
 
-function samplePlace(sample: { frequency: number, re: number, im: number }, main: FigureCurve, phases: Float64Array, window: PhaseWindow, { x, y }: Plane): [number, number] {
-  const near = valueOfView(main.curve, phases, sample.frequency)
-  if (near === null) return [Number.NaN, Number.NaN]
-  const argument = Math.atan2(sample.im, sample.re) * 180 / Math.PI
-  const phase = argument + 360 * Math.round((near - argument) / 360)
-  return [x.toPixel(shownPhase(phase, window)), y.toPixel(20 * Math.log10(Math.hypot(sample.re, sample.im)))]
+function samplePlace(sample: MeasuredSample, curve: FigureCurve, phases: Float64Array, window: PhaseWindow, { x, y }: Plane): [number, number] {
+  return [x.toPixel(shownPhase(samplePhase(sample, curve, phases), window)), y.toPixel(20 * Math.log10(Math.hypot(sample.re, sample.im)))]
 }
 
 function placeMarks(main: FigureCurve, views: CurveViews, data: LoopFigureData, window: PhaseWindow, { panel, x, y }: Plane): PlacedMark[] {

@@ -1,14 +1,16 @@
 import type { DrawFigure, FigureMark, FigureOptions } from '../Figure'
-import type { FigureCurve, LoopFigureData } from '../FigureData'
+import type { FigureCurve, LoopFigureData, MeasuredSample } from '../FigureData'
 import type { Pen } from '../Pen'
 import type { CurveViews } from '../curves/curveViews'
 import type { Rectangle } from '../curves/Rectangle'
 import { formatGainMargin } from '../../formatting/formatGainMargin'
 import { formatPhaseMargin } from '../../formatting/formatPhaseMargin'
-import { curveViews } from '../curves/curveViews'
+import { alignedViews } from '../curves/alignedViews'
+import { curveStyle } from '../curves/curveStyle'
 import type { PhaseWindow } from '../curves/phaseWindow'
 import { phaseWindow, shownPhase } from '../curves/phaseWindow'
 import { pointsInside } from '../curves/pointsInside'
+import { samplePhase } from '../curves/samplePhase'
 import { stretchesAboveOne } from '../curves/stretchesAboveOne'
 import { valueOfView } from '../curves/valueOfView'
 import { windingStart } from '../curves/windingStart'
@@ -21,7 +23,7 @@ import { drawHatching } from '../marks/drawHatching'
 import { drawLabel } from '../marks/drawLabel'
 import { drawLevel, drawLevels } from '../marks/drawLevels'
 import { drawApproachMark, drawGainMark, drawPhaseMark, markGroup } from '../marks/drawMark'
-import { drawSamples } from '../marks/drawSamples'
+import { drawOtherSamples, drawSamples } from '../marks/drawSamples'
 import { drawHalfSampleRate, drawUntrusted } from '../marks/drawUntrusted'
 import { drawStanding } from '../marks/drawStanding'
 import type { LoopMark } from '../marks/loopMarks'
@@ -51,7 +53,7 @@ const title = '|L|, dB'
 export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, options) => {
   const { theme, width } = options
   const main = data.curves[0]
-  const views = data.curves.map(({ curve }) => curveViews(curve))
+  const views = alignedViews(data.curves)
   const window = phaseWindow(views.map(view => view.phase))
   const keyHeight = drawCurveKey(pen, data.curves, 0, 0, width, theme)
   const height = options.height ?? Math.round(Math.min(width * 0.82, 620)) + keyHeight
@@ -66,14 +68,20 @@ export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, option
   for (let index = data.curves.length - 1; index >= 0; index--) {
     const figureCurve = data.curves[index]!
     const xs = figureCurve.curve.frequency.map(x.toPixel)
-    fields.upper.blockPolylines(drawCurve(pen, figureCurve, index, xs, views[index]!.gain.map(gain.toPixel), upper, theme))
+    const style = curveStyle(data.curves, index, theme)
+    fields.upper.blockPolylines(drawCurve(pen, figureCurve, style, xs, views[index]!.gain.map(gain.toPixel), upper))
     const end = windingStart(views[index]!.phase, xs, closestTurns)
     const wrapped = wrapPhase(figureCurve.curve.frequency, { ...views[index]!, phase: views[index]!.phase.subarray(0, end) }, window)
     if (index === 0 && end < xs.length) drawWinding(pen, fields.lower, xs[end]!, panels, options)
     const shown: FigureCurve = { ...figureCurve, curve: { ...figureCurve.curve, frequency: wrapped.frequency } }
-    fields.lower.blockPolylines(drawCurve(pen, shown, index, wrapped.frequency.map(x.toPixel), wrapped.phase.map(phase.toPixel), lower, theme))
+    fields.lower.blockPolylines(drawCurve(pen, shown, style, wrapped.frequency.map(x.toPixel), wrapped.phase.map(phase.toPixel), lower))
+    const gainPlace = ({ frequency, re, im }: MeasuredSample): [number, number] => [x.toPixel(frequency), gain.toPixel(20 * Math.log10(Math.hypot(re, im)))]
+    const phasePlace = (sample: MeasuredSample): [number, number] => [x.toPixel(sample.frequency), phase.toPixel(shownPhase(samplePhase(sample, figureCurve, views[index]!.phase), window))]
+    for (const [place, panel] of [[gainPlace, upper], [phasePlace, lower]] as const) {
+      if (index > 0) drawOtherSamples(pen, figureCurve.samples, index, place, panel, theme)
+      else drawSamples(pen, figureCurve.samples, place, panel, theme)
+    }
   }
-  drawSamples(pen, main.samples, ({ frequency, re, im }) => [x.toPixel(frequency), gain.toPixel(20 * Math.log10(Math.hypot(re, im)))], upper, theme)
 
   const placed: { mark: LoopMark, kind: LoopMark['kind'], at: MarkPlaces, x: number, y: number }[] = []
   for (const mark of loopMarks(main.analysis, data.frequencyUnit, data.requiredVectorMargin)) {

@@ -1,7 +1,8 @@
 import type { DrawFigure, FigureMark } from '../Figure'
-import type { LoopFigureData } from '../FigureData'
+import type { LoopFigureData, MeasuredSample } from '../FigureData'
 import type { Polyline } from '../curves/clipPolyline'
 import type { Rectangle } from '../curves/Rectangle'
+import { curveStyle } from '../curves/curveStyle'
 import { curveViews } from '../curves/curveViews'
 import { interpolateCurve } from '../curves/interpolateCurve'
 import { pointsInside } from '../curves/pointsInside'
@@ -12,7 +13,7 @@ import { drawFrequencyGrid, drawFrequencyNumbers, frequencyAxisHeight, numberOve
 import { drawLabel } from '../marks/drawLabel'
 import { drawLevel, drawLevels } from '../marks/drawLevels'
 import { drawApproachMark, markGroup } from '../marks/drawMark'
-import { drawSamples } from '../marks/drawSamples'
+import { drawOtherSamples, drawSamples } from '../marks/drawSamples'
 import { drawHalfSampleRate, drawUntrusted } from '../marks/drawUntrusted'
 import { drawStanding } from '../marks/drawStanding'
 import { approachColour } from '../marks/approachStyle'
@@ -46,6 +47,7 @@ export const drawReturnDifferenceProfile: DrawFigure<LoopFigureData> = (pen, dat
   const x = logScale(data.range.from, data.range.to, panel.x, panel.x + panel.width)
   const y = logScale(lowestShown(data), highest, panel.y + panel.height, panel.y)
   const field = new LabelField(panel)
+  const samplePlace = ({ frequency, re, im }: MeasuredSample): [number, number] => [x.toPixel(frequency), y.toPixel(Math.hypot(1 + re, im))]
 
   // Tints first: under one, and under the criterion.
   pen.rect(panel.x, y.toPixel(1), panel.width, panel.y + panel.height - y.toPixel(1), { fill: theme.shoal[0] })
@@ -65,10 +67,11 @@ export const drawReturnDifferenceProfile: DrawFigure<LoopFigureData> = (pen, dat
   for (let index = data.curves.length - 1; index >= 0; index--) {
     const figureCurve = data.curves[index]!
     const { distance } = curveViews(figureCurve.curve)
-    const pieces: Polyline[] = drawCurve(pen, figureCurve, index, figureCurve.curve.frequency.map(x.toPixel), distance.map(y.toPixel), panel, theme)
+    const pieces: Polyline[] = drawCurve(pen, figureCurve, curveStyle(data.curves, index, theme), figureCurve.curve.frequency.map(x.toPixel), distance.map(y.toPixel), panel)
     field.blockPolylines(pieces)
+    if (index > 0) drawOtherSamples(pen, figureCurve.samples, index, samplePlace, panel, theme)
   }
-  drawSamples(pen, main.samples, ({ frequency, re, im }) => [x.toPixel(frequency), y.toPixel(Math.hypot(1 + re, im))], panel, theme)
+  drawSamples(pen, main.samples, samplePlace, panel, theme)
 
   const marks: FigureMark[] = []
   const approaches = loopMarks(main.analysis, data.frequencyUnit, required)

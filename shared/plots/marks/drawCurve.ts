@@ -1,20 +1,18 @@
 import type { Polyline } from '../curves/clipPolyline'
 import { clipPolyline } from '../curves/clipPolyline'
-import { curveStyle } from '../curves/curveStyle'
+import type { CurveStyle } from '../curves/curveStyle'
 import { pathData } from '../curves/pathData'
 import type { Rectangle } from '../curves/Rectangle'
 import type { FigureCurve } from '../FigureData'
 import type { Pen } from '../Pen'
-import type { PlotTheme } from '../theme'
 
 const gapDash = '1.5 3'
 
 /**
- * Draws the curve at `index` through the points (px) inside a rectangle: dotted where a measured response cannot be trusted between its samples.
+ * Draws a curve through the points (px) inside a rectangle: dotted where a measured response cannot be trusted between its samples.
  * Returns the pieces as drawn, so that labels keep off them.
  */
-export function drawCurve(pen: Pen, figureCurve: FigureCurve, index: number, xs: Float64Array, ys: Float64Array, panel: Rectangle, theme: PlotTheme): Polyline[] {
-  const { stroke, width, attributes } = curveStyle(index, theme)
+export function drawCurve(pen: Pen, figureCurve: FigureCurve, { stroke, width, attributes }: CurveStyle, xs: Float64Array, ys: Float64Array, panel: Rectangle): Polyline[] {
   const all = clipPolyline(xs, ys, panel)
   const gaps = figureCurve.untrusted ?? []
   if (gaps.length === 0) {

@@ -4,6 +4,7 @@ import type { Pen } from '../Pen'
 import { fitText } from '../text/fitText'
 import { textWidth } from '../text/textWidth'
 import type { PlotTheme } from '../theme'
+import { sampleShape } from './drawSamples'
 
 const sample = 26
 
@@ -20,8 +21,10 @@ export function drawCurveKey(pen: Pen, curves: readonly FigureCurve[], x: number
     const name = fitText(curve.name, width - sample - 6, size)
     const needed = sample + 6 + textWidth(name, size)
     if (atX > x && atX + needed > x + width) [atX, atY] = [x, atY + rowHeight]
-    const { stroke, width: lineWidth, attributes } = curveStyle(index, theme)
-    pen.stroke(`M${Math.round(atX)} ${Math.round(atY + size * 0.65)}h${sample}`, stroke, lineWidth, attributes)
+    const { stroke, width: lineWidth, attributes } = curveStyle(curves, index, theme)
+    const [lineX, lineY] = [Math.round(atX), Math.round(atY + size * 0.65)]
+    pen.stroke(`M${lineX} ${lineY}h${sample}`, stroke, lineWidth, attributes)
+    if (curve.samples && index > 0) pen.stroke(sampleShape(index, lineX + sample / 2, lineY), theme.slate, 0.9)
     pen.text(name, atX + sample + 6, atY + size, { size, fill: theme.ink })
     atX += needed + 18
   })

@@ -92,6 +92,27 @@ export const measured = once((): LoopFigureData => {
   return buildLoopFigureData({ title: 'SL-P Slew position', requiredVectorMargin: 0.5, curves: [{ name: 'sweep 2', analysis, gain, sampleFrequencies: discs.map(disc => disc.frequency) }] })
 })
 
+/** A model of record with its continuous approximation, a sweep that lies a little beside it, and a second sweep over part of the band. */
+export const compared = once((): LoopFigureData => {
+  const sweep = (name: string, factor: number, stretch: number, from: number, to: number) => {
+    const gain: LoopGain = { ...scaled(slewGain, factor, stretch), axisStart: from, axisEnd: to }
+    const analysis = analysisByScan(gain, from, to)
+    const sampleFrequencies = Array.from({ length: 80 }, (_, i) => Math.min(to, from * (to / from) ** (i / 79)))
+    analysis.samples = sampleFrequencies.length
+    return { name, gain, analysis, sampleFrequencies }
+  }
+  const analysis = analysisByScan(slewGain, 0.5, 3000)
+  return buildLoopFigureData({
+    title: 'SL-P Slew position', requiredVectorMargin: 0.5,
+    curves: [
+      { name: 'design model', gain: slewGain, analysis },
+      { name: 'continuous approximation', gain: scaled(slewGain, 1, 1.02), analysis, isApproximation: true },
+      sweep('sweep 1', 1.1, 1.03, 2, 300),
+      sweep('sweep 2', 0.92, 0.98, 30, 160),
+    ],
+  })
+})
+
 export const crossingRows = once((): CrossingChartData => {
   const row = (code: string, name: string, gain: LoopGain | null, verdict: string, standing: CrossingChartRow['standing'], stability: 'stable' | 'unstable' = 'stable'): CrossingChartRow => ({
     key: code, code, name, verdict, standing, requiredVectorMargin: 0.5, gainAboveOne: false,

@@ -1,6 +1,11 @@
 import { describe, expect, it } from 'vitest'
 import { createDrawing } from '#server/adapters/svgdom/createDrawing'
 import { renderFigure } from '#server/adapters/svgdom/renderFigure'
+import { alignedViews } from '#shared/plots/curves/alignedViews'
+import { curveStyle } from '#shared/plots/curves/curveStyle'
+import { curveViews } from '#shared/plots/curves/curveViews'
+import { valueOfView } from '#shared/plots/curves/valueOfView'
+import { sampleShape } from '#shared/plots/marks/drawSamples'
 import { drawFigure } from '#shared/plots/drawFigure'
 import type { LoopFigureData } from '#shared/plots/FigureData'
 import type { FigureName } from '#shared/plots/figures'
@@ -10,7 +15,7 @@ import { chooseFrequencyRange } from '#shared/plots/sampling/chooseFrequencyRang
 import { readoutOf } from '#shared/plots/text/readoutOf'
 import { plotThemes } from '#shared/plots/theme'
 import { analysisByScan } from './analysisByScan'
-import { conditional, crossingRows, crowded, delayed, measured, overlaid, slewGain, slewPosition, unstable } from './figureCases'
+import { compared, conditional, crossingRows, crowded, delayed, measured, overlaid, slewGain, slewPosition, unstable } from './figureCases'
 import { loopGainOfRoots } from './loopGainOfRoots'
 
 /** SVG.js writes colours in small letters. */
@@ -34,7 +39,7 @@ describe('every figure', () => {
     expect(data).toEqual(before)
   })
 
-  it.each(Object.entries({ slewPosition, crowded, unstable, measured, overlaid, delayed, conditional }))('never writes a number that is none, %s', (_, make) => {
+  it.each(Object.entries({ slewPosition, crowded, unstable, measured, overlaid, compared, delayed, conditional }))('never writes a number that is none, %s', (_, make) => {
     for (const name of loopFigures) expect(renderFigure(name, make(), { id: 'a' })).not.toMatch(/NaN|Infinity|undefined|null/)
   })
 
@@ -83,6 +88,47 @@ describe('every figure', () => {
     const figure = drawFigure(createDrawing(), 'crossingChart', data, { width: 900, theme: plotThemes.screen })
     const [panel] = figure.panels
     expect(figure.locate(panel!.x + 5, panel!.y + panel!.height * 1.5 / data.rows.length)!.row).toBe('SL-P')
+  })
+})
+
+describe('several sources of one loop in one set of axes', () => {
+  it('brings a sweep that begins in the middle of the band into the turn of the model', () => {
+    // exp(-6 s)/(s + 1): a sweep from 1 rad/s on begins a turn further, which its slope alone does not tell
+    const gain = loopGainOfRoots({ gain: 1, poles: [[-1, 0]], deadTime: 6 })
+    const analysis = analysisByScan(gain, 0.01, 3)
+    const { curves } = buildLoopFigureData({
+      title: 'Z', requiredVectorMargin: null, range: { from: 0.01, to: 3 },
+      curves: [{ name: 'model', gain, analysis }, { name: 'sweep', gain: { ...gain, axisStart: 1, axisEnd: 2 }, analysis, sampleFrequencies: [1, 1.5, 2] }],
+    })
+    const turned = curveViews(curves[1]!.curve)
+    const [model, sweep] = alignedViews(curves)
+    for (const w of [1.1, 1.5, 1.9]) {
+      expect(valueOfView(curves[1]!.curve, sweep!.phase, w)).toBeCloseTo(valueOfView(curves[0].curve, model!.phase, w)!, 0)
+      // closed form: -atan w - 6 w, in the drawing's accuracy
+      expect(valueOfView(curves[1]!.curve, sweep!.phase, w)).toBeCloseTo(-(Math.atan(w) + 6 * w) * 180 / Math.PI, 0)
+    }
+    expect(valueOfView(curves[1]!.curve, turned.phase, 1.5)! - valueOfView(curves[1]!.curve, sweep!.phase, 1.5)!).toBeCloseTo(360, 6)
+  })
+
+  it('marks the samples of each sweep in a shape of its own, and none of an approximation', () => {
+    const shapeOf = (index: number) => sampleShape(index, 0, 0)
+    expect(new Set([1, 2, 3, 4].map(shapeOf)).size).toBe(4)
+    expect(compared().curves.map(curve => curve.samples?.length ?? 0)).toEqual([0, 0, 80, 80])
+  })
+
+  it('tells lines apart without colour: the main one thick, the approximation whole and thin, the others broken each in its own way', () => {
+    const styles = compared().curves.map((_, index) => curveStyle(compared().curves, index, plotThemes.greyscale))
+    const dashes = styles.map(({ attributes }) => attributes['stroke-dasharray'])
+    expect(dashes.slice(0, 2)).toEqual([undefined, undefined])
+    expect(styles[1]!.width).toBeLessThan(styles[0]!.width * 0.6)
+    expect(new Set(dashes.slice(2)).size).toBe(2)
+  })
+
+  it.each(loopFigures)('says in the caption what the other lines are, %s', (name) => {
+    const caption = figures[name].caption(compared())
+    expect(caption).toContain('Broken lines: sweep 1 (measured, its samples marked) and sweep 2 (measured, its samples marked); marks and words are those of design model.')
+    expect(caption).toContain('Thin line: the continuous approximation.')
+    expect(figures[name].caption(slewPosition())).not.toMatch(/[Bb]roken|Thin line/)
   })
 })
 
