@@ -5,12 +5,15 @@ import { limits } from './limits'
 /** Names an expression gives a meaning of its own. */
 const reservedNames = new Set(['s', 'z', 'i', 'j', 'e', 'pi', 'exp', 'sqrt', 'log', 'sin', 'cos', 'tan', 'abs'])
 
+/** A name as expressions take it. */
+export const parameterNameField = z.string().trim().max(limits.unit, `At most ${limits.unit} characters.`)
+  .regex(/^[A-Za-z][A-Za-z0-9_]*$/, 'A letter, then letters, digits and underscores.')
+  .refine(name => !reservedNames.has(name), 'This name has a meaning of its own in expressions.')
+
 const parameterSchema = z.strictObject({
   id: idField.optional(),
   version: versionField.optional(),
-  name: z.string().trim().max(limits.unit, `At most ${limits.unit} characters.`)
-    .regex(/^[A-Za-z][A-Za-z0-9_]*$/, 'A letter, then letters, digits and underscores.')
-    .refine(name => !reservedNames.has(name), 'This name has a meaning of its own in expressions.'),
+  name: parameterNameField,
   unit: lineText.max(limits.unit, `At most ${limits.unit} characters.`),
   notes: notesField,
   /** by operating condition id */
