@@ -2,6 +2,7 @@ import type { MarginSummary } from '../types/analysis'
 import type { Criterion, CriterionQuantity } from '../types/criterion'
 import type { ReportSnapshot, SnapshotCell } from '../types/snapshot'
 import type { ComparedCell, ComparedQuantity, ComparedSide, RevisionComparison } from '../types/comparison'
+import { blockChanges } from './blockChanges'
 import { isSameData } from './isSameData'
 
 export type SnapshotComparison = Omit<RevisionComparison, 'before' | 'after'>
@@ -102,6 +103,7 @@ export function compareSnapshots(before: ReportSnapshot, after: ReportSnapshot):
     conditionsRemoved: missingIn(before.conditions, after.conditions),
     criteriaChanges: criteriaChanges(before.criteria, after.criteria),
     parameterChanges: parameterChanges(before, after),
+    blockChanges: blockChanges(before, after),
     cells: compareCells(before, after),
   }
 }

@@ -39,6 +39,8 @@ export interface RevisionComparison {
   /** in words, such as 'gain margin: 6 dB to 8 dB', 'parameter kSlP in C1: 7.2 to 6.6' */
   criteriaChanges: string[]
   parameterChanges: string[]
+  /** such as 'block F (filter): gain changed in C1 and C2; used by SL-P' */
+  blockChanges: string[]
   /** in the order of the newer revision, cells that only the older one has last */
   cells: ComparedCell[]
 }
