@@ -1,4 +1,5 @@
 import type { Board, Loop, OperatingCondition, Parameter, System, SystemSummary } from '#shared/types/system'
+import type { Block } from '#shared/types/block'
 import type { Criterion } from '#shared/types/criterion'
 import type { Person, Role } from '#shared/types/person'
 import type { Upload } from '#shared/types/source'
@@ -14,6 +15,7 @@ export interface SystemDetail {
   loops: Loop[]
   conditions: OperatingCondition[]
   criteria: Criterion[]
+  blocks: Block[]
   roles: Role[]
 }
 

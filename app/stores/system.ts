@@ -1,5 +1,6 @@
 import { defineStore } from 'pinia'
 import type { Criterion } from '#shared/types/criterion'
+import { blocksClient, type BlockFields } from '~/services/blocksClient'
 import { conditionsClient } from '~/services/conditionsClient'
 import { loopsClient } from '~/services/loopsClient'
 import { systemsClient, type ConditionFields, type LoopFields, type SystemDetail, type SystemFields } from '~/services/systemsClient'
@@ -36,6 +37,11 @@ export const useSystemStore = defineStore('system', () => {
     removeLoop: (loopId: number) => change(() => loopsClient.remove(loopId)),
     restoreLoop: (loopId: number) => change(() => loopsClient.restore(loopId)),
     orderLoops: (ids: number[]) => change(id => systemsClient.orderLoops(id, ids)),
+    createBlock: (fields: BlockFields) => change(id => blocksClient.create(id, fields)),
+    changeBlock: (blockId: number, fields: Partial<BlockFields> & { version: number }) => change(() => blocksClient.change(blockId, fields)),
+    removeBlock: (blockId: number) => change(() => blocksClient.remove(blockId)),
+    restoreBlock: (blockId: number) => change(() => blocksClient.restore(blockId)),
+    orderBlocks: (ids: number[]) => change(id => blocksClient.order(id, ids)),
     createCondition: (fields: ConditionFields) => change(id => systemsClient.createCondition(id, fields)),
     changeCondition: (conditionId: number, fields: ConditionFields & { version: number }) => change(() => conditionsClient.change(conditionId, fields)),
     copyCondition: (conditionId: number, fields: { code: string, name: string }) => change(() => conditionsClient.copy(conditionId, fields)),
