@@ -6,7 +6,8 @@ import type { MeasurementProblem } from './MeasurementProblem'
 import { measurementLimits } from './measurementLimits'
 import { parseDecimal } from './parseDecimal'
 import { readColumns } from './readColumns'
-import { readTable, type TableRow } from './readTable'
+import { readTable } from './readTable'
+import type { TableRow } from './splitRows'
 
 export interface MeasurementPreview {
   columns: Column[]

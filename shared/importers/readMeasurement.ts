@@ -4,7 +4,8 @@ import type { MeasurementProblem } from './MeasurementProblem'
 import { measurementLimits } from './measurementLimits'
 import { parseDecimal } from './parseDecimal'
 import { readColumns } from './readColumns'
-import { readTable, type Table, type TableRow } from './readTable'
+import { readTable, type Table } from './readTable'
+import type { TableRow } from './splitRows'
 
 export interface MeasurementReading {
   /** in rising order of frequency, in the mapping's unit; empty unless every row is right */

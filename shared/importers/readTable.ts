@@ -1,14 +1,8 @@
-import Papa from 'papaparse'
 import type { Dialect } from './Dialect'
 import { guessDialect } from './guessDialect'
 import { measurementLimits } from './measurementLimits'
 import { parseDecimal } from './parseDecimal'
-
-export interface TableRow {
-  /** line of the file, counted from 1 */
-  line: number
-  cells: string[]
-}
+import { splitRows, type TableRow } from './splitRows'
 
 export interface Table {
   dialect: Dialect
@@ -42,25 +36,10 @@ export function readTable(text: string): Table | { message: string, line?: numbe
   if (dialect === null) {
     return { message: 'No line of the file reads as three numbers: columns may be separated by comma, semicolon or tabulator, and there must be at least frequency and two values.' }
   }
-  const rows = rowsOf(lines.join('\n'), dialect)
+  const rows = splitRows(lines.join('\n'), dialect)
   if ('message' in rows) return rows
   const first = rows.findIndex(row => isNumeric(row.cells, dialect))
   return { dialect, comments, head: rows.slice(0, first), rows: rows.slice(first) }
-}
-
-function rowsOf(text: string, dialect: Dialect): TableRow[] | { message: string, line: number } {
-  const rows: TableRow[] = []
-  let line = 1
-  const { data, errors } = Papa.parse<string[]>(text, { delimiter: dialect.delimiter, newline: '\n' })
-  const unquoted = errors.find(error => error.type === 'Quotes')?.row
-  for (const [index, cells] of data.entries()) {
-    // The rows a stray quotation mark swallows would be missing without a word.
-    if (index === unquoted) return { line, message: 'A quotation mark in this line is not closed, or not where a cell ends: all up to the end of the file would be one cell. Take it away.' }
-    if (cells.some(cell => cell.trim() !== '')) rows.push({ line, cells: cells.map(cell => cell.trim()) })
-    // A quoted cell may hold line ends of its own.
-    line += 1 + cells.reduce((sum, cell) => sum + (cell.includes('\n') ? cell.split('\n').length - 1 : 0), 0)
-  }
-  return rows
 }
 
 function isNumeric(cells: string[], dialect: Dialect): boolean {

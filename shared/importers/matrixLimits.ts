@@ -1,0 +1,7 @@
+/** Largest sets of matrices that are read: those the engine takes. */
+export const matrixLimits = {
+  states: 200,
+  channels: 50,
+  /** sets in one file */
+  sets: 1000,
+} as const
