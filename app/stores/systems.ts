@@ -11,6 +11,12 @@ export const useSystemsStore = defineStore('systems', () => {
     return system
   }
 
+  async function importManifest(file: File) {
+    const system = await systemsClient.importManifest(file)
+    await load()
+    return system
+  }
+
   async function copy(systemId: number, name: string) {
     const system = await systemsClient.copy(systemId, name)
     await load()
@@ -27,5 +33,5 @@ export const useSystemsStore = defineStore('systems', () => {
     await load()
   }
 
-  return { systems, error, load, create, copy, remove, restore }
+  return { systems, error, load, create, importManifest, copy, remove, restore }
 })

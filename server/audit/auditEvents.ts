@@ -15,6 +15,7 @@ export const auditEvents = [
   'system deleted',
   'system restored',
   'system copied',
+  'system imported',
   'members changed',
   'criteria changed',
   'parameters changed',

@@ -6,15 +6,20 @@ import { AppError } from '#shared/errors/AppError'
  * Throws 'too large' over the limit (bytes) and 'invalid input' for what is not JSON.
  */
 export async function readJsonBody(event: H3Event, limit: number): Promise<unknown> {
-  const type = event.node.req.headers['content-type'] ?? ''
-  if (!/^application\/json(?:;|$)/i.test(type)) throw new AppError('invalidInput', 'The request must carry JSON (content-type application/json).')
-  const text = (await readBytes(event, limit)).toString('utf8')
+  const text = await readJsonText(event, limit)
   try {
     return JSON.parse(text) as unknown
   }
   catch (cause) {
     throw new AppError('invalidInput', 'The request is not JSON.', { cause })
   }
+}
+
+/** The JSON body of a request as its text, not yet read. Throws 'too large' over the limit (bytes) and 'invalid input' where it does not say that it is JSON. */
+export async function readJsonText(event: H3Event, limit: number): Promise<string> {
+  const type = event.node.req.headers['content-type'] ?? ''
+  if (!/^application\/json(?:;|$)/i.test(type)) throw new AppError('invalidInput', 'The request must carry JSON (content-type application/json).')
+  return (await readBytes(event, limit)).toString('utf8')
 }
 
 /** The bytes of a request's body; throws 'too large' as soon as they pass the limit. */

@@ -31,11 +31,13 @@ export const routeActions = {
 
   'GET /api/systems': 'list own systems',
   'POST /api/systems': 'create a system',
+  'POST /api/manifests': 'create a system',
   'GET /api/systems/[systemId]': 'see loops, data and drafts',
   'PATCH /api/systems/[systemId]': 'change loops, criteria and drafts',
   'DELETE /api/systems/[systemId]': 'change loops, criteria and drafts',
   'POST /api/systems/[systemId]/restore': 'change loops, criteria and drafts',
   'POST /api/systems/[systemId]/copy': 'change loops, criteria and drafts',
+  'GET /api/systems/[systemId]/manifest': 'see loops, data and drafts',
   'GET /api/systems/[systemId]/board': 'see loops, data and drafts',
   'PUT /api/systems/[systemId]/criteria': 'change loops, criteria and drafts',
   'GET /api/systems/[systemId]/members': 'see loops, data and drafts',

@@ -18,4 +18,6 @@ export const limits = {
   rows: 1000,
   /** bytes of one uploaded measurement */
   uploadBytes: 20 * 1024 * 1024,
+  /** bytes of the manifest of a system */
+  manifestBytes: 60 * 1024 * 1024,
 } as const
