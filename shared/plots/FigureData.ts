@@ -81,3 +81,16 @@ export interface CrossingChartData {
   range: { from: number, to: number }
   rows: CrossingChartRow[]
 }
+
+/** The frequency response of one block between an input and an output. */
+export interface BlockResponseData {
+  /** as in 'G[rate, torque]' */
+  title: string
+  frequencyUnit: FrequencyUnit
+  range: { from: number, to: number }
+  response: SampledCurve
+  /** present where it was measured */
+  samples?: MeasuredSample[]
+  /** in the figure's unit; pi/T of a sampled block */
+  halfSampleRate?: number
+}

@@ -1,11 +1,13 @@
-import type { CrossingChartData, LoopFigureData } from './FigureData'
+import type { BlockResponseData, CrossingChartData, LoopFigureData } from './FigureData'
 import type { DrawFigure } from './Figure'
 import { captionOfBerthChart } from './captions/captionOfBerthChart'
+import { captionOfBlockResponse } from './captions/captionOfBlockResponse'
 import { captionOfCrossingChart } from './captions/captionOfCrossingChart'
 import { captionOfGainOverPhase } from './captions/captionOfGainOverPhase'
 import { captionOfMagnitudePhase } from './captions/captionOfMagnitudePhase'
 import { captionOfReturnDifferenceProfile } from './captions/captionOfReturnDifferenceProfile'
 import { drawBerthChart } from './figures/berthChart'
+import { drawBlockResponse } from './figures/blockResponse'
 import { drawCrossingChart } from './figures/crossingChart'
 import { drawGainOverPhase } from './figures/gainOverPhase'
 import { drawMagnitudePhase } from './figures/magnitudePhase'
@@ -18,6 +20,7 @@ export interface FigureDataOf {
   returnDifferenceProfile: LoopFigureData
   magnitudePhase: LoopFigureData
   gainOverPhase: LoopFigureData
+  blockResponse: BlockResponseData
 }
 
 export type FigureName = keyof FigureDataOf
@@ -37,4 +40,5 @@ export const figures: { [Name in FigureName]: FigureDefinition<FigureDataOf[Name
   returnDifferenceProfile: { title: 'Return difference', draw: drawReturnDifferenceProfile, caption: captionOfReturnDifferenceProfile },
   magnitudePhase: { title: 'Gain and phase', draw: drawMagnitudePhase, caption: captionOfMagnitudePhase },
   gainOverPhase: { title: 'Gain over phase', draw: drawGainOverPhase, caption: captionOfGainOverPhase },
+  blockResponse: { title: 'Response of the block', draw: drawBlockResponse, caption: captionOfBlockResponse },
 }

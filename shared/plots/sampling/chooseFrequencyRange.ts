@@ -1,5 +1,7 @@
 import type { LoopGain } from '../../analysis/LoopGain'
 import type { LoopAnalysis } from '../../types/analysis'
+import { rangeOfFeatures } from './rangeOfFeatures'
+import { roundDown, roundUp } from './roundFrequency'
 
 export interface FrequencyRange {
   from: number
@@ -8,9 +10,6 @@ export interface FrequencyRange {
 
 /** More crossings than this need no wide context: their spacing shows the trend. */
 const crowd = 24
-
-/** Most decades shown where nothing but features asks for them. */
-const usualDecades = 4
 
 /**
  * The range of frequency in which to draw a loop, in the unit of the analysis: every crossing and closest approach, with a decade of context
@@ -22,23 +21,11 @@ export function chooseFrequencyRange(analysis: LoopAnalysis, gain: LoopGain): Fr
   if (gain.axisStart > 0 && Number.isFinite(gain.axisEnd)) return { from: gain.axisStart / unit, to: gain.axisEnd / unit }
 
   const { all, telling } = listedFrequencies(analysis)
-  const axisEnd = gain.axisEnd / unit
-  let low: number
-  let high: number
-  if (all.length > 0) {
-    const context = telling.length > crowd ? 2 : 10
-    low = roundDown(Math.min(least(all) / 2, least(telling) / context))
-    high = roundUp(Math.max(greatest(all) * (all.length > crowd ? 1.2 : 2), greatest(telling) * context))
-  }
-  else {
-    const features = gain.features.map(feature => feature.frequency / unit).filter(frequency => frequency > 0 && frequency <= axisEnd)
-    const middle = features.length > 0 ? features.reduce((sum, f) => sum + Math.log(f), 0) / features.length : Number.isFinite(axisEnd) ? Math.log(axisEnd / 30) : 0
-    const reach = 10 ** (usualDecades / 2)
-    const centre = Math.exp(middle)
-    low = roundDown(Math.max(Math.min(...features, centre) / 10, centre / reach))
-    high = roundUp(Math.min(Math.max(...features, centre) * 10, centre * reach))
-  }
-  return { from: Math.max(low, gain.axisStart / unit), to: Math.min(high, axisEnd) }
+  if (all.length === 0) return rangeOfFeatures(gain, unit)
+  const context = telling.length > crowd ? 2 : 10
+  const low = roundDown(Math.min(least(all) / 2, least(telling) / context))
+  const high = roundUp(Math.max(greatest(all) * (all.length > crowd ? 1.2 : 2), greatest(telling) * context))
+  return { from: Math.max(low, gain.axisStart / unit), to: Math.min(high, gain.axisEnd / unit) }
 }
 
 /** Frequencies of all crossings and approaches, and of those that tell something: with |L| near enough to one to move a margin. */
@@ -58,16 +45,3 @@ function listedFrequencies(analysis: LoopAnalysis): { all: number[], telling: nu
 
 const least = (values: readonly number[]) => values.reduce((a, b) => Math.min(a, b), Infinity)
 const greatest = (values: readonly number[]) => values.reduce((a, b) => Math.max(a, b), 0)
-
-/** The next of 1, 2, 5 times a power of ten at or under the value. */
-function roundDown(value: number): number {
-  const exponent = Math.floor(Math.log10(value) + 1e-9)
-  const digit = [5, 2, 1].find(candidate => Number(`${candidate}e${exponent}`) <= value * (1 + 1e-9)) ?? 1
-  return Number(`${digit}e${exponent}`)
-}
-
-function roundUp(value: number): number {
-  const exponent = Math.floor(Math.log10(value) + 1e-9)
-  const digit = [1, 2, 5, 10].find(candidate => Number(`${candidate}e${exponent}`) >= value * (1 - 1e-9)) ?? 10
-  return Number(`${digit}e${exponent}`)
-}
