@@ -16,7 +16,14 @@ export const limits = {
   order: 200,
   /** loops, or operating conditions, of one system */
   rows: 1000,
-  /** bytes of one uploaded measurement */
+  /** blocks of one system */
+  blocks: 500,
+  /** states, inputs or outputs, second-order sections and modes of one block */
+  states: 200,
+  channels: 50,
+  sections: 100,
+  modes: 200,
+  /** bytes of one uploaded file */
   uploadBytes: 20 * 1024 * 1024,
   /** bytes of the manifest of a system */
   manifestBytes: 60 * 1024 * 1024,

@@ -1,6 +1,7 @@
 import { AnalysisInputError } from '../analysis/AnalysisInputError'
 import type { FrequencyUnit, LoopInput, MeasuredPoint } from '../types/analysis'
 import type { MeasuredDefinition, SourceDefinition } from '../types/source'
+import { scaleOfFrequency } from './scaleOfFrequency'
 
 export interface DefinitionFacts {
   /** unit of the system: that of the input, and so of the analysis */
@@ -45,7 +46,7 @@ export function loopInputFromDefinition(definition: SourceDefinition, facts: Def
 function measuredInput(definition: MeasuredDefinition, { frequencyUnit, points = [] }: DefinitionFacts): LoopInput {
   const { mapping, averages, stayedStable, openLoopUnstablePoles, openLoopOriginPoles } = definition
   if (points.length === 0) throw new AnalysisInputError('No points were read from the file.', 'measured.points')
-  const scale = mapping.frequencyUnit === frequencyUnit ? 1 : frequencyUnit === 'Hz' ? 1 / (2 * Math.PI) : 2 * Math.PI
+  const scale = scaleOfFrequency(mapping.frequencyUnit, frequencyUnit)
   return {
     frequencyUnit,
     measured: {

@@ -130,3 +130,21 @@ export interface BlockInUse extends Block {
   /** blocks whose expressions name it */
   blockNames: string[]
 }
+
+/** What an uploaded file of matrices holds, as POST /api/systems/[systemId]/matrices answers. */
+export interface MatricesFound {
+  sets: {
+    /** as a StateSpaceDefinition names it in `set` */
+    name: string
+    states: number
+    inputCount: number
+    outputCount: number
+    /** names of the channels; [] where the file has none */
+    inputs: string[]
+    outputs: string[]
+    /** s, where the file says that the set is sampled */
+    sampleTime: number | null
+  }[]
+  /** every fault by its line, 0 for the file as a whole; then there are no sets */
+  problems: { line: number, message: string }[]
+}
