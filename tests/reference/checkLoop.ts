@@ -31,6 +31,8 @@ export interface CheckLoop {
     open_loop_rhp_poles: number
     open_loop_boundary_poles: number
     marginal?: boolean
+    /** rad/s, or in z */
+    closed_loop_poles?: [number, number][]
   }
   source: string
   confirmation: string

@@ -1,9 +1,7 @@
-import { aberthStep } from '../../numeric/extended/aberthStep'
 import { initialRoots } from '../../numeric/extended/initialRoots'
 import { ScaledPolynomial } from '../../numeric/extended/ScaledPolynomial'
 import type { ReturnDifferenceNumerator } from './ReturnDifferenceNumerator'
-
-const MAXIMAL_SWEEPS = 60
+import { scaleOf, settleRoots } from './settleRoots'
 
 /**
  * Roots of D + N with D and N left in factors, by Aberth's iteration (1973) in plain doubles, each with the radius of a disc about
@@ -20,36 +18,7 @@ export function closedLoopRoots(sum: ReturnDifferenceNumerator): { re: Float64Ar
     re[k] = (re[k] as number) * sigma
     im[k] = (im[k] as number) * sigma
   }
-  const out = new Float64Array(6)
-  const step = new Float64Array(2)
-  const settled = new Uint8Array(n)
-  let open = n
-  for (let sweep = 0; open > 0; sweep++) {
-    if (sweep === MAXIMAL_SWEEPS) return null
-    for (let k = 0; k < n; k++) {
-      if (settled[k]) continue
-      const x = re[k] as number
-      const y = im[k] as number
-      const scale = scaleOf(x, y)
-      const scaling = 1 / scale
-      sum.evaluate(x, y, scaling, out)
-      const pr = out[0] as number
-      const pi = out[1] as number
-      const square = pr * pr + pi * pi
-      if (square === 0) {
-        settled[k] = 1
-        open--
-        continue
-      }
-      const length = aberthStep(re, im, k, scaling, out, step)
-      re[k] = x - step[0]! * scale
-      im[k] = y - step[1]! * scale
-      if (length <= 1e-15 || Math.sqrt(square) <= 4e-16 * (out[4] as number)) {
-        settled[k] = 1
-        open--
-      }
-    }
-  }
+  if (!settleRoots(sum, re, im)) return null
   return { re, im, radius: discRadii(sum, re, im) }
 }
 
@@ -73,8 +42,4 @@ function discRadii(sum: ReturnDifferenceNumerator, re: Float64Array, im: Float64
     radius[k] = Number.isNaN(bound) ? Infinity : bound
   }
   return radius
-}
-
-function scaleOf(x: number, y: number): number {
-  return 2 ** Math.round(Math.log2(Math.max(Math.abs(x), Math.abs(y), 1e-290)))
 }

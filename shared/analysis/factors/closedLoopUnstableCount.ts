@@ -4,6 +4,7 @@ import { BOUNDARY_DISTANCE } from './BoundaryRule'
 import { closedLoopRoots } from './closedLoopRoots'
 import { exactClosedLoopPolynomial } from './exactClosedLoopPolynomial'
 import { ReturnDifferenceNumerator } from './ReturnDifferenceNumerator'
+import { wholeSamples } from './wholeSamples'
 
 export interface ClosedLoopCount {
   /** Closed-loop poles beyond the stability boundary: Re s > 0, or |z| > 1. */
@@ -15,9 +16,6 @@ export interface ClosedLoopCount {
   /** Closed-loop poles, rad/s or plain numbers in z. */
   poles: { re: Float64Array, im: Float64Array }
 }
-
-const WHOLE_SAMPLES = 1e-9
-const MOST_DELAY_SAMPLES = 100
 
 /**
  * Closed-loop poles as roots of denominator + numerator of the loop gain and their number beyond the stability boundary:
@@ -49,15 +47,6 @@ export function closedLoopUnstableCount(loop: FactoredLoop): ClosedLoopCount | n
     radius[k] = n * ((exact.correction[k] as number) + sum.modelError(exact.re, exact.im, k))
   }
   return countRoots(exact.re, exact.im, radius, loop.sampleTime !== undefined)
-}
-
-/** Dead time in samples; 0 without dead time; null where the closed loop has no polynomial. */
-function wholeSamples(loop: FactoredLoop): number | null {
-  if (loop.deadTime === 0) return 0
-  if (loop.sampleTime === undefined) return null
-  const samples = loop.deadTime / loop.sampleTime
-  const whole = Math.round(samples)
-  return Math.abs(samples - whole) <= WHOLE_SAMPLES * whole && whole <= MOST_DELAY_SAMPLES ? whole : null
 }
 
 function countRoots(re: Float64Array, im: Float64Array, radius: Float64Array, sampled: boolean): ClosedLoopCount {
