@@ -18,7 +18,8 @@ export function analyseLoop(input: LoopInput): LoopAnalysis {
   if ('measured' in input) return analyseMeasured(input)
   if ('expression' in input) {
     const lowered = lowerExpression(input)
-    return lowered.kind === 'factored' ? analyseFactored(lowered.loop, input) : analyseGeneralLoop(lowered.loop, input)
+    const analysis = lowered.kind === 'factored' ? analyseFactored(lowered.loop, input) : analyseGeneralLoop(lowered.loop, input)
+    return lowered.structure ? { ...analysis, structure: lowered.structure } : analysis
   }
   throw new AnalysisInputError('This source form is not analysed yet.', 'expression')
 }

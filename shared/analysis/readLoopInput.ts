@@ -7,6 +7,7 @@ import { readExpression } from './input/readExpression'
 import { readMeasuredResponse } from './input/readMeasuredResponse'
 import { readRecord } from './input/readRecord'
 import { readZerosPoles } from './input/readZerosPoles'
+import { sampleTimeOfInput } from './sampleTimeOfInput'
 
 /**
  * One entry of the contract, checked: what comes back holds only fields of the contract, each of its kind and size.
@@ -35,8 +36,10 @@ function readSource(record: Record<string, unknown>, key: 'numerator' | 'zeros' 
 
 /** A sampled loop's axis ends at pi/T: a band that starts there or above holds nothing. */
 function refuseBandBeyondHalfSampling(input: LoopInput): void {
-  if (!('sampleTime' in input) || input.sampleTime === undefined || input.band === undefined) return
-  const axisEnd = (input.frequencyUnit === 'Hz' ? 0.5 : Math.PI) / input.sampleTime
+  if (input.band === undefined) return
+  const sampleTime = sampleTimeOfInput(input)
+  if (sampleTime === undefined) return
+  const axisEnd = (input.frequencyUnit === 'Hz' ? 0.5 : Math.PI) / sampleTime
   if (input.band[0] >= axisEnd) {
     throw new AnalysisInputError(`band starts at ${input.band[0]}, but the axis of this sampled loop ends at half its sampling frequency, ${axisEnd}.`, 'band[0]')
   }

@@ -1,9 +1,12 @@
 import type { Rational } from '../../numeric/extended/Rational'
+import type { ComplexPair } from '../../types/analysis'
 
 /** An integer polynomial of degree at least 1, primitive, leading coefficient positive, lowest power first; `power` is at least 1. */
 export interface PolynomialFactor {
   coefficients: bigint[]
   power: number
+  /** its roots where they, and not the coefficients, were given: they are taken as exact */
+  roots?: readonly ComplexPair[]
 }
 
 /** Polynomial factors by their coefficients written out. */

@@ -24,7 +24,8 @@ export const FactorProduct = {
     if (b.size === 0) return a
     const product = new Map(a)
     for (const [key, factor] of b) {
-      product.set(key, { coefficients: factor.coefficients, power: factor.power + (a.get(key)?.power ?? 0) })
+      const present = a.get(key)
+      product.set(key, present ? { ...factor, ...present, power: factor.power + present.power } : factor)
     }
     return product
   },
@@ -38,7 +39,7 @@ export const FactorProduct = {
     const shared = new Map<string, PolynomialFactor>()
     for (const [key, factor] of a) {
       const other = b.get(key)
-      if (other) shared.set(key, { ...factor, power: Math.min(factor.power, other.power) })
+      if (other) shared.set(key, { ...other, ...factor, power: Math.min(factor.power, other.power) })
     }
     return shared
   },
@@ -47,7 +48,8 @@ export const FactorProduct = {
   multiple(a: FactorMap, b: FactorMap): FactorMap {
     const result = new Map(a)
     for (const [key, factor] of b) {
-      result.set(key, { ...factor, power: Math.max(factor.power, a.get(key)?.power ?? 0) })
+      const present = a.get(key)
+      result.set(key, present ? { ...factor, ...present, power: Math.max(factor.power, present.power) } : factor)
     }
     return result
   },
@@ -58,7 +60,7 @@ export const FactorProduct = {
     const result = new Map(a)
     for (const [key, factor] of b) {
       const power = (a.get(key)?.power ?? 0) - factor.power
-      if (power > 0) result.set(key, { ...factor, power })
+      if (power > 0) result.set(key, { ...factor, ...a.get(key), power })
       else result.delete(key)
     }
     return result
@@ -74,13 +76,16 @@ export const FactorProduct = {
   expanded(a: FactorMap): bigint[] {
     let product = [1n]
     for (const { coefficients, power } of a.values()) {
-      for (let repeat = 0; repeat < power; repeat++) product = multiply(product, coefficients)
+      for (let repeat = 0; repeat < power; repeat++) product = multiplied(product, coefficients)
     }
     return product
   },
+
+  /** Product of two polynomials, lowest power first. */
+  multiplied,
 }
 
-function multiply(a: bigint[], b: bigint[]): bigint[] {
+function multiplied(a: bigint[], b: bigint[]): bigint[] {
   const product = new Array<bigint>(a.length + b.length - 1).fill(0n)
   a.forEach((x, i) => {
     if (x === 0n) return

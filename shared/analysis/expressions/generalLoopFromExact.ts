@@ -18,12 +18,12 @@ export function generalLoopFromExact(exact: ExactLoop, position: number): Genera
   const polynomials: GeneralLoop['polynomials'] = []
   let gain = Rational.one
   const toTerm = (term: DelayedPolynomial, reference: Rational): GeneralTerm => {
-    const factors = Array.from(term.factors, ([key, { coefficients, power }]) => {
+    const factors = Array.from(term.factors, ([key, { coefficients, power, roots }]) => {
       let polynomial = numbers.get(key)
       if (polynomial === undefined) {
         polynomial = polynomials.length
         numbers.set(key, polynomial)
-        polynomials.push(factorsFromPolynomials([{ polynomial: { coefficients, exponent: 0 }, power: 1 }], false, 'expression'))
+        polynomials.push(factorsFromPolynomials([{ polynomial: { coefficients, exponent: 0 }, power: 1, given: roots }], false, 'expression'))
       }
       return { polynomial, power }
     })

@@ -3,7 +3,8 @@ import type { ExpressionNode } from './ExpressionNode'
 /** True for a sub-expression that is a multiple of the variable by its form, whatever values the parameters have. */
 export function isLinearInVariable(node: ExpressionNode): boolean {
   switch (node.kind) {
-    case 'variable': return true
+    case 'variable': return node.variable === 's'
+    case 'brackets': return isLinearInVariable(node.content)
     case 'negate': return isLinearInVariable(node.operand)
     case 'add':
     case 'subtract': return isLinearInVariable(node.left) && isLinearInVariable(node.right)
@@ -19,7 +20,9 @@ export function isLinearInVariable(node: ExpressionNode): boolean {
 function isFree(node: ExpressionNode): boolean {
   switch (node.kind) {
     case 'variable':
+    case 'block':
     case 'exponential': return false
+    case 'brackets': return isFree(node.content)
     case 'negate': return isFree(node.operand)
     case 'power': return isFree(node.base)
     case 'constant':

@@ -1,13 +1,26 @@
+import type { BlockGain } from '../../types/block'
 import { AnalysisInputError } from '../AnalysisInputError'
+import { complexRefusal } from '../input/complexRefusal'
 import type { ExpressionNode, ExpressionVariable } from './ExpressionNode'
 import { expressionLimits } from './expressionLimits'
 import { isLinearInVariable } from './isLinearInVariable'
 import { parseMath } from './mathParser'
+import { nearestName } from './nearestName'
 import { scanExpression, type ExpressionToken } from './scanExpression'
 
 export interface ExpressionNames {
+  /** the variable of an expression without blocks; over blocks both s and z can be written */
   variable: ExpressionVariable
   parameterNames: readonly string[]
+  /** blocks that can be named: their names, or their gains by name */
+  blocks?: readonly string[] | Readonly<Record<string, BlockGain>>
+}
+
+/** The same with the names of blocks in a set; null where there are no blocks. */
+interface KnownNames {
+  variable: ExpressionVariable
+  parameterNames: readonly string[]
+  blockNames: ReadonlySet<string> | null
 }
 
 /** The few fields of a syntax node that are read here; everything else of it is left alone. */
@@ -30,7 +43,8 @@ const BINARY: Record<string, 'add' | 'subtract' | 'multiply' | 'divide'> = {
  *
  * @throws AnalysisInputError with path 'expression', the character at fault in `position`
  */
-export function parseExpression(text: string, names: ExpressionNames): ExpressionNode {
+export function parseExpression(text: string, { variable, parameterNames, blocks }: ExpressionNames): ExpressionNode {
+  const names: KnownNames = { variable, parameterNames, blockNames: blocks ? new Set(Array.isArray(blocks) ? blocks as string[] : Object.keys(blocks)) : null }
   const tokens = scanExpression(text)
   for (const [index, token] of tokens.entries()) {
     if (token.kind === 'name') checkName(token, tokens[index + 1], names)
@@ -48,32 +62,38 @@ export function parseExpression(text: string, names: ExpressionNames): Expressio
   return copyNode(tree, tokens, names, 0)
 }
 
-function checkName(token: ExpressionToken, next: ExpressionToken | undefined, { variable, parameterNames }: ExpressionNames): void {
+function checkName(token: ExpressionToken, next: ExpressionToken | undefined, { variable, parameterNames, blockNames }: KnownNames): void {
   const { text, position } = token
   const called = next?.kind === 'open'
   const refuse = (message: string) => {
     throw new AnalysisInputError(message, 'expression', position)
   }
+  if (token.channel && !blockNames?.has(text)) refuse(`"${text}" is no block: only a block has channels in square brackets.`)
   if (text === 'exp') {
-    if (variable === 'z') refuse('exp has no place in a sampled loop: write dead time as a power of z, as in z^-2.')
+    if (variable === 'z' && !blockNames) refuse('exp has no place in a sampled loop: write dead time as a power of z, as in z^-2.')
     if (!called) refuse('exp needs an argument in brackets, as in exp(-s*T).')
     return
   }
-  const known = text === variable || text === 'pi' || parameterNames.includes(text)
+  const isVariable = text === variable || (blockNames !== null && (text === 's' || text === 'z'))
+  const known = isVariable || text === 'pi' || parameterNames.includes(text) || blockNames?.has(text)
   if (called && known) refuse(`A multiplication sign is missing: write ${text}*( ... ).`)
   if (called) refuse(`The function "${text}" cannot be used here: only exp(-s*T) for dead time, + - * / and whole powers.`)
   if (known) return
   if (text === 's') refuse('This loop is sampled: its variable is z, not s.')
   if (text === 'z') refuse('This loop is continuous: its variable is s. Give a sample time for a loop in z.')
-  refuse(`Unknown name "${text}": it is no parameter of this expression.`)
+  if (text === 'i' || text === 'j') refuse(complexRefusal)
+  const near = nearestName(text, [...parameterNames, ...blockNames ?? []])
+  refuse(`Unknown name "${text}": it is no ${blockNames ? 'block and no parameter' : 'parameter of this expression'}.${near === null ? '' : ` Is "${near}" meant?`}`)
 }
 
-function copyNode(node: SyntaxNode, tokens: ExpressionToken[], names: ExpressionNames, depth: number): ExpressionNode {
+function copyNode(node: SyntaxNode, tokens: ExpressionToken[], names: KnownNames, depth: number): ExpressionNode {
   if (depth > expressionLimits.tokens) throw new AnalysisInputError('The expression is nested too deep.', 'expression', 0)
   const copy = (child: SyntaxNode) => copyNode(child, tokens, names, depth + 1)
   switch (node.type) {
-    case 'ParenthesisNode':
-      return copy(node.content as SyntaxNode)
+    case 'ParenthesisNode': {
+      const content = copy(node.content as SyntaxNode)
+      return names.blockNames ? { kind: 'brackets', content, position: content.position } : content
+    }
     case 'SymbolNode':
       return copyLeaf(tokens[Number((node.name as string).slice(1))] as ExpressionToken, names)
     case 'FunctionNode': {
@@ -106,14 +126,15 @@ function copyNode(node: SyntaxNode, tokens: ExpressionToken[], names: Expression
   throw new AnalysisInputError('The expression holds something that has no meaning in a loop gain.', 'expression', 0)
 }
 
-function copyLeaf(token: ExpressionToken, { variable, parameterNames }: ExpressionNames): ExpressionNode {
+function copyLeaf(token: ExpressionToken, { variable, parameterNames, blockNames }: KnownNames): ExpressionNode {
   const { text, position } = token
   if (token.kind === 'number') {
     const value = Number(text)
     if (!Number.isFinite(value)) throw new AnalysisInputError(`The number ${text.slice(0, 30)} is too large.`, 'expression', position)
     return { kind: 'constant', value, position }
   }
-  if (text === variable) return { kind: 'variable', position }
+  if (text === variable || (blockNames && (text === 's' || text === 'z'))) return { kind: 'variable', variable: text as ExpressionVariable, position }
+  if (blockNames?.has(text)) return { kind: 'block', name: text, channel: token.channel ?? null, position }
   if (text === 'pi' && !parameterNames.includes('pi')) return { kind: 'constant', value: Math.PI, position }
   return { kind: 'parameter', name: text, position }
 }
@@ -131,6 +152,7 @@ function wholeExponent(node: ExpressionNode): number {
 /** Value of a sub-expression of plain numbers; null where a name stands in it. */
 function constantValue(node: ExpressionNode): number | null {
   if (node.kind === 'constant') return node.value
+  if (node.kind === 'brackets') return constantValue(node.content)
   if (node.kind === 'negate') {
     const value = constantValue(node.operand)
     return value === null ? null : -value

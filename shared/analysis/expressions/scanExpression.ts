@@ -1,14 +1,19 @@
 import { AnalysisInputError } from '../AnalysisInputError'
+import { complexRefusal } from '../input/complexRefusal'
+import type { BlockChannel } from './ExpressionNode'
 import { expressionLimits } from './expressionLimits'
 
 export interface ExpressionToken {
   kind: 'number' | 'name' | 'operator' | 'open' | 'close'
   text: string
   position: number
+  /** what stands in square brackets behind a name, as in G[1, 2] */
+  channel?: BlockChannel
 }
 
 const NUMBER = /(?:\d+(?:\.\d*)?|\.\d+)(?:e[+-]?\d+)?/iy
 const NAME = /[a-z_]\w*/iy
+const CHANNEL_START = /\s*\[/y
 const OPERATORS = '+-*/^'
 
 const refuse = (message: string, position: number): never => {
@@ -61,6 +66,7 @@ export function scanExpression(text: string): ExpressionToken[] {
     if (token.kind === 'operator') checkOperator(tokens, token)
     tokens.push(token)
     at += token.text.length
+    if (token.kind === 'name') at = readChannel(text, at, token)
   }
   const last = tokens[tokens.length - 1]
   if (!last) return refuse('The expression is empty.', 0)
@@ -82,8 +88,23 @@ function readToken(text: string, at: number): ExpressionToken {
   if (character === ')') return { kind: 'close', text: ')', position: at }
   if (OPERATORS.includes(character)) return { kind: 'operator', text: character, position: at }
   if (character === ',') return refuse('A comma has no meaning here: write decimals with a point.', at)
-  if ('[]{}'.includes(character)) return refuse('Only round brackets are read here.', at)
+  if ('[]{}'.includes(character)) return refuse('Only round brackets are read here, and square ones behind the name of a block.', at)
   return refuse(`The character "${String.fromCodePoint(text.codePointAt(at) as number)}" has no meaning here.`, at)
+}
+
+/** The channel behind a name, if there is one: it becomes part of the name. Returns where the text goes on. */
+function readChannel(text: string, at: number, name: ExpressionToken): number {
+  CHANNEL_START.lastIndex = at
+  const start = CHANNEL_START.exec(text)
+  if (!start) return at
+  const from = at + start[0].length
+  const bracket = from - 1
+  const to = text.indexOf(']', from)
+  if (to < 0) return refuse('This bracket is not closed.', bracket)
+  const parts = text.slice(from, to).split(',').map(part => part.trim())
+  if (parts.length !== 2 || parts.includes('')) return refuse(`A channel is written ${name.text}[output, input], as in ${name.text}[1, 2].`, bracket)
+  name.channel = { output: parts[0] as string, input: parts[1] as string }
+  return to + 1
 }
 
 const endsOperand = (token: ExpressionToken) => token.kind === 'number' || token.kind === 'name' || token.kind === 'close'
@@ -104,6 +125,7 @@ function multiplyHere(tokens: ExpressionToken[], previous: ExpressionToken, toke
     // a name before a bracket reads as a function: the parser knows which there are
     return
   }
+  if (token.kind === 'name' && /^[ij]$/.test(token.text)) refuse(complexRefusal, token.position)
   if (previous.kind === 'name' || token.kind === 'number') refuse('An operator is missing before this.', token.position)
   if (beforeOperand === '/' || beforeOperand === '^') {
     refuse('A multiplication sign is missing here, and without it this can be read in two ways: write * and brackets.', token.position)

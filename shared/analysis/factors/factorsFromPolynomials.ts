@@ -1,6 +1,7 @@
 import type { ExactPolynomial } from '../../numeric/extended/ExactPolynomial'
 import { polynomialRoots } from '../../numeric/extended/polynomialRoots'
 import { ScaledPolynomial } from '../../numeric/extended/ScaledPolynomial'
+import type { ComplexPair } from '../../types/analysis'
 import { AnalysisInputError } from '../AnalysisInputError'
 import type { FactorList } from '../FactoredLoop'
 import { snapToBoundary } from './snapToBoundary'
@@ -9,6 +10,8 @@ import { snapToBoundary } from './snapToBoundary'
 export interface PolynomialPower {
   polynomial: ExactPolynomial
   power: number
+  /** its roots where they were given and are exact: they are not looked for */
+  given?: readonly ComplexPair[] | undefined
 }
 
 /**
@@ -18,7 +21,7 @@ export interface PolynomialPower {
  * @throws AnalysisInputError naming `path` when roots cannot be told apart or leave the range of doubles
  */
 export function factorsFromPolynomials(parts: PolynomialPower[], sampled: boolean, path: string): FactorList {
-  const lists = parts.map(({ polynomial, power }) => ({ list: factorsOf(polynomial, sampled, path), power }))
+  const lists = parts.map(({ polynomial, power, given }) => ({ list: given ? givenFactors(given, sampled) : factorsOf(polynomial, sampled, path), power }))
   const total = lists.reduce((sum, { list, power }) => sum + power * list.re.length, 0)
   const result = {
     re: new Float64Array(total),
@@ -36,6 +39,11 @@ export function factorsFromPolynomials(parts: PolynomialPower[], sampled: boolea
     }
   }
   return result
+}
+
+function givenFactors(roots: readonly ComplexPair[], sampled: boolean): FactorList {
+  const re = Float64Array.from(roots, root => root[0])
+  return snapToBoundary({ re, im: Float64Array.from(roots, root => root[1]), correction: new Float64Array(re.length) }, sampled, null)
 }
 
 function factorsOf(polynomial: ExactPolynomial, sampled: boolean, path: string): FactorList {

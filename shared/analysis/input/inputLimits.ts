@@ -6,6 +6,17 @@ export const inputLimits = {
   expressionLength: 8_000,
   parameters: 1_000,
   nameLength: 500,
+  blocks: 500,
+  blockNameLength: 60,
+  /** of a state space */
+  states: 200,
+  /** inputs, and outputs, of a block */
+  channels: 50,
+  channelNameLength: 60,
+  sections: 100,
+  /** of a modal table */
+  modes: 200,
+  rigidTerms: 20,
 } as const
 
 /**

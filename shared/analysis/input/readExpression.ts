@@ -1,7 +1,9 @@
+import type { BlockGain } from '../../types/block'
 import { AnalysisInputError } from '../AnalysisInputError'
 import { describeValue } from './describeValue'
 import { inputLimits } from './inputLimits'
 import { isGiven } from './isGiven'
+import { readBlocks } from './readBlocks'
 import { readNumber } from './readNumber'
 import { readRecord } from './readRecord'
 import { readTiming } from './readTiming'
@@ -10,12 +12,13 @@ export interface ExpressionSource {
   expression: string
   parameters?: Record<string, number>
   sampleTime?: number
+  blocks?: Record<string, BlockGain>
 }
 
 const reserved = ['s', 'z', 'exp']
 
 /**
- * Text and parameters of a loop given as an expression; the text itself is read by the expression parser.
+ * Text, parameters and blocks of a loop given as an expression; the text itself is read by the expression parser.
  * @throws AnalysisInputError for empty or over-long text, and parameters that are no names with finite numbers.
  */
 export function readExpression(record: Record<string, unknown>): ExpressionSource {
@@ -26,9 +29,11 @@ export function readExpression(record: Record<string, unknown>): ExpressionSourc
   }
   if (text.trim() === '') throw new AnalysisInputError('expression is empty.', 'expression')
   const { sampleTime } = readTiming(record)
+  const parameters = isGiven(record.parameters) ? readParameters(record.parameters) : undefined
   return {
     expression: text,
-    ...(isGiven(record.parameters) && { parameters: readParameters(record.parameters) }),
+    ...(parameters && { parameters }),
+    ...(isGiven(record.blocks) && { blocks: readBlocks(record.blocks, Object.keys(parameters ?? {})) }),
     ...(sampleTime !== undefined && { sampleTime }),
   }
 }

@@ -19,7 +19,7 @@ export function readMeasuredResponse(record: Record<string, unknown>): Omit<Meas
   if (quantity === undefined) {
     throw new AnalysisInputError(`measured.quantity must be one of ${quantities.join(', ')}, not ${describeValue(measured.quantity)}.`, 'measured.quantity')
   }
-  const response: MeasuredInput['measured'] = { quantity, points: readPoints(measured.points) }
+  const response: MeasuredInput['measured'] = { quantity, points: readMeasuredPoints(measured.points, 'measured.points') }
   if (isGiven(measured.averages)) response.averages = readWholeNumber(measured.averages, 'measured.averages', 1, 1e9)
   if (isGiven(measured.stayedStable)) {
     if (typeof measured.stayedStable !== 'boolean') {
@@ -32,8 +32,8 @@ export function readMeasuredResponse(record: Record<string, unknown>): Omit<Meas
   return { measured: response, ...poles('openLoopUnstablePoles'), ...poles('openLoopOriginPoles') }
 }
 
-function readPoints(value: unknown): MeasuredPoint[] {
-  const path = 'measured.points'
+/** The points of a response: at least two in rising order of frequency. @throws AnalysisInputError naming the field below `path` */
+export function readMeasuredPoints(value: unknown, path: string): MeasuredPoint[] {
   if (!Array.isArray(value)) throw new AnalysisInputError(`${path} must be a list of points, not ${describeValue(value)}.`, path)
   if (value.length < 2) {
     throw new AnalysisInputError(`${path} holds ${value.length === 1 ? 'a single point' : 'no point'}: a response needs at least two, for nothing can be said between.`, path)

@@ -1,5 +1,6 @@
 import { AnalysisInputError } from '../AnalysisInputError'
 import type { ComplexPair } from '../../types/analysis'
+import { complexRefusal } from './complexRefusal'
 import { describeValue } from './describeValue'
 import { conjugateTolerance, inputLimits } from './inputLimits'
 import { readNumber } from './readNumber'
@@ -66,5 +67,5 @@ function refuseUnpairedRoots(roots: ComplexPair[], path: string): void {
 
 function unpaired(index: number, [re, im]: ComplexPair, path: string): AnalysisInputError {
   return new AnalysisInputError(
-    `${path}[${index}] = [${re}, ${im}] has no conjugate partner: complex roots come in pairs, so [${re}, ${-im}] must be in the list too.`, `${path}[${index}]`)
+    `${path}[${index}] = [${re}, ${im}] has no conjugate partner: complex roots come in pairs, so [${re}, ${-im}] must be in the list too. ${complexRefusal}`, `${path}[${index}]`)
 }

@@ -2,7 +2,7 @@
 export const sourceForms = [
   { name: 'coefficients', key: ['numerator', 'denominator'], other: ['deadTime', 'sampleTime'] },
   { name: 'zeros, poles and gain', key: ['zeros', 'poles', 'gain'], other: ['deadTime', 'sampleTime'] },
-  { name: 'an expression', key: ['expression'], other: ['parameters', 'sampleTime'] },
+  { name: 'an expression', key: ['expression'], other: ['parameters', 'sampleTime', 'blocks'] },
   { name: 'a measured response', key: ['measured'], other: ['openLoopUnstablePoles', 'openLoopOriginPoles'] },
 ] as const
 
