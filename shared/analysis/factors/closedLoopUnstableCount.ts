@@ -35,7 +35,7 @@ export function closedLoopUnstableCount(loop: FactoredLoop): ClosedLoopCount | n
   }
   let exact
   try {
-    exact = polynomialRoots(exactClosedLoopPolynomial(loop, delaySamples))
+    exact = polynomialRoots(exactClosedLoopPolynomial(loop, delaySamples), loop.sampleTime !== undefined)
   }
   catch (error) {
     if (error instanceof RangeError) return null

@@ -48,7 +48,7 @@ function givenFactors(roots: readonly ComplexPair[], sampled: boolean): FactorLi
 
 function factorsOf(polynomial: ExactPolynomial, sampled: boolean, path: string): FactorList {
   try {
-    return snapToBoundary(polynomialRoots(polynomial), sampled, ScaledPolynomial.fromExact(polynomial))
+    return snapToBoundary(polynomialRoots(polynomial, sampled), sampled, ScaledPolynomial.fromExact(polynomial))
   }
   catch (error) {
     if (error instanceof RangeError) {

@@ -16,7 +16,7 @@ export function preciseClosedLoopRoots(loop: FactoredLoop, samples: number): { r
   const quick = closedLoopRoots(new ReturnDifferenceNumerator(loop, samples))
   const upper = quick && upperHalf(quick)
   if (upper) return upper
-  const { re, im } = polynomialRoots(exactClosedLoopPolynomial(loop, samples))
+  const { re, im } = polynomialRoots(exactClosedLoopPolynomial(loop, samples), loop.sampleTime !== undefined)
   return Array.from(re, (x, k) => ({ re: x, im: im[k]! })).filter(root => root.im >= 0)
 }
 

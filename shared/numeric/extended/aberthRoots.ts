@@ -16,11 +16,11 @@ export type WithDerivative = (polynomial: ScaledPolynomial, shift: number, a: nu
  * another evaluation is given.
  * The constant coefficient must not be zero. The result is a starting point only: nothing is proven of it.
  */
-export function aberthRoots(polynomial: ScaledPolynomial, evaluate: WithDerivative = evaluateWithDerivative): { re: Float64Array, im: Float64Array } {
+export function aberthRoots(polynomial: ScaledPolynomial, evaluate: WithDerivative = evaluateWithDerivative, start = initialRoots(polynomial)): { re: Float64Array, im: Float64Array } {
   const n = polynomial.degree
   const at = new Float64Array(4)
   const step = new Float64Array(2)
-  const { re, im } = initialRoots(polynomial)
+  const { re, im } = start
   const settled = new Uint8Array(n)
   let open = n
   for (let sweep = 0; sweep < MAXIMAL_SWEEPS && open > 0; sweep++) {
@@ -55,7 +55,7 @@ export function aberthRoots(polynomial: ScaledPolynomial, evaluate: WithDerivati
 }
 
 /** In plain doubles. */
-const evaluateWithDerivative: WithDerivative = (polynomial, shift, a, b, out) => {
+export const evaluateWithDerivative: WithDerivative = (polynomial, shift, a, b, out) => {
   const c = polynomial.at(shift).high
   const n = polynomial.degree
   const modulus = Math.sqrt(a * a + b * b)
