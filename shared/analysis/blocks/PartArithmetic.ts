@@ -206,6 +206,7 @@ export class PartArithmetic<V> {
     }
     catch (error) {
       if (error instanceof RangeError) throw new AnalysisInputError(`This part is too large to be worked out exactly: ${error.message}.`, 'expression', position)
+      if (error instanceof AnalysisInputError && error.path === 'expression' && error.position === undefined) throw new AnalysisInputError(error.message, 'expression', position)
       throw error
     }
   }

@@ -2,6 +2,7 @@ import type { LoopStructure, StructureNote } from '../../types/analysis'
 import { AnalysisInputError } from '../AnalysisInputError'
 import type { ExactLoop } from '../expressions/ExactLoop'
 import type { LeafSource } from './BlockScope'
+import { discretise } from '../sampling/discretise'
 import { exactAlgebra } from './exactAlgebra'
 import { exactLeaf } from './exactLeaf'
 
@@ -25,11 +26,19 @@ export function exactLeafSource(): ExactLeafSource {
   const used: UsedLeaf[] = []
   const notes: StructureNote[] = []
   const accuracies: NonNullable<LoopStructure['accuracy']>[] = []
+  const equivalents = new Map<string, ExactLoop>()
   return {
     used,
     notes,
-    algebra: exactAlgebra(() => {
-      throw new AnalysisInputError('The discrete equivalent of what stands behind a hold is not available yet.', 'expression', 0)
+    algebra: exactAlgebra((continuous, { name, gain }) => {
+      const key = `${name}:${keyOfLoop(continuous)}`
+      const known = equivalents.get(key)
+      if (known) return known
+      const { loop, accuracy, averaged } = discretise(continuous, gain)
+      accuracies.push(accuracy)
+      if (averaged !== null && !notes.some(note => note.block === name && note.code === 'averaged hold')) notes.push({ block: name, code: 'averaged hold', message: averaged })
+      equivalents.set(key, loop)
+      return loop
     }),
     rational: (block, gain, channel) => {
       const loop = exactLeaf(gain, channel)
@@ -47,4 +56,11 @@ export function exactLeafSource(): ExactLeafSource {
       ? undefined
       : { relative: accuracies.reduce((sum, { relative }) => sum + relative, 0), basis: [...new Set(accuracies.map(({ basis }) => basis))].join('; ') },
   }
+}
+
+/** A loop gain without sums, written out. */
+function keyOfLoop({ scale, delay, numerator, inverted, denominator }: ExactLoop): string {
+  const fraction = ({ numerator: top, denominator: bottom }: ExactLoop['scale']) => `${top}/${bottom}`
+  const product = (factors: ExactLoop['numerator']) => Array.from(factors, ([key, { power }]) => `(${key})^${power}`).sort().join('')
+  return [fraction(scale), fraction(delay), product(numerator), product(inverted), product(denominator)].join(';')
 }
