@@ -1,14 +1,10 @@
 import { describe, expect, it } from 'vitest'
 import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
-import { exactLoopFromTree } from '#shared/analysis/expressions/exactLoopFromTree'
-import type { ExactLoop } from '#shared/analysis/expressions/ExactLoop'
-import { parseExpression } from '#shared/analysis/expressions/parseExpression'
 import { rationalPart } from '#shared/analysis/expressions/rationalPart'
 import type { FactoredLoop } from '#shared/analysis/FactoredLoop'
 import { discretise } from '#shared/analysis/sampling/discretise'
 import type { HoldGain } from '#shared/types/block'
-
-const exactOf = (text: string) => exactLoopFromTree(parseExpression(text, { variable: 's', parameterNames: [] }), {}) as ExactLoop
+import { exactOf } from './exactOf'
 
 const zeroOrder = (sampleTime: number): HoldGain => ({ kind: 'hold', hold: 'zeroOrder', sampleTime })
 const singleUpdate = (sampleTime: number, duty: number): HoldGain => ({ kind: 'hold', hold: 'pwmSingleUpdate', sampleTime, duty })
