@@ -22,7 +22,7 @@ export interface LeafSource<V> {
   /** Told of each expression block that is needed. */
   expression: (name: string, part: LoopPart<V>) => void
   /** A measured block, which stands beside parts of either domain. */
-  measured: (name: string) => LoopPart<V> | null
+  measured: (name: string) => V
 }
 
 /**
@@ -93,7 +93,7 @@ export class BlockScope<V> {
     switch (gain.kind) {
       case 'deadTime': return arithmetic.deadTime(this.delayOf(gain))
       case 'hold': return arithmetic.hold({ name, gain })
-      case 'measured': return leaves.measured(name)
+      case 'measured': return arithmetic.measured(leaves.measured(name))
       default: {
         const value = leaves.rational(name, gain, channel)
         if (value === null) return null

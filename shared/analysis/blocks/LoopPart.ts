@@ -2,7 +2,7 @@ import type { Rational } from '../../numeric/extended/Rational'
 import type { HoldBlock } from './LoopAlgebra'
 
 /**
- * A product in an expression, not yet brought to one domain: number * sampled * hold * continuous * exp(-s delay). Factors of each domain are collected
+ * A product in an expression, not yet brought to one domain: number * sampled * hold * continuous * measured * exp(-s delay). Factors of each domain are collected
  * until the product ends in a sum or in the loop: only then it is known what stands behind the hold. A part that is zero is null.
  */
 export interface LoopPart<V> {
@@ -11,6 +11,8 @@ export interface LoopPart<V> {
   readonly sampled: V | null
   /** in s */
   readonly continuous: V | null
+  /** a measured response, which stands beside parts of either domain */
+  readonly measured: V | null
   /** s; dead time that is not in `continuous` */
   readonly delay: Rational
   readonly hold: HoldBlock | null

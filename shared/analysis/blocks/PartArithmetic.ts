@@ -8,9 +8,9 @@ import { sameSampleTime } from './sameSampleTime'
 /** A dead time counts as whole samples when it differs from them by no more than this part of a sample: rounding of T and of n T. */
 const WHOLE_SAMPLES = 1e-9
 
-/** A gain in one domain; number for what has none. */
+/** A gain in one domain; neutral for what has none: numbers, and measured responses. */
 export interface SettledGain<V> {
-  domain: 'number' | 'continuous' | 'sampled'
+  domain: 'neutral' | 'continuous' | 'sampled'
   value: V
 }
 
@@ -43,6 +43,10 @@ export class PartArithmetic<V> {
     return { ...EMPTY, delay }
   }
 
+  measured(value: V): LoopPart<V> {
+    return { ...EMPTY, measured: value }
+  }
+
   hold(hold: HoldBlock): LoopPart<V> {
     return { ...EMPTY, hold }
   }
@@ -68,6 +72,7 @@ export class PartArithmetic<V> {
       number: a.number.times(b.number),
       sampled: this.both(a.sampled, b.sampled),
       continuous: this.both(a.continuous, b.continuous),
+      measured: this.both(a.measured, b.measured),
       delay: a.delay.plus(b.delay),
       hold: a.hold ?? b.hold,
       closed: (a.closed && !hasContinuous(b)) || (b.closed && !hasContinuous(a)),
@@ -94,6 +99,7 @@ export class PartArithmetic<V> {
       number: part.number.toPower(-1),
       sampled: part.sampled && algebra.invert(part.sampled),
       continuous: part.continuous && algebra.invert(part.continuous),
+      measured: part.measured && algebra.invert(part.measured),
       delay: part.delay.negated(),
     }
   }
@@ -109,6 +115,7 @@ export class PartArithmetic<V> {
       number: base.number.toPower(exponent),
       sampled: base.sampled && this.algebra.raise(base.sampled, exponent),
       continuous: base.continuous && this.algebra.raise(base.continuous, exponent),
+      measured: base.measured && this.algebra.raise(base.measured, exponent),
       delay: base.delay.times(Rational.of(BigInt(exponent), 1n)),
     }))
   }
@@ -124,29 +131,37 @@ export class PartArithmetic<V> {
   /** The part as a gain in one domain. @throws AnalysisInputError where a continuous factor stands beside a sampled one without a hold */
   settle(part: LoopPart<V>, position: number): SettledGain<V> {
     const { algebra, sampleTime } = this
-    const { number, sampled, continuous, delay } = part
+    const { sampled, continuous, delay } = part
     if (part.hold) return this.settle(this.behindHold(part, position), position)
     if (sampled && continuous) throw withoutHold('factor', position)
-    if (continuous) return { domain: 'continuous', value: algebra.scale(algebra.delay(continuous, delay), number) }
-    if (delay.sign === 0) return sampled ? { domain: 'sampled', value: algebra.scale(sampled, number) } : { domain: 'number', value: algebra.number(number) }
+    if (continuous) return { domain: 'continuous', value: this.inSeconds(part) }
+    if (delay.sign === 0) return { domain: sampled ? 'sampled' : 'neutral', value: this.timesRest(sampled, part) }
     const count = sampleTime === undefined ? null : wholeSamples(delay, sampleTime)
-    if (count !== null) {
-      const later = algebra.unitDelays(count)
-      return { domain: 'sampled', value: algebra.scale(sampled ? algebra.multiply(sampled, later) : later, number) }
-    }
+    if (count !== null) return { domain: 'sampled', value: this.timesRest(this.both(sampled, algebra.unitDelays(count)), part) }
     if (sampled) {
       throw new AnalysisInputError(
         `A dead time of ${delay.toNumber()} s is no whole number of samples (${sampleTime} s each): beside sampled parts it has no equivalent in z. Put it behind a hold, with the continuous part it belongs to.`, 'expression', position)
     }
-    return { domain: 'continuous', value: algebra.scale(algebra.delay(algebra.number(Rational.one), delay), number) }
+    return { domain: 'continuous', value: this.inSeconds(part) }
+  }
+
+  /** A part without sampled factors and hold as one continuous gain. */
+  private inSeconds(part: LoopPart<V>): V {
+    const { algebra } = this
+    return this.timesRest(algebra.delay(part.continuous ?? algebra.number(Rational.one), part.delay), part)
+  }
+
+  /** A gain times the measured response and the number of a part. */
+  private timesRest(value: V | null, { measured, number }: LoopPart<V>): V {
+    const product = this.both(value, measured)
+    return product ? this.algebra.scale(product, number) : this.algebra.number(number)
   }
 
   /** Two terms behind one and the same hold are one continuous sum behind it; undefined where they are not. */
   private heldSum(a: LoopPart<V>, b: LoopPart<V>): LoopPart<V> | null | undefined {
     if (!a.hold || !b.hold || a.sampled || b.sampled || !sameHold(a.hold, b.hold)) return undefined
     const { algebra } = this
-    const term = ({ continuous, delay, number }: LoopPart<V>) => algebra.scale(algebra.delay(continuous ?? algebra.number(Rational.one), delay), number)
-    const sum = algebra.add(term(a), term(b))
+    const sum = algebra.add(this.inSeconds(a), this.inSeconds(b))
     if (sum === null) return null
     // different dead times have an equivalent each, but not as one sum
     return algebra.hasSeveralDelays(sum) ? undefined : { ...EMPTY, continuous: sum, hold: a.hold }
@@ -157,22 +172,15 @@ export class PartArithmetic<V> {
     const right = this.settle(b, position)
     const domains = [left.domain, right.domain]
     if (domains.includes('continuous') && domains.includes('sampled')) {
-      // what only delays can stay continuous beside a continuous term
-      const [first, second] = [this.asContinuous(a), this.asContinuous(b)]
-      if (!first || !second) throw withoutHold('term', position)
-      return this.sumOf(first, second, 'continuous')
+      // what is a mere delay can stay continuous beside a continuous term
+      if (a.sampled || a.hold || b.sampled || b.hold) throw withoutHold('term', position)
+      return this.sumOf(this.inSeconds(a), this.inSeconds(b), 'continuous')
     }
-    if (left.domain === 'number' && right.domain === 'number') return this.number(a.number.plus(b.number))
-    return this.sumOf(left.value, right.value, domains.includes('sampled') ? 'sampled' : 'continuous')
+    if (left.domain === 'neutral' && right.domain === 'neutral' && !a.measured && !b.measured) return this.number(a.number.plus(b.number))
+    return this.sumOf(left.value, right.value, domains.includes('sampled') ? 'sampled' : domains.includes('continuous') ? 'continuous' : 'measured')
   }
 
-  private asContinuous({ sampled, continuous, delay, number, hold }: LoopPart<V>): V | null {
-    if (sampled || hold) return null
-    const { algebra } = this
-    return algebra.scale(algebra.delay(continuous ?? algebra.number(Rational.one), delay), number)
-  }
-
-  private sumOf(left: V, right: V, domain: 'continuous' | 'sampled'): LoopPart<V> | null {
+  private sumOf(left: V, right: V, domain: 'continuous' | 'sampled' | 'measured'): LoopPart<V> | null {
     const sum = this.algebra.add(left, right)
     if (sum === null) return null
     const [before, after] = [[left, right].map(value => this.algebra.excess(value)), this.algebra.excess(sum)]
@@ -189,8 +197,8 @@ export class PartArithmetic<V> {
       throw new AnalysisInputError(
         `Behind the hold ${hold.name} stands a continuous sum or feedback with a dead time inside: it has no finite equivalent in z. Put each term behind the hold by itself, as in ${hold.name}*G1 + ${hold.name}*G2, or close that inner loop in samples.`, 'expression', position)
     }
-    const equivalent = this.bounded(position, () => ({ ...EMPTY, sampled: algebra.behindHold(behind, hold) }))
-    return { ...equivalent, number: part.number, sampled: this.both(part.sampled, equivalent.sampled), noFeedthrough: part.noFeedthrough }
+    const sampled = this.bounded(position, () => ({ ...EMPTY, sampled: this.both(part.sampled, placed(position, () => algebra.behindHold(behind, hold))) })).sampled
+    return { ...part, sampled, continuous: null, delay: Rational.zero, hold: null, closed: false }
   }
 
   private both(a: V | null, b: V | null): V | null {
@@ -212,12 +220,23 @@ export class PartArithmetic<V> {
   }
 }
 
-const EMPTY = { number: Rational.one, sampled: null, continuous: null, delay: Rational.zero, hold: null, closed: false, noFeedthrough: false } as const
+const EMPTY = { number: Rational.one, sampled: null, continuous: null, measured: null, delay: Rational.zero, hold: null, closed: false, noFeedthrough: false } as const
 
-const hasContinuous = (part: LoopPart<unknown>) => part.continuous !== null || part.delay.sign !== 0
+const hasContinuous = (part: LoopPart<unknown>) => part.continuous !== null || part.measured !== null || part.delay.sign !== 0
 
 function sameHold(a: HoldBlock, b: HoldBlock): boolean {
   return a.name === b.name || (a.gain.hold === b.gain.hold && (a.gain.duty ?? 0.5) === (b.gain.duty ?? 0.5) && sameSampleTime(a.gain.sampleTime, b.gain.sampleTime))
+}
+
+/** Gives a fault of the expression that has no place in it yet the one where its step stands. */
+function placed<T>(position: number, step: () => T): T {
+  try {
+    return step()
+  }
+  catch (error) {
+    if (error instanceof AnalysisInputError && error.path === 'expression' && error.position === undefined) throw new AnalysisInputError(error.message, 'expression', position)
+    throw error
+  }
 }
 
 function withoutHold(what: 'factor' | 'term', position: number): AnalysisInputError {
