@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { closedLoopPoles } from '#shared/analysis/structure/closedLoopPoles'
 import type { ComplexPair, LoopInput } from '#shared/types/analysis'
+import type { BlockGain } from '#shared/types/block'
 
 const modesOf = (input: LoopInput) => closedLoopPoles(input).poles.map(({ mode }) => mode)
 
@@ -145,5 +146,50 @@ describe('which open-loop pole a closed-loop pole goes back to', () => {
     }
     const { poles: closed } = closedLoopPoles({ zeros, poles: [...poles, [-1, 0]], gain: 0.3 })
     expect(closed.filter(({ im }) => im > 0).map(({ mode }) => mode)).toEqual(names)
+  })
+})
+
+describe('open-loop poles by the blocks they come from', () => {
+  const modal: BlockGain = {
+    kind: 'modal', frequencyUnit: 'Hz', derivative: 0, inputs: [], outputs: [], rigid: [{ power: -2, gainIn: [1], gainOut: [1] }],
+    modes: [{ name: 'bending 1', frequency: 2, damping: 0.01, gainIn: [0.2], gainOut: [1] }, { name: '', frequency: 5, damping: 0.02, gainIn: [0.1], gainOut: [1] }],
+  }
+  const lead: BlockGain = { kind: 'expression', expression: '2*(s+0.5)/(0.001*s+1)^2' }
+
+  it('blocks that stand alone: no block, no name; a block of the name constructor', () => {
+    expect(modesOf({ expression: '1/s', blocks: {} })).toEqual(['integrator'])
+    expect(modesOf({ expression: 'constructor', blocks: { constructor: { kind: 'expression', expression: '1/(s+1)' } } })).toEqual(['real pole of constructor at 1.000 rad/s'])
+  })
+
+  it('modes of a modal table go by their names, other poles by their blocks', () => {
+    const modes = modesOf({ expression: 'C*G', frequencyUnit: 'Hz', blocks: { C: lead, G: modal } })
+    expect(modes).toEqual([
+      'integrator of G', 'integrator of G', 'bending 1 of G (2.000 Hz, damping 0.0100)', 'mode 2 of G (5.000 Hz, damping 0.0200)', 'real pole of C at 159.2 Hz', 'real pole of C at 159.2 Hz'])
+  })
+
+  it('an integrator of two blocks names both', () => {
+    expect(modesOf({ expression: 'C*G', blocks: { C: { kind: 'expression', expression: '(s+1)/s' }, G: { kind: 'expression', expression: '1/(s*(0.01*s+1))' } } })[0])
+      .toContain('integrator of C and G')
+  })
+
+  it('behind an inner closed loop the mode nearest to the pole is told beside it', () => {
+    const input: LoopInput = { expression: 'C*G/(1+0.3*s/(0.001*s+1)*G)', blocks: { C: lead, G: modal } }
+    expect(modesOf(input)).toEqual(expect.arrayContaining([expect.stringMatching(/^pole at 12\.\d+ rad\/s, damping 0\.\d+, nearest mode bending 1 of G$/)]))
+  })
+
+  it('what a block over others brings is told by the others, what is its own by itself', () => {
+    const modes = modesOf({ expression: 'P', blocks: { P: { kind: 'expression', expression: 'A/(s+3)' }, A: { kind: 'expression', expression: '0.01/(s+1)' } } })
+    expect(modes).toEqual(['real pole of A at 1.000 rad/s', 'real pole of P at 3.000 rad/s'])
+  })
+
+  it('behind a hold a mode keeps its name, and one above half the sampling frequency too', () => {
+    const H0: BlockGain = { kind: 'hold', hold: 'zeroOrder', sampleTime: 0.15 }
+    const C: BlockGain = { kind: 'coefficients', numerator: [0.02], denominator: [1, -0.5], sampleTime: 0.15 }
+    const { poles, reason } = closedLoopPoles({ expression: 'C*H0*G', blocks: { C, H0, G: modal } })
+    expect(reason).toBeNull()
+    const modes = poles.map(({ mode }) => mode ?? '')
+    // half the sampling frequency is 3.33 Hz: the mode of 5 Hz lies at 2 * 3.33 - 5 = 1.67 Hz of it
+    expect(modes.filter(mode => mode.startsWith('bending 1 of G'))).toHaveLength(1)
+    expect(modes.filter(mode => mode.startsWith('mode 2 of G'))).toHaveLength(1)
   })
 })
