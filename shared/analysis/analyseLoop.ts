@@ -1,6 +1,8 @@
 import type { LoopAnalysis, LoopInput } from '../types/analysis'
 import { AnalysisInputError } from './AnalysisInputError'
 import { analyseFactored } from './analyseFactored'
+import { atMeasuredBlock } from './blocks/atMeasuredBlock'
+import { measuredInputOf } from './blocks/measuredInputOf'
 import { analyseGeneralLoop } from './expressions/analyseGeneralLoop'
 import { lowerExpression } from './expressions/lowerExpression'
 import { factorsOfInput } from './factorsOfInput'
@@ -15,7 +17,11 @@ import { analyseMeasured } from './measured/analyseMeasured'
  */
 export function analyseLoop(input: LoopInput): LoopAnalysis {
   if ('numerator' in input || 'zeros' in input) return analyseFactored(factorsOfInput(input), input)
-  if ('measured' in input) return analyseMeasured(input)
+  const measured = measuredInputOf(input)
+  if (measured) {
+    const analysis = atMeasuredBlock(measured, () => analyseMeasured(measured.input))
+    return measured.structure ? { ...analysis, structure: measured.structure } : analysis
+  }
   if ('expression' in input) {
     const lowered = lowerExpression(input)
     const analysis = lowered.kind === 'factored' ? analyseFactored(lowered.loop, input) : analyseGeneralLoop(lowered.loop, input)

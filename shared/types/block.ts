@@ -60,7 +60,15 @@ export interface ModalGain {
 }
 
 /** Frequencies of the points in the unit of the loop's input. */
-export interface MeasuredGain { kind: 'measured', points: MeasuredPoint[], averages?: number }
+export interface MeasuredGain extends StatedPoles { kind: 'measured', points: MeasuredPoint[], averages?: number }
+
+/** What is stated of the poles of a measured gain itself; without it the closed-loop verdict over it stays undetermined. */
+export interface StatedPoles {
+  /** beyond the stability boundary */
+  openLoopUnstablePoles?: number
+  /** at s = 0 (or z = 1) */
+  openLoopOriginPoles?: number
+}
 
 /** exp(-s T). In samples: of the loop's sample time, whole or not. */
 export interface DeadTimeGain { kind: 'deadTime', deadTime: number, unit: 's' | 'samples' }
@@ -101,7 +109,7 @@ export interface StateSpaceDefinition {
 /** Second-order sections as typed: each cell the text of a number or of a fraction of two, as in 16384/32768. */
 export interface SectionsDefinition { kind: 'sections', rows: string[][], gain: string, sampleTime: number }
 
-export interface MeasuredBlockDefinition { kind: 'measured', uploadId: number, mapping: MeasurementMapping, averages?: number }
+export interface MeasuredBlockDefinition extends StatedPoles { kind: 'measured', uploadId: number, mapping: MeasurementMapping, averages?: number }
 
 /** The gain of a block as it is stored. */
 export type BlockDefinition

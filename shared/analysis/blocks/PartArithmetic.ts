@@ -197,7 +197,7 @@ export class PartArithmetic<V> {
       throw new AnalysisInputError(
         `Behind the hold ${hold.name} stands a continuous sum or feedback with a dead time inside: it has no finite equivalent in z. Put each term behind the hold by itself, as in ${hold.name}*G1 + ${hold.name}*G2, or close that inner loop in samples.`, 'expression', position)
     }
-    const sampled = this.bounded(position, () => ({ ...EMPTY, sampled: this.both(part.sampled, placed(position, () => algebra.behindHold(behind, hold))) })).sampled
+    const sampled = this.bounded(position, () => ({ ...EMPTY, sampled: this.both(part.sampled, algebra.behindHold(behind, hold)) })).sampled
     return { ...part, sampled, continuous: null, delay: Rational.zero, hold: null, closed: false }
   }
 
@@ -226,17 +226,6 @@ const hasContinuous = (part: LoopPart<unknown>) => part.continuous !== null || p
 
 function sameHold(a: HoldBlock, b: HoldBlock): boolean {
   return a.name === b.name || (a.gain.hold === b.gain.hold && (a.gain.duty ?? 0.5) === (b.gain.duty ?? 0.5) && sameSampleTime(a.gain.sampleTime, b.gain.sampleTime))
-}
-
-/** Gives a fault of the expression that has no place in it yet the one where its step stands. */
-function placed<T>(position: number, step: () => T): T {
-  try {
-    return step()
-  }
-  catch (error) {
-    if (error instanceof AnalysisInputError && error.path === 'expression' && error.position === undefined) throw new AnalysisInputError(error.message, 'expression', position)
-    throw error
-  }
 }
 
 function withoutHold(what: 'factor' | 'term', position: number): AnalysisInputError {

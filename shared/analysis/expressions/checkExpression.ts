@@ -1,5 +1,7 @@
+import type { ExpressionInput } from '../../types/analysis'
 import type { BlockGain } from '../../types/block'
 import { AnalysisInputError } from '../AnalysisInputError'
+import { measuredInputOf } from '../blocks/measuredInputOf'
 import { lowerExpression } from './lowerExpression'
 import { namesInExpression } from './namesInExpression'
 import { parseExpression, type ExpressionNames } from './parseExpression'
@@ -20,9 +22,10 @@ export function checkExpression(text: string, names: ExpressionNames, parameters
     parseExpression(text, names)
     const { blocks } = names
     if (parameters && !Array.isArray(blocks)) {
-      lowerExpression({
+      const input: ExpressionInput = {
         expression: text, parameters: { ...parameters }, ...names.variable === 'z' && { sampleTime: 1 }, ...blocks && { blocks: blocks as Record<string, BlockGain> },
-      })
+      }
+      if (measuredInputOf(input) === null) lowerExpression(input)
     }
     return []
   }

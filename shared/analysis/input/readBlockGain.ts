@@ -25,7 +25,7 @@ const fieldsOf: Record<BlockKind, readonly string[]> = {
   stateSpace: ['a', 'b', 'c', 'd', 'inputs', 'outputs', 'sampleTime'],
   sections: ['sections', 'gain', 'sampleTime'],
   modal: ['frequencyUnit', 'derivative', 'modes', 'rigid', 'inputs', 'outputs'],
-  measured: ['points', 'averages'],
+  measured: ['points', 'averages', 'openLoopUnstablePoles', 'openLoopOriginPoles'],
   deadTime: ['deadTime', 'unit'],
   hold: ['hold', 'sampleTime', 'duty'],
 }
@@ -80,7 +80,11 @@ function readSections(record: Record<string, unknown>): SectionsGain {
 
 function readMeasured(record: Record<string, unknown>): MeasuredGain {
   const points = readMeasuredPoints(record.points, 'points')
-  return { kind: 'measured', points, ...isGiven(record.averages) && { averages: readWholeNumber(record.averages, 'averages', 1, 1e9) } }
+  const poles = (field: 'openLoopUnstablePoles' | 'openLoopOriginPoles') => isGiven(record[field]) && { [field]: readWholeNumber(record[field], field, 0, inputLimits.order) }
+  return {
+    kind: 'measured', points, ...isGiven(record.averages) && { averages: readWholeNumber(record.averages, 'averages', 1, 1e9) },
+    ...poles('openLoopUnstablePoles'), ...poles('openLoopOriginPoles'),
+  }
 }
 
 function readDeadTime(record: Record<string, unknown>): DeadTimeGain {
