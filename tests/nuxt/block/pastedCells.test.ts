@@ -1,5 +1,4 @@
 import { describe, expect, it } from 'vitest'
-import { blockInShort } from '~/utils/blockInShort'
 import { channelNames } from '~/utils/channelNames'
 import { parseTimeText } from '~/utils/parseTimeText'
 import { pastedCells } from '~/utils/pastedCells'
@@ -49,15 +48,5 @@ describe('channels as typed', () => {
   it('are refused where a name could not stand in an expression', () => {
     expect(() => channelNames('rate, 2')).toThrow('\'2\' cannot be the name of a channel')
     expect(() => channelNames('a, a')).toThrow('stands twice')
-  })
-})
-
-describe('a gain in short', () => {
-  it('says what matters of each kind', () => {
-    expect(blockInShort({ kind: 'deadTime', deadTime: 0.0005, unit: 's' })).toBe('500 us')
-    expect(blockInShort({ kind: 'deadTime', deadTime: 1, unit: 'samples' })).toBe('1 sample')
-    expect(blockInShort({ kind: 'hold', hold: 'zeroOrder', sampleTime: 2e-5 })).toBe('zero order at 20 us')
-    expect(blockInShort({ kind: 'modal', frequencyUnit: 'Hz', derivative: 0, rigid: [], inputs: [], outputs: [], modes: [{ name: 'a', frequency: 1, damping: 0, gainIn: [1, 2], gainOut: [1] }] })).toBe('1 mode, 2 in, 1 out')
-    expect(blockInShort({ kind: 'coefficients', numerator: [1], denominator: [1, 2], sampleTime: 0.001 })).toBe('order 0 over 1, in z at 1 ms')
   })
 })
