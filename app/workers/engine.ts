@@ -14,6 +14,8 @@ import { loopInputFromDefinition, type DefinitionFacts } from '#shared/sources/l
 import type { LoopAnalysis, LoopInput } from '#shared/types/analysis'
 import type { Criterion, Judgement } from '#shared/types/criterion'
 import type { MeasuredDefinition, SourceDefinition } from '#shared/types/source'
+import { blockLook, type BlockLook, type LookRequest } from './blockLook'
+import { UploadShelf } from './UploadShelf'
 
 export interface AnalysisFailed {
   failure: { message: string, path: string, position?: number }
@@ -67,6 +69,27 @@ function draw({ title, requiredVectorMargin, curves: [first, ...others] }: DrawR
   return buildLoopFigureData({ title, requiredVectorMargin, curves: [curveSource(first), ...others.map(curveSource)] })
 }
 
+/** What a file of state-space matrices holds, without the numbers. */
+export interface MatricesRead {
+  sets: { name: string, states: number, inputs: string[], outputs: string[], inputCount: number, outputCount: number }[]
+  problems: MeasurementProblem[]
+  /** it may be plain numbers, whose number of states only a person knows */
+  isPlain: boolean
+}
+
+const shelf = new UploadShelf()
+
+function lookAtBlock(request: LookRequest): { look: BlockLook } | AnalysisFailed | { problems: MeasurementProblem[] } {
+  try {
+    const { problems } = shelf.factsOf(request.definition)
+    return problems !== undefined ? { problems } : { look: blockLook(request, definition => shelf.factsOf(definition)) }
+  }
+  catch (error) {
+    if (error instanceof AnalysisInputError) return { failure: { message: error.message, path: error.path, ...error.position !== undefined && { position: error.position } } }
+    throw error
+  }
+}
+
 /** Text of the file that was opened last; it stays in the worker, since it may be large. */
 let openedText = ''
 
@@ -91,6 +114,24 @@ export const engine = {
     if (problems.length > 0) return { problems }
     return analyseDefinition({ ...request, facts: { ...request.facts, points } })
   },
+
+  /** The text of an upload that definitions of blocks name. */
+  keepUpload: (id: number, text: string): void => shelf.keep(id, text),
+  hasUpload: (id: number): boolean => shelf.has(id),
+
+  readMatrices(id: number, states: number | null): MatricesRead {
+    const { sets, problems } = shelf.matrices(id, states)
+    return {
+      problems,
+      isPlain: problems.length > 0 && !shelf.isJson(id),
+      sets: sets.map(({ name, a, b, c, inputs, outputs }) => ({ name, states: a.length, inputs, outputs, inputCount: b[0]?.length ?? 0, outputCount: c.length })),
+    }
+  },
+
+  previewUpload: (id: number): MeasurementPreview => shelf.preview(id),
+
+  /** The response and poles of a block as it is drafted; the files its definitions name must have been kept. */
+  lookAtBlock,
 }
 
 export type Engine = typeof engine
