@@ -10,6 +10,7 @@ import { blockGainFromDefinition, type BlockFacts } from '#shared/sources/blockG
 import type { FrequencyUnit } from '#shared/types/analysis'
 import type { BlockDefinition, BlockGain, HoldGain } from '#shared/types/block'
 import type { LoopGain } from '#shared/analysis/LoopGain'
+import { neededBlocks } from '~/utils/neededBlocks'
 
 export interface LookRequest {
   /** as it stands in expressions */
@@ -74,22 +75,13 @@ export function blockLook(request: LookRequest, uploads: UploadFacts): BlockLook
 }
 
 /** The block with all that it needs, and the parameters that any of them names. */
-function needed({ name, others, parameters, frequencyUnit }: LookRequest, own: BlockGain, uploads: UploadFacts) {
-  const blocks: Record<string, BlockGain> = { [name]: own }
-  const used: Record<string, number> = {}
-  const add = (gain: BlockGain) => {
-    if (gain.kind !== 'expression') return
-    for (const { name: wanted } of namesInExpression(gain.expression)) {
-      const value = parameters[wanted]
-      if (value !== undefined) used[wanted] = value
-      const definition = others[wanted]
-      if (definition === undefined || blocks[wanted] !== undefined) continue
-      blocks[wanted] = atBlock(wanted, () => blockGainFromDefinition(definition, { frequencyUnit, ...uploads(definition) }))
-      add(blocks[wanted])
-    }
-  }
-  add(own)
-  return { blocks, parameters: used }
+function needed({ name, definition, others, parameters, frequencyUnit }: LookRequest, own: BlockGain, uploads: UploadFacts) {
+  const wanted = neededBlocks(definition, others)
+  const blocks: Record<string, BlockGain> = {}
+  for (const [other, gain] of Object.entries(wanted)) blocks[other] = atBlock(other, () => blockGainFromDefinition(gain, { frequencyUnit, ...uploads(gain) }))
+  blocks[name] = own
+  const names = new Set(Object.values(blocks).flatMap(gain => gain.kind === 'expression' ? namesInExpression(gain.expression).map(found => found.name) : []))
+  return { blocks, parameters: Object.fromEntries(Object.entries(parameters).filter(([parameter]) => names.has(parameter))) }
 }
 
 function atBlock<Value>(name: string, read: () => Value): Value {

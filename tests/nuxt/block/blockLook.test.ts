@@ -32,8 +32,7 @@ describe('what a block does by itself, as it is drafted', () => {
   })
 
   it('reads only those of the others that it needs', () => {
-    const others = { H: { kind: 'coefficients', numerator: [2], denominator: [1, 4] }, bad: { kind: 'coefficients', numerator: [], denominator: [] } } as const
-    const found = look({ definition: { kind: 'expression', expression: 'k*H' }, others: { H: { ...others.H, numerator: [2], denominator: [1, 4] }, bad: { kind: 'coefficients', numerator: [], denominator: [] } }, parameters: { k: 10, unused: 1 } })
+    const found = look({ definition: { kind: 'expression', expression: 'k*H' }, others: { H: { kind: 'coefficients', numerator: [2], denominator: [1, 4] }, bad: { kind: 'coefficients', numerator: [], denominator: [] } }, parameters: { k: 10, unused: 1 } })
     expect(found.poles).toEqual(['4.000 rad/s, real'])
     // 20/(s + 4) far below 4 rad/s is 5: 13.98 dB, closed form
     expect(decibelsAt(found, 0)).toBeCloseTo(13.98, 0)
