@@ -1,6 +1,7 @@
 import type { LoopInput } from '../../types/analysis'
 import type { ClosedLoopPole, ClosedLoopPoles } from '../../types/structure'
 import { AnalysisInputError } from '../AnalysisInputError'
+import { measuredInputOf } from '../blocks/measuredInputOf'
 import { lowerExpression } from '../expressions/lowerExpression'
 import type { FactoredLoop } from '../FactoredLoop'
 import { BOUNDARY_DISTANCE } from '../factors/BoundaryRule'
@@ -57,8 +58,8 @@ export function closedLoopPoles(input: LoopInput): ClosedLoopPoles {
 
 /** The loop gain in factors, or why it has none. */
 function factorsOf(input: LoopInput): FactoredLoop | string {
-  if ('measured' in input) return 'A measured response tells no closed-loop poles.'
   if ('numerator' in input || 'zeros' in input) return factorsOfInput(input)
+  if (measuredInputOf(input)) return 'A measured response tells no closed-loop poles.'
   if (!('expression' in input)) throw new AnalysisInputError('This source form is not analysed yet.', 'expression')
   const lowered = lowerExpression(input)
   return lowered.kind === 'factored' ? lowered.loop : 'With several dead times the closed loop has endlessly many poles: none are listed.'

@@ -1,4 +1,3 @@
-import { formatFrequency } from '../../formatting/formatFrequency'
 import type { FrequencyUnit } from '../../types/analysis'
 import { BOUNDARY_DISTANCE } from '../factors/BoundaryRule'
 
@@ -10,14 +9,18 @@ export interface PlanePole {
   atOriginOfZ: boolean
 }
 
-/** An open-loop pole in words: 'pole at 12.30 rad/s, damping 0.0200', 'integrator', 'unstable real pole at 3.000 rad/s', 'sample of delay'. */
+/** An open-loop pole in words: 'pole at 12.3 rad/s, damping 0.02', 'integrator', 'unstable real pole at 3 rad/s', 'sample of delay'. */
 export function describeOpenLoopPole({ re, im, atOriginOfZ }: PlanePole, unit: FrequencyUnit): string {
   if (atOriginOfZ) return 'sample of delay'
   const size = Math.hypot(re, im)
   if (size === 0) return 'integrator'
-  const place = formatFrequency(size / (unit === 'Hz' ? 2 * Math.PI : 1), unit)
+  const place = placeInWords(size, unit)
   const unstable = re > BOUNDARY_DISTANCE * size ? 'unstable ' : ''
   if (im === 0) return `${unstable}real pole at ${place}`
-  const damping = Math.abs(re) / size
-  return `${unstable}pole at ${place}, damping ${unstable ? 'minus ' : ''}${damping < 0.1 ? damping.toFixed(4) : damping.toFixed(3)}`
+  return `${unstable}pole at ${place}, damping ${unstable ? 'minus ' : ''}${Number((Math.abs(re) / size).toPrecision(3))}`
+}
+
+/** A frequency (rad/s) as short as four digits allow, in the unit given: '12.3 rad/s'. */
+export function placeInWords(w: number, unit: FrequencyUnit): string {
+  return `${Number((w / (unit === 'Hz' ? 2 * Math.PI : 1)).toPrecision(4))} ${unit}`
 }

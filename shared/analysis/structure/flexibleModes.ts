@@ -1,8 +1,8 @@
-import { formatFrequency } from '../../formatting/formatFrequency'
 import type { ExpressionInput } from '../../types/analysis'
 import type { BlockGain, BlockRole, ModalGain } from '../../types/block'
 import { orderBlocks } from '../blocks/orderBlocks'
 import { blockUses, type BlockUse } from './blockUses'
+import { placeInWords } from './describeOpenLoopPole'
 import { factorsOfReference } from './factorsOfReference'
 import { isSamePole } from './polesOfBlocks'
 import { replaceUses } from './replaceUses'
@@ -94,10 +94,9 @@ function modesOfFactors(input: ExpressionInput, block: string, gain: BlockGain, 
   }
   return found.map((pole): FlexibleMode => {
     const frequency = Math.hypot(pole.re, pole.im)
-    const unit = input.frequencyUnit ?? 'rad/s'
     return {
       block,
-      mode: `mode at ${formatFrequency(frequency / (unit === 'Hz' ? TWO_PI : 1), unit)}`,
+      mode: `mode at ${placeInWords(frequency, input.frequencyUnit ?? 'rad/s')}`,
       frequency,
       damping: -pole.re / frequency + 0,
       moved: (change) => {

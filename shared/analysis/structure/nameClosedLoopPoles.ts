@@ -1,5 +1,4 @@
 import type { FactoredLoop } from '../FactoredLoop'
-import { listInWords } from '../../formatting/listInWords'
 import type { PlanePole } from './describeOpenLoopPole'
 import { followRootLoci, type LocusEnd } from './followRootLoci'
 import { poleInPlane } from './poleInPlane'
@@ -22,10 +21,10 @@ export function nameClosedLoopPoles(loop: FactoredLoop, samples: number, roots: 
   const matched = matchEnds(roots, ends)
   return matched.map((end) => {
     if (end === null || end.origins.length > MOST_ORIGINS) return null
-    return listInWords([...new Set(end.origins.map((origin) => {
+    return [...new Set(end.origins.map((origin) => {
       const { re, im } = poles[origin]!
       return words(poleInPlane(re, Math.abs(im), loop.sampleTime))
-    }))])
+    }))].join(' and ')
   })
 }
 

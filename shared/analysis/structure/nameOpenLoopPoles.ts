@@ -1,4 +1,3 @@
-import { listInWords } from '../../formatting/listInWords'
 import type { LoopInput } from '../../types/analysis'
 import { describeOpenLoopPole, type PlanePole } from './describeOpenLoopPole'
 import { isSamePole, polesOfBlocks, type BlockPole } from './polesOfBlocks'
@@ -8,8 +7,8 @@ const NEAR = 0.1
 const FLEXIBLE = 0.2
 
 /**
- * Words for a pole of the loop gain, by the block and mode it comes from where the loop is built of blocks: 'bending 1 of G (12.30 rad/s, damping 0.0200)',
- * 'integrator of C', 'pole at 12.30 rad/s, damping 0.0200, nearest mode bending 1 of G' behind an inner closed loop.
+ * Words for a pole of the loop gain, by the block and mode it comes from where the loop is built of blocks: 'bending 1 of G (12.3 rad/s, damping 0.02)',
+ * 'integrator of C', 'pole at 12.3 rad/s, damping 0.02, nearest mode bending 1 of G' behind an inner closed loop.
  */
 export function nameOpenLoopPoles(input: LoopInput, sampleTime: number | undefined): (pole: PlanePole) => string {
   const unit = input.frequencyUnit ?? 'rad/s'
@@ -20,7 +19,7 @@ export function nameOpenLoopPoles(input: LoopInput, sampleTime: number | undefin
     if (own.length === 0) return `${plain}${nearestMode(known, pole)}`
     const mode = own.find(candidate => candidate.mode !== null)
     if (mode && own.length === 1) return `${mode.mode} of ${mode.block} (${plain.replace(/^pole at /, '')})`
-    const blocks = listInWords([...new Set(own.map(({ block }) => block))])
+    const blocks = [...new Set(own.map(({ block }) => block))].join(' and ')
     return plain.includes(' at ') ? plain.replace(' at ', ` of ${blocks} at `) : `${plain} of ${blocks}`
   }
 }

@@ -64,6 +64,14 @@ describe('how far two sources lie apart', () => {
     expect(bands[1]!.phase.difference).toBeCloseTo(-180 / Math.PI, 9)
   })
 
+  it('a loop over a measured block is compared at its points', () => {
+    const points = [1, 2, 5].map(frequency => ({ frequency, re: 0, im: -1 / frequency }))
+    const measured: LoopInput = { expression: '2*G', blocks: { G: { kind: 'measured', points } } }
+    const { basis, bands } = compareSources(model('model', '1/s'), source('over a sweep', measured))
+    expect(basis).toBe('Compared at 3 points of \'over a sweep\'.')
+    expect(bands[0]!.gain.difference).toBeCloseTo(20 * Math.log10(2), 9)
+  })
+
   it('differences are of the other less the reference, whichever of the two is measured', () => {
     const points = sweep('sweep', [1, 2, 5], 2, 0.1)
     const there = compareSources(model('model', '1/s'), points).bands[0]!

@@ -59,6 +59,25 @@ describe('loops without a table of mode shifts', () => {
   })
 })
 
+describe('loops over a measured block', () => {
+  it('its own modes are not moved, those of a modelled sensor beside it are', () => {
+    const points = Array.from({ length: 200 }, (_, k) => {
+      const frequency = 0.1 * 1.04 ** k
+      return { frequency, re: 0, im: -1 / frequency }
+    })
+    const G: BlockGain = { kind: 'measured', points }
+    expect(shiftModes({ expression: 'G', blocks: { G } }, roles)).toMatchObject({ modes: [], notes: ['G is measured: its modes are not moved.'] })
+    const sensor = (w: number) => expression(`${w}^2/(s^2+2*0.1*${w}*s+${w}^2)`)
+    const { modes, notes } = shiftModes({ expression: 'G*S', blocks: { G, S: sensor(20) } }, roles)
+    expect([modes.map(({ block }) => block), notes[0]]).toEqual([['S'], 'G is measured: its modes are not moved.'])
+    // beta is kept, so a moved sensor has the gain (20/w)^2 of its own form
+    for (const { change, ...margins } of modes[0]!.shifts) {
+      const w = 20 * (1 + change)
+      expectSameMargins(margins, analyseLoop({ expression: `${(20 / w) ** 2}*G*S`, blocks: { G, S: sensor(w) } }))
+    }
+  })
+})
+
 describe('a mode and its notch', () => {
   // rigid body 1/s^2 under a lead, one mode at 20 rad/s, its notch: typed out by hand with the mode at w
   const controller = '3*(s+0.5)/(0.02*s+1)^2'
@@ -91,7 +110,7 @@ describe('a mode and its notch', () => {
     ]
     for (const G of others) {
       const { modes, notes } = shiftModes({ expression: 'C*F*G', blocks: { ...blocks, G } }, roles)
-      expect(modes.map(({ block, mode }) => [block, mode])).toEqual([['G', 'mode at 20.00 rad/s']])
+      expect(modes.map(({ block, mode }) => [block, mode])).toEqual([['G', 'mode at 20 rad/s']])
       expect(modes[0]!.frequency).toBeCloseTo(20, 10)
       expect(modes[0]!.damping).toBeCloseTo(0.01, 10)
       expect(notes).toHaveLength(1)
@@ -128,13 +147,13 @@ describe('which modes are moved', () => {
       C, P: expression('A*G'), S: expression('2500/(s^2+2*0.1*50*s+2500)'), A: expression('90000/(s^2+2*0.19*300*s+90000)'), G: table([['first', 8, 0.02, 0.1], ['second', 90, 0.005, 0.2]]),
     }
     const { modes } = shiftModes({ expression: 'C*P*S', blocks }, { ...roles, P: 'plant' })
-    expect(modes.map(({ block, mode }) => [block, mode])).toEqual([['G', 'first'], ['S', 'mode at 50.00 rad/s'], ['G', 'second'], ['A', 'mode at 300.0 rad/s']])
+    expect(modes.map(({ block, mode }) => [block, mode])).toEqual([['G', 'first'], ['S', 'mode at 50 rad/s'], ['G', 'second'], ['A', 'mode at 300 rad/s']])
   })
 
   it('an expression over other blocks moves only a mode of its own, with its part in the whole', () => {
     const blocks: Record<string, BlockGain> = { C, A: expression('1/(0.01*s+1)'), P: expression('A*(1/s^2+0.5/(s^2+0.2*s+100))') }
     const { modes } = shiftModes({ expression: 'C*P', blocks }, { ...roles, P: 'plant' })
-    expect(modes.map(({ block, mode }) => [block, mode])).toEqual([['P', 'mode at 10.00 rad/s']])
+    expect(modes.map(({ block, mode }) => [block, mode])).toEqual([['P', 'mode at 10 rad/s']])
     // by hand: the part of 0.5/((0.01 s + 1) q) that belongs to q is 0.5 (alpha s + beta)/q + 0.5 c/(0.01 s + 1) with c = 1e-4/(0.01^2 q(-100)) ...
     // 1/((0.01 s + 1) q): at s = -100, q = 10080, so c = 1/10080; alpha = -0.01 c ... from (alpha s + beta)(0.01 s + 1) + c q = 1
     const c = 1 / 10080
