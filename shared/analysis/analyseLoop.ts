@@ -4,9 +4,12 @@ import { analyseFactored } from './analyseFactored'
 import { atMeasuredBlock } from './blocks/atMeasuredBlock'
 import { measuredInputOf } from './blocks/measuredInputOf'
 import { analyseGeneralLoop } from './expressions/analyseGeneralLoop'
+import { evaluateGeneralLoop } from './expressions/evaluateGeneralLoop'
 import { lowerExpression } from './expressions/lowerExpression'
 import { factorsOfInput } from './factorsOfInput'
 import { analyseMeasured } from './measured/analyseMeasured'
+import { prepareFactoredGain } from './prepareFactoredGain'
+import { withApproximation } from './sampling/withApproximation'
 
 /**
  * The complete analysis of one loop: every gain and phase crossover, every closest approach to -1, the vector margin, the closed-loop verdict,
@@ -25,7 +28,9 @@ export function analyseLoop(input: LoopInput): LoopAnalysis {
   if ('expression' in input) {
     const lowered = lowerExpression(input)
     const analysis = lowered.kind === 'factored' ? analyseFactored(lowered.loop, input) : analyseGeneralLoop(lowered.loop, input)
-    return lowered.structure ? { ...analysis, structure: lowered.structure } : analysis
+    if (!lowered.structure) return analysis
+    return withApproximation({ ...analysis, structure: lowered.structure }, input,
+      () => lowered.kind === 'factored' ? prepareFactoredGain(lowered.loop) : evaluateGeneralLoop(lowered.loop))
   }
   throw new AnalysisInputError('This source form is not analysed yet.', 'expression')
 }

@@ -1,0 +1,169 @@
+import { describe, expect, it } from 'vitest'
+import { rationalPart } from '#shared/analysis/expressions/rationalPart'
+import { prepareFactoredGain } from '#shared/analysis/prepareFactoredGain'
+import { discretise } from '#shared/analysis/sampling/discretise'
+import type { HoldGain } from '#shared/types/block'
+import { exactOf } from './exactOf'
+
+/*
+ * The discrete equivalent against other routes to the same values on the unit circle: the aliasing sum, sums over modes in closed form, responses integrated step by step.
+ */
+
+type Complex = [number, number]
+const plus = ([a, b]: Complex, [c, d]: Complex): Complex => [a + c, b + d]
+const minus = ([a, b]: Complex, [c, d]: Complex): Complex => [a - c, b - d]
+const times = ([a, b]: Complex, [c, d]: Complex): Complex => [a * c - b * d, a * d + b * c]
+const over = ([a, b]: Complex, [c, d]: Complex): Complex => [(a * c + b * d) / (c * c + d * d), (b * c - a * d) / (c * c + d * d)]
+const exponential = ([a, b]: Complex): Complex => [Math.exp(a) * Math.cos(b), Math.exp(a) * Math.sin(b)]
+const size = ([a, b]: Complex) => Math.hypot(a, b)
+
+function equivalentAt(plant: string, hold: HoldGain): (w: number) => Complex {
+  const { evaluate } = prepareFactoredGain(rationalPart(discretise(exactOf(plant), hold).loop, hold.sampleTime))
+  const out = new Float64Array(2)
+  return (w) => {
+    expect(evaluate(w, out)).toBe(true)
+    return [out[0] as number, out[1] as number]
+  }
+}
+
+/** sum over k of hold(w + k 2 pi/T) G(w + k 2 pi/T) e^(-j(w + k 2 pi/T) delay) */
+function aliasingSum(plant: (s: Complex) => Complex, kernel: (w: number) => Complex, sampleTime: number, w: number, terms: number): Complex {
+  const at = (k: number): Complex => {
+    const v = w + k * 2 * Math.PI / sampleTime
+    return times(kernel(v), plant([0, v]))
+  }
+  let sum: Complex = [0, 0]
+  for (let k = terms; k > 0; k--) sum = plus(sum, plus(at(k), at(-k)))
+  return plus(sum, at(0))
+}
+
+const zeroOrderKernel = (T: number) => (v: number): Complex => over(minus([1, 0], exponential([0, -v * T])), [0, v * T])
+const edgesKernel = (...instants: number[]) => (v: number): Complex =>
+  instants.reduce<Complex>((sum, t) => plus(sum, times([1 / instants.length, 0], exponential([0, -v * t]))), [0, 0])
+const late = (kernel: (v: number) => Complex, delay: number) => (v: number): Complex => times(kernel(v), exponential([0, -v * delay]))
+
+function expectClose(found: Complex, expected: Complex, tolerance: number) {
+  expect(size(minus(found, expected)) / size(expected)).toBeLessThan(tolerance)
+}
+
+describe('the discrete equivalent against the aliasing sum', () => {
+  // relative degree 5: the tail falls with k^-5 and faster
+  const text = '3*(s+2)/((s+1)^2*(s^2+0.4*s+25)*(s+30)^2)'
+  const plant = (s: Complex) => over(
+    times([3, 0], plus(s, [2, 0])),
+    times(times(times(plus(s, [1, 0]), plus(s, [1, 0])), plus(times(s, s), plus(times([0.4, 0], s), [25, 0]))), times(plus(s, [30, 0]), plus(s, [30, 0]))))
+  const T = 0.15
+  const cases: [string, number, HoldGain, (v: number) => Complex][] = [
+    ['zero order', 0, { kind: 'hold', hold: 'zeroOrder', sampleTime: T }, zeroOrderKernel(T)],
+    ['zero order, 0.37 of a sample late', 0.37 * T, { kind: 'hold', hold: 'zeroOrder', sampleTime: T }, late(zeroOrderKernel(T), 0.37 * T)],
+    ['zero order, 2.9 samples late', 2.9 * T, { kind: 'hold', hold: 'zeroOrder', sampleTime: T }, late(zeroOrderKernel(T), 2.9 * T)],
+    ['one update a period at D = 0.3', 0, { kind: 'hold', hold: 'pwmSingleUpdate', sampleTime: T, duty: 0.3 }, edgesKernel(0.35 * T, 0.65 * T)],
+    ['one update an edge at D = 0.2, 1.4 samples late', 1.4 * T, { kind: 'hold', hold: 'pwmDoubleUpdate', sampleTime: T, duty: 0.2 }, late(edgesKernel(0.2 * T, 0.8 * T), 1.4 * T)],
+  ]
+  for (const [name, delay, hold, kernel] of cases) {
+    it(`${name}: the same at every frequency up to half the sampling frequency, through the resonance too`, () => {
+      const found = equivalentAt(delay === 0 ? text : `${text}*exp(-${delay}*s)`, hold)
+      for (const w of [0.01, 0.5, 3, 5, 9, 15, 20.9]) expectClose(found(w), aliasingSum(plant, kernel, T, w, 4000), 2e-12)
+    })
+  }
+
+  it('slow sampling, the mode at twelve times half the sampling frequency', () => {
+    const found = equivalentAt(text, { kind: 'hold', hold: 'zeroOrder', sampleTime: 7.5 })
+    for (const w of [0.01, 0.1, 0.3, 0.41]) expectClose(found(w), aliasingSum(plant, zeroOrderKernel(7.5), 7.5, w, 20_000), 2e-12)
+  })
+})
+
+/** Zero-order equivalent of 1/(s^2 + 2 zeta w s + w^2) at z by its own two poles, in doubles. */
+function modeAt(z: Complex, w0: number, zeta: number, T: number): Complex {
+  const pole: Complex = [-zeta * w0, w0 * Math.sqrt((1 - zeta) * (1 + zeta))]
+  const share = (p: Complex) => over(over([1, 0], times(p, [0, 2 * p[1]])), minus(z, exponential([p[0] * T, p[1] * T])))
+  return plus([1 / w0 / w0, 0], times(minus(z, [1, 0]), plus(share(pole), share([pole[0], -pole[1]]))))
+}
+
+describe('60 states: two integrators and 29 modes damped by 0.2 % of critical', () => {
+  const zeta = 0.002
+  const modes = Array.from({ length: 29 }, (_, k) => 100 ** (k / 28))
+  const text = `1/s^2+${modes.map(w => `1/(s^2+${2 * zeta * w}*s+${w * w})`).join('+')}`
+
+  for (const T of [0.01, 0.2]) {
+    it(`sampled every ${T} s: the sum of the modes' own equivalents, at and between the resonances`, () => {
+      const found = equivalentAt(text, { kind: 'hold', hold: 'zeroOrder', sampleTime: T })
+      const places = [0.1, 1.7, 12, ...modes.filter(w => w < 0.99 * Math.PI / T), ...modes.map(w => 1.003 * w).filter(w => w < 0.99 * Math.PI / T)]
+      for (const w of places) {
+        const z = exponential([0, w * T])
+        const rigid = over(times([T * T / 2, 0], plus(z, [1, 0])), times(minus(z, [1, 0]), minus(z, [1, 0])))
+        const sum = modes.reduce((total, w0) => plus(total, modeAt(z, w0, zeta, T)), rigid)
+        expectClose(found(w), sum, 2e-10)
+      }
+    })
+  }
+
+  it('sampled at 10 kHz, where all poles lie within 0.01 of z = 1: the continuous response times hold, aliases being below 1e-9', () => {
+    const T = 1e-4
+    const found = equivalentAt(text, { kind: 'hold', hold: 'zeroOrder', sampleTime: T })
+    for (const w of [0.1, 1, 7.3, 99.9]) {
+      const s: Complex = [0, w]
+      const plant = modes.reduce<Complex>((sum, w0) => plus(sum, over([1, 0], [(w0 - w) * (w0 + w), 2 * zeta * w0 * w])), over([1, 0], times(s, s)))
+      expectClose(found(w), times(zeroOrderKernel(T)(w), plant), 1e-8)
+    }
+  })
+
+  it('the two integrators lie exactly on z = 1', () => {
+    const { poles } = rationalPart(discretise(exactOf(text), { kind: 'hold', hold: 'zeroOrder', sampleTime: 1e-3 }).loop, 1e-3)
+    expect(Array.from(poles.re).filter((re, k) => re === 1 && poles.im[k] === 0 && poles.onBoundary[k] === 1)).toHaveLength(2)
+  })
+})
+
+describe('responses integrated step by step', () => {
+  /** The response at the sampling instants to one pulse of a sample, `delay` late, by Taylor steps of y''' = u - 3 y'' - 3 y' - y, each far below a sample and none across an edge. */
+  function pulseSamples(T: number, delay: number, count: number): number[] {
+    let [y, v, a] = [0, 0, 0]
+    const parts = 400
+    const samples = [0]
+    const advance = (from: number, to: number) => {
+      const edges = [from, ...[delay, delay + T].filter(t => t > from + 1e-14 && t < to - 1e-14), to]
+      for (let e = 0; e + 1 < edges.length; e++) {
+        const [start, end] = [edges[e] as number, edges[e + 1] as number]
+        const u = 0.5 * (start + end) > delay && 0.5 * (start + end) < delay + T ? 1 : 0
+        const h = (end - start) / parts
+        for (let k = 0; k < parts; k++) {
+          // derivatives of y from the third on
+          const d = [y, v, a]
+          for (let n = 3; n < 9; n++) d.push((n === 3 ? u : 0) - 3 * (d[n - 1] as number) - 3 * (d[n - 2] as number) - (d[n - 3] as number))
+          const series = (first: number) => {
+            let [sum, factor] = [0, 1]
+            for (let n = first; n < d.length; n++) {
+              sum += (d[n] as number) * factor
+              factor *= h / (n - first + 1)
+            }
+            return sum
+          }
+          ;[y, v, a] = [series(0), series(1), series(2)]
+        }
+      }
+    }
+    for (let k = 0; k < count; k++) {
+      advance(k * T, (k + 1) * T)
+      samples.push(y)
+    }
+    return samples
+  }
+
+  for (const lag of [0, 0.4, 1.7]) {
+    it(`1/(s+1)^3, ${lag} samples late: long division of H(z) gives the samples of the response to one pulse`, () => {
+      const T = 0.5
+      const plant = lag === 0 ? '1/(s+1)^3' : `exp(-${lag * T}*s)/(s+1)^3`
+      const { gain, zeros, poles } = rationalPart(discretise(exactOf(plant), { kind: 'hold', hold: 'zeroOrder', sampleTime: T }).loop, T)
+      const expand = (roots: Float64Array) => Array.from(roots).reduce((list, root) => [...list, 0].map((value, k) => value - root * (k > 0 ? list[k - 1] as number : 0)), [1])
+      const bottom = expand(poles.re)
+      const top = [...new Array<number>(poles.re.length - zeros.re.length).fill(0), ...expand(zeros.re).map(value => gain * value)]
+      const found: number[] = []
+      for (let k = 0; k <= 12; k++) {
+        let value = top[k] ?? 0
+        for (let j = 1; j < bottom.length && j <= k; j++) value -= (bottom[j] as number) * (found[k - j] as number)
+        found.push(value)
+      }
+      pulseSamples(T, lag * T, 12).forEach((sample, k) => expect(Math.abs((found[k] as number) - sample)).toBeLessThan(2e-13))
+    })
+  }
+})
