@@ -1,6 +1,7 @@
 import type { LoopStructure, StructureNote } from '../../types/analysis'
 import { AnalysisInputError } from '../AnalysisInputError'
 import type { ExactLoop } from '../expressions/ExactLoop'
+import { FactorProduct } from '../expressions/FactorProduct'
 import type { LeafSource } from './BlockScope'
 import { discretise } from '../sampling/discretise'
 import { exactAlgebra } from './exactAlgebra'
@@ -34,14 +35,16 @@ export function exactLeafSource(): ExactLeafSource {
       const key = `${name}:${keyOfLoop(continuous)}`
       const known = equivalents.get(key)
       if (known) return known
-      const { loop, accuracy, averaged } = discretise(continuous, gain)
+      const { loop: equivalent, accuracy, averaged } = discretise(continuous, gain)
+      const loop = workedOut(equivalent)
       accuracies.push(accuracy)
       if (averaged !== null && !notes.some(note => note.block === name && note.code === 'averaged hold')) notes.push({ block: name, code: 'averaged hold', message: averaged })
       equivalents.set(key, loop)
       return loop
     }),
     rational: (block, gain, channel) => {
-      const loop = exactLeaf(gain, channel)
+      const leaf = exactLeaf(gain, channel)
+      const loop = leaf && (gain.kind === 'modal' || gain.kind === 'stateSpace') ? workedOut(leaf) : leaf
       if (loop) used.push({ block, loop, sampled: 'sampleTime' in gain && gain.sampleTime !== undefined })
       return loop
     },
@@ -56,6 +59,11 @@ export function exactLeafSource(): ExactLeafSource {
       ? undefined
       : { relative: accuracies.reduce((sum, { relative }) => sum + relative, 0), basis: [...new Set(accuracies.map(({ basis }) => basis))].join('; ') },
   }
+}
+
+/** The loop gain with its polynomials as worked out, not typed. */
+function workedOut(loop: ExactLoop): ExactLoop {
+  return { ...loop, numerator: FactorProduct.asPrecise(loop.numerator), denominator: FactorProduct.asPrecise(loop.denominator) }
 }
 
 /** A loop gain without sums, written out. */

@@ -7,6 +7,11 @@ export interface PolynomialFactor {
   power: number
   /** its roots where they, and not the coefficients, were given: they are taken as exact */
   roots?: readonly ComplexPair[]
+  /**
+   * Its coefficients were worked out and not typed: they know more of its roots than doubles would. Then a root is on the stability boundary only
+   * where it lies there, not where coefficients rounded to doubles could not tell (`snapToBoundary`).
+   */
+  precise?: true
 }
 
 /** Polynomial factors by their coefficients written out. */

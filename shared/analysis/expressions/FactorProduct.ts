@@ -7,7 +7,7 @@ export const FactorProduct = {
   empty: new Map<string, PolynomialFactor>() as FactorMap,
 
   /** A polynomial (not zero) as scale times a product: the power of the variable taken out, the rest primitive. */
-  of(coefficients: bigint[]): { scale: Rational, factors: FactorMap } {
+  of(coefficients: bigint[], precise = false): { scale: Rational, factors: FactorMap } {
     let atZero = 0
     while (coefficients[atZero] === 0n) atZero++
     const rest = coefficients.slice(atZero)
@@ -15,8 +15,18 @@ export const FactorProduct = {
     if (atZero > 0) factors.set('0,1', { coefficients: [0n, 1n], power: atZero })
     if (rest.length === 1) return { scale: Rational.of(rest[0] as bigint, 1n), factors }
     const primitive = primitivePart(rest)
-    factors.set(primitive.join(), { coefficients: primitive, power: 1 })
+    factors.set(primitive.join(), { coefficients: primitive, power: 1, ...precise && { precise } })
     return { scale: Rational.of(rest[rest.length - 1] as bigint, primitive[primitive.length - 1] as bigint), factors }
+  },
+
+  /** True where one of the factors was worked out and not typed. */
+  holdsPrecise(a: FactorMap): boolean {
+    return Array.from(a.values()).some(factor => factor.precise)
+  },
+
+  /** The same factors, as worked out and not typed. */
+  asPrecise(a: FactorMap): FactorMap {
+    return new Map(Array.from(a, ([key, factor]) => [key, { ...factor, precise: true }]))
   },
 
   times(a: FactorMap, b: FactorMap): FactorMap {

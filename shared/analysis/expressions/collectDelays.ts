@@ -42,8 +42,8 @@ function sameDelay(a: Rational, b: Rational): boolean {
 /** Sum of two polynomials of the same dead time; null where they cancel. */
 function addTerms(a: DelayedPolynomial, b: DelayedPolynomial): DelayedPolynomial | null {
   const shared = FactorProduct.common(a.factors, b.factors)
-  const left = expand(FactorProduct.without(a.factors, shared))
-  const right = expand(FactorProduct.without(b.factors, shared))
+  const [first, second] = [FactorProduct.without(a.factors, shared), FactorProduct.without(b.factors, shared)]
+  const [left, right] = [expand(first), expand(second)]
   // over one denominator: the sum's coefficients stay integers
   const leftScale = a.scale.numerator * b.scale.denominator
   const rightScale = b.scale.numerator * a.scale.denominator
@@ -54,7 +54,7 @@ function addTerms(a: DelayedPolynomial, b: DelayedPolynomial): DelayedPolynomial
   if (coefficients.some(coefficient => bitLength(coefficient) > expressionLimits.bits)) {
     throw new RangeError('its exact coefficients have too many digits')
   }
-  const { scale, factors } = FactorProduct.of(coefficients)
+  const { scale, factors } = FactorProduct.of(coefficients, [first, second].some(FactorProduct.holdsPrecise))
   return {
     scale: scale.over(Rational.of(a.scale.denominator * b.scale.denominator, 1n)),
     factors: FactorProduct.times(shared, factors),

@@ -18,12 +18,12 @@ export function generalLoopFromExact(exact: ExactLoop, position: number): Genera
   const polynomials: GeneralLoop['polynomials'] = []
   let gain = Rational.one
   const toTerm = (term: DelayedPolynomial, reference: Rational): GeneralTerm => {
-    const factors = Array.from(term.factors, ([key, { coefficients, power, roots }]) => {
+    const factors = Array.from(term.factors, ([key, { coefficients, power, roots, precise }]) => {
       let polynomial = numbers.get(key)
       if (polynomial === undefined) {
         polynomial = polynomials.length
         numbers.set(key, polynomial)
-        polynomials.push(factorsFromPolynomials([{ polynomial: { coefficients, exponent: 0 }, power: 1, given: roots }], false, 'expression'))
+        polynomials.push(factorsFromPolynomials([{ polynomial: { coefficients, exponent: 0 }, power: 1, given: roots, precise }], false, 'expression'))
       }
       return { polynomial, power }
     })

@@ -18,7 +18,7 @@ export function rationalPart(exact: ExactLoop, sampleTime: number | undefined, e
     throw new AnalysisInputError('The gain of the expression is beyond what doubles can hold.', 'expression', 0)
   }
   const roots = (factors: FactorMap) => factorsFromPolynomials(
-    Array.from(factors.values(), ({ coefficients, power, roots: given }) => ({ polynomial: { coefficients, exponent: 0 }, power, given })), sampled, 'expression')
+    Array.from(factors.values(), ({ coefficients, power, roots: given, precise }) => ({ polynomial: { coefficients, exponent: 0 }, power, given, precise })), sampled, 'expression')
   return {
     gain,
     zeros: roots(numerator),

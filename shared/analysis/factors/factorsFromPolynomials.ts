@@ -12,6 +12,8 @@ export interface PolynomialPower {
   power: number
   /** its roots where they were given and are exact: they are not looked for */
   given?: readonly ComplexPair[] | undefined
+  /** its coefficients were worked out, not typed: of the rules of the boundary only that of nearness applies */
+  precise?: boolean | undefined
 }
 
 /**
@@ -21,7 +23,7 @@ export interface PolynomialPower {
  * @throws AnalysisInputError naming `path` when roots cannot be told apart or leave the range of doubles
  */
 export function factorsFromPolynomials(parts: PolynomialPower[], sampled: boolean, path: string): FactorList {
-  const lists = parts.map(({ polynomial, power, given }) => ({ list: given ? givenFactors(given, sampled) : factorsOf(polynomial, sampled, path), power }))
+  const lists = parts.map(({ polynomial, power, given, precise }) => ({ list: given ? givenFactors(given, sampled) : factorsOf(polynomial, sampled, path, precise === true), power }))
   const total = lists.reduce((sum, { list, power }) => sum + power * list.re.length, 0)
   const result = {
     re: new Float64Array(total),
@@ -46,9 +48,9 @@ function givenFactors(roots: readonly ComplexPair[], sampled: boolean): FactorLi
   return snapToBoundary({ re, im: Float64Array.from(roots, root => root[1]), correction: new Float64Array(re.length) }, sampled, null)
 }
 
-function factorsOf(polynomial: ExactPolynomial, sampled: boolean, path: string): FactorList {
+function factorsOf(polynomial: ExactPolynomial, sampled: boolean, path: string, precise: boolean): FactorList {
   try {
-    return snapToBoundary(polynomialRoots(polynomial, sampled), sampled, ScaledPolynomial.fromExact(polynomial))
+    return snapToBoundary(polynomialRoots(polynomial, sampled), sampled, precise ? null : ScaledPolynomial.fromExact(polynomial))
   }
   catch (error) {
     if (error instanceof RangeError) {
