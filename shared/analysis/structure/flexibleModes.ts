@@ -84,10 +84,12 @@ function modesOfFactors(input: ExpressionInput, block: string, gain: BlockGain, 
     return loop === null || loop.sampleTime !== undefined ? [] : [{ use, loop }]
   })
   const found: { re: number, im: number, atOriginOfZ: boolean }[] = []
-  for (const { loop: { poles } } of channels) {
+  for (const { loop: { zeros, poles } } of channels) {
+    // A mode that a zero of its channel cancels has no part in it.
+    const acts = (pole: { re: number, im: number }) => zeros.re.every((re, j) => re !== pole.re || zeros.im[j] !== pole.im)
     for (let k = 0; k < poles.re.length; k++) {
       const pole = { re: poles.re[k]!, im: poles.im[k]!, atOriginOfZ: false }
-      if (!(pole.im > 0) || !(-pole.re < FLEXIBLE * Math.hypot(pole.re, pole.im)) || found.some(other => isSamePole(other, pole))) continue
+      if (!(pole.im > 0) || !(-pole.re < FLEXIBLE * Math.hypot(pole.re, pole.im)) || !acts(pole) || found.some(other => isSamePole(other, pole))) continue
       const ofInner = known.some(mode => inner.has(mode.block) && isSamePole(planeOf(mode), pole))
       if (!ofInner) found.push(pole)
     }

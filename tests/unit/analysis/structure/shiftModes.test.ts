@@ -177,6 +177,11 @@ describe('which modes are moved', () => {
     expect(modes.map(({ mode }) => mode)).toEqual(['bending'])
   })
 
+  it('a mode that a zero of its own block cancels is none', () => {
+    const G = expression('(s^2+0.02*s+1)/((s^2+0.02*s+1)*s*(s+1))')
+    expect(shiftModes({ expression: 'C*G', blocks: { C, G } }, roles)).toMatchObject({ modes: [], notes: [] })
+  })
+
   it('a mode without a name is counted', () => {
     expect(shiftModes({ expression: 'C*G', blocks: { C, G: table([['', 9, 0.01, 0.1], [' ', 10, 0.01, 0.1]]) } }, roles).modes.map(({ mode }) => mode)).toEqual(['mode 1', 'mode 2'])
   })
