@@ -1,0 +1,76 @@
+import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
+import { parseExpression } from '#shared/analysis/expressions/parseExpression'
+import { AppError } from '#shared/errors/AppError'
+import { namesInExpression } from '#shared/sources/namesInExpression'
+import type { Block, BlockDefinition } from '#shared/types/block'
+import type { System } from '#shared/types/system'
+import { ConditionRow } from '../../database/models/ConditionRow'
+import { ParameterRow } from '../../database/models/ParameterRow'
+import { resolveBlockGain } from './resolveBlockGain'
+import { findCircle } from './findCircle'
+
+export type DraftGains = Pick<Block, 'name' | 'definition' | 'byCondition'>
+
+/**
+ * Refuses a block of which a gain cannot be read by itself: a wrong number in a file or section, an expression that does not parse or names what nobody knows, a
+ * block that needs itself. Told at `definition.<path>` or `byCondition.<conditionId>.<path>`, with the place in an expression as `details.position`.
+ *
+ * @param others the other blocks of the system
+ */
+export async function assertGains(draft: DraftGains, others: readonly Block[], system: Pick<System, 'id' | 'frequencyUnit'>): Promise<void> {
+  const [conditions, parameters] = await Promise.all([
+    ConditionRow.findAll({ where: { systemId: system.id }, attributes: ['id', 'code'] }),
+    ParameterRow.findAll({ where: { systemId: system.id }, attributes: ['name'] }),
+  ])
+  const known = new Map(conditions.map(({ id, code }) => [id, code]))
+  for (const conditionId of Object.keys(draft.byCondition)) {
+    if (!known.has(Number(conditionId))) throw new AppError('invalidInput', 'There is no such operating condition in this system.', { path: `byCondition.${conditionId}` })
+  }
+  const parameterNames = parameters.map(parameter => parameter.name)
+  const blockNames = [...others.map(block => block.name), draft.name]
+  for (const [path, definition] of definitionsOf(draft)) {
+    await told(path, async () => {
+      await resolveBlockGain(definition, system)
+      if (definition.kind !== 'expression') return
+      parseExpression(definition.expression, { variable: definition.sampleTime === undefined ? 's' : 'z', parameterNames: [...parameterNames, ...blockNames] })
+    })
+  }
+  assertNoCircle(draft, others)
+}
+
+const definitionsOf = ({ definition, byCondition }: DraftGains): [string, BlockDefinition][] => [
+  ...(definition === null ? [] : [['definition', definition] as [string, BlockDefinition]]),
+  ...Object.entries(byCondition).map(([id, own]): [string, BlockDefinition] => [`byCondition.${id}`, own]),
+]
+
+function assertNoCircle(draft: DraftGains, others: readonly Block[]): void {
+  // Wherever no block has a gain of its own, all conditions are alike: they stand for the one without an id.
+  const places = new Set([null, ...[draft, ...others].flatMap(block => Object.keys(block.byCondition).map(Number))])
+  for (const place of places) {
+    const inEffect = (block: DraftGains) => (place === null ? undefined : block.byCondition[place]) ?? block.definition
+    const definitions = new Map([...others, draft].map(block => [block.name, inEffect(block)]))
+    const circle = findCircle(draft.name, definitions)
+    const own = definitions.get(draft.name)
+    if (circle === null || own?.kind !== 'expression') continue
+    const path = place !== null && draft.byCondition[place] ? `byCondition.${place}` : 'definition'
+    const position = namesInExpression(own.expression).find(({ name }) => name === circle[1])?.position ?? 0
+    const message = circle.length === 2
+      ? `The block ${draft.name} names itself.`
+      : `These blocks name one another in a circle: ${circle.join(', ')}. Write one of them without the others; a feedback is written as G/(1 + G*H).`
+    throw new AppError('invalidInput', message, { path: `${path}.expression`, details: { position } })
+  }
+}
+
+/** Runs a check of one definition and tells its refusal at the definition's place in the request. */
+async function told(path: string, check: () => Promise<void>): Promise<void> {
+  try {
+    await check()
+  }
+  catch (error) {
+    if (error instanceof AnalysisInputError) {
+      throw new AppError('invalidInput', error.message, { path: `${path}.${error.path}`, ...(error.position !== undefined && { details: { position: error.position } }), cause: error })
+    }
+    if (error instanceof AppError) throw new AppError(error.code, error.message, { path: `${path}.${error.path ?? ''}`, details: error.details, cause: error })
+    throw error
+  }
+}
