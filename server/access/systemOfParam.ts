@@ -1,4 +1,5 @@
 import type { ModelStatic } from 'sequelize'
+import { BlockRow } from '../database/models/BlockRow'
 import { ConditionRow } from '../database/models/ConditionRow'
 import { JobRow } from '../database/models/JobRow'
 import { LoopRow } from '../database/models/LoopRow'
@@ -11,7 +12,7 @@ import { UploadRow } from '../database/models/UploadRow'
 /** `deleted`: the row itself may be a deleted one (to restore it); what it belongs to may not. */
 export type SystemFinder = (id: number, deleted: boolean) => Promise<number | null>
 
-const rowsOf = <Row extends ModelStatic<SystemRow | LoopRow | ConditionRow | SourceRow | ReportRow>>(model: Row, deleted: boolean): Row => deleted ? model.unscoped() as Row : model
+const rowsOf = <Row extends ModelStatic<SystemRow | LoopRow | ConditionRow | BlockRow | SourceRow | ReportRow>>(model: Row, deleted: boolean): Row => deleted ? model.unscoped() as Row : model
 
 const findSystem: SystemFinder = async (id, deleted) => (await rowsOf(SystemRow, deleted).findByPk(id, { attributes: ['id'] }))?.id ?? null
 
@@ -21,6 +22,7 @@ async function liveSystemOf(row: { systemId: number } | null): Promise<number | 
 
 const findOfLoop: SystemFinder = async (id, deleted) => liveSystemOf(await rowsOf(LoopRow, deleted).findByPk(id, { attributes: ['systemId'] }))
 const findOfCondition: SystemFinder = async (id, deleted) => liveSystemOf(await rowsOf(ConditionRow, deleted).findByPk(id, { attributes: ['systemId'] }))
+const findOfBlock: SystemFinder = async (id, deleted) => liveSystemOf(await rowsOf(BlockRow, deleted).findByPk(id, { attributes: ['systemId'] }))
 const findOfReport: SystemFinder = async (id, deleted) => liveSystemOf(await rowsOf(ReportRow, deleted).findByPk(id, { attributes: ['systemId'] }))
 
 const findOfSource: SystemFinder = async (id, deleted) => {
@@ -47,6 +49,7 @@ export const systemOfParam: Record<string, SystemFinder> = {
   systemId: findSystem,
   loopId: findOfLoop,
   conditionId: findOfCondition,
+  blockId: findOfBlock,
   sourceId: findOfSource,
   uploadId: findOfUpload,
   reportId: findOfReport,

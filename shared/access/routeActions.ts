@@ -48,6 +48,10 @@ export const routeActions = {
   'PUT /api/systems/[systemId]/conditions/order': 'change loops, criteria and drafts',
   'GET /api/systems/[systemId]/parameters': 'see loops, data and drafts',
   'PUT /api/systems/[systemId]/parameters': 'change loops, criteria and drafts',
+  'GET /api/systems/[systemId]/blocks': 'see loops, data and drafts',
+  'POST /api/systems/[systemId]/blocks': 'change loops, criteria and drafts',
+  'PUT /api/systems/[systemId]/blocks/order': 'change loops, criteria and drafts',
+  'POST /api/systems/[systemId]/matrices': 'change loops, criteria and drafts',
   'POST /api/systems/[systemId]/uploads': 'change loops, criteria and drafts',
   'GET /api/systems/[systemId]/reports': 'read issued revisions',
   'POST /api/systems/[systemId]/reports': 'change loops, criteria and drafts',
@@ -63,6 +67,10 @@ export const routeActions = {
   'DELETE /api/conditions/[conditionId]': 'change loops, criteria and drafts',
   'POST /api/conditions/[conditionId]/restore': 'change loops, criteria and drafts',
   'POST /api/conditions/[conditionId]/copy': 'change loops, criteria and drafts',
+
+  'PATCH /api/blocks/[blockId]': 'change loops, criteria and drafts',
+  'DELETE /api/blocks/[blockId]': 'change loops, criteria and drafts',
+  'POST /api/blocks/[blockId]/restore': 'change loops, criteria and drafts',
 
   'GET /api/sources/[sourceId]': 'see loops, data and drafts',
   'PUT /api/sources/[sourceId]': 'change loops, criteria and drafts',

@@ -23,6 +23,8 @@ export const limits = {
   channels: 50,
   sections: 100,
   modes: 200,
+  /** bytes of a request that stores a block */
+  blockBytes: 10_000_000,
   /** bytes of one uploaded file */
   uploadBytes: 20 * 1024 * 1024,
   /** bytes of the manifest of a system */

@@ -1,4 +1,4 @@
-import { namesInExpression } from './namesInExpression'
+import { namesInExpression } from '../analysis/expressions/namesInExpression'
 
 /** What is known of a block here: the expression of those that are one. */
 type KnownBlock = { kind: string, expression?: string } | null | undefined

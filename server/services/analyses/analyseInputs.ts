@@ -4,5 +4,5 @@ import { runEngine } from './runEngine'
 
 export type InputResult = LoopAnalysis | AnalysisFailure
 
-/** What the engine says of each input, in their order. */
-export const analyseInputs = (inputs: readonly LoopInput[], context: OpenContext): Promise<InputResult[]> => runEngine('analysis', inputs, context)
+/** What the engine says of each input, in their order. `keep`: whether new answers are stored. */
+export const analyseInputs = (inputs: readonly LoopInput[], context: OpenContext, options: { keep?: boolean } = {}): Promise<InputResult[]> => runEngine('analysis', inputs, context, options)

@@ -15,8 +15,11 @@ const running = new Map<string, Promise<unknown>>()
 const hashOf = (task: keyof EngineAnswers, question: unknown) =>
   createHash('sha256').update(canonicalJson(task === 'analysis' ? question : { task, question })).digest('hex')
 
-/** What the engine answers to each question, in their order. Known answers come from the database; new ones are computed and kept, failures are not. */
-export async function runEngine<Task extends keyof EngineAnswers>(task: Task, questions: readonly unknown[], context: OpenContext): Promise<(EngineAnswers[Task] | AnalysisFailure)[]> {
+/**
+ * What the engine answers to each question, in their order. Known answers come from the database; new ones are computed and, unless `keep` says
+ * otherwise, kept; failures are not.
+ */
+export async function runEngine<Task extends keyof EngineAnswers>(task: Task, questions: readonly unknown[], context: OpenContext, { keep = true }: { keep?: boolean } = {}): Promise<(EngineAnswers[Task] | AnalysisFailure)[]> {
   type Answer = EngineAnswers[Task] | AnalysisFailure
   const hashes = questions.map(question => hashOf(task, question))
   const known = await knownAnswers(hashes)
@@ -29,7 +32,7 @@ export async function runEngine<Task extends keyof EngineAnswers>(task: Task, qu
     if (!('error' in answer)) fresh.set(hash, answer)
     return answer
   }))
-  if (fresh.size > 0) {
+  if (keep && fresh.size > 0) {
     const rows = [...fresh].map(([inputHash, result]) => ({ inputHash, engineVersion: ENGINE_VERSION, result, createdAt: nowOf(context) }))
     await writeTransaction(() => AnalysisRow.bulkCreate(rows, { ignoreDuplicates: true }))
   }

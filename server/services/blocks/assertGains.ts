@@ -1,7 +1,8 @@
 import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
 import { parseExpression } from '#shared/analysis/expressions/parseExpression'
+import { readBlockGain } from '#shared/analysis/input/readBlockGain'
 import { AppError } from '#shared/errors/AppError'
-import { namesInExpression } from '#shared/sources/namesInExpression'
+import { namesInExpression } from '#shared/analysis/expressions/namesInExpression'
 import type { Block, BlockDefinition } from '#shared/types/block'
 import type { System } from '#shared/types/system'
 import { ConditionRow } from '../../database/models/ConditionRow'
@@ -30,9 +31,9 @@ export async function assertGains(draft: DraftGains, others: readonly Block[], s
   const blockNames = [...others.map(block => block.name), draft.name]
   for (const [path, definition] of definitionsOf(draft)) {
     await told(path, async () => {
-      await resolveBlockGain(definition, system)
+      readBlockGain(await resolveBlockGain(definition, system))
       if (definition.kind !== 'expression') return
-      parseExpression(definition.expression, { variable: definition.sampleTime === undefined ? 's' : 'z', parameterNames: [...parameterNames, ...blockNames] })
+      parseExpression(definition.expression, { variable: definition.sampleTime === undefined ? 's' : 'z', parameterNames, blocks: blockNames })
     })
   }
   assertNoCircle(draft, others)

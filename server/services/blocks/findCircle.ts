@@ -1,4 +1,4 @@
-import { namesInExpression } from '#shared/sources/namesInExpression'
+import { namesInExpression } from '#shared/analysis/expressions/namesInExpression'
 import type { BlockDefinition } from '#shared/types/block'
 
 /** The way by which a block comes to need itself, its name first and last; null where it does not. */

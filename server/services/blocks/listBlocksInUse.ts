@@ -1,4 +1,4 @@
-import { namesInExpression } from '#shared/sources/namesInExpression'
+import { namesInExpression } from '#shared/analysis/expressions/namesInExpression'
 import { namesNeeded } from '#shared/sources/namesNeeded'
 import type { Block, BlockInUse } from '#shared/types/block'
 import { SourceRow } from '../../database/models/SourceRow'

@@ -1,5 +1,5 @@
 import { AppError } from '#shared/errors/AppError'
-import { namesInExpression } from '#shared/sources/namesInExpression'
+import { namesInExpression } from '#shared/analysis/expressions/namesInExpression'
 import type { BlockDefinition } from '#shared/types/block'
 import { ConditionRow } from '../../database/models/ConditionRow'
 import { LoopRow } from '../../database/models/LoopRow'

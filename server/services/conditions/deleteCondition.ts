@@ -3,7 +3,7 @@ import { writeTransaction } from '../../database/database'
 import { nowOf, type ServiceContext } from '../context'
 import { findCondition } from './findCondition'
 
-/** Takes an operating condition out of sight until it is restored; its sources stay with it. */
+/** Takes an operating condition out of sight until it is restored; its sources and gains of blocks stay with it. */
 export function deleteCondition(conditionId: number, context: ServiceContext): Promise<{ id: number }> {
   return writeTransaction(async () => {
     const condition = await findCondition(conditionId)

@@ -1,10 +1,13 @@
 import { AppError } from '#shared/errors/AppError'
+import type { Block, BlockGain } from '#shared/types/block'
 import type { Criterion } from '#shared/types/criterion'
 import type { Source } from '#shared/types/source'
 import type { BoardCell, Loop, OperatingCondition, Parameter, System } from '#shared/types/system'
 import { SourceRow } from '../../database/models/SourceRow'
 import { presentSource } from '../../presenters/presentSource'
 import { presentSystem } from '../../presenters/presentSystem'
+import { BlockGains } from '../blocks/BlockGains'
+import { listBlocks } from '../blocks/listBlocks'
 import { listConditions } from '../conditions/listConditions'
 import type { OpenContext } from '../context'
 import { listCriteria } from '../criteria/listCriteria'
@@ -21,6 +24,9 @@ export interface LoopContent {
   system: System
   conditions: OperatingCondition[]
   parameters: Parameter[]
+  blocks: Block[]
+  /** by operating condition id, then by name: the gain of every block that has one there, as the engine takes it */
+  blockGains: Record<number, Record<string, BlockGain>>
   criteria: Criterion[]
   /** all of them, also those set aside */
   sources: Source[]
@@ -31,14 +37,16 @@ export interface LoopContent {
 /** A loop with all that its page shows. */
 export async function readLoop(loopId: number, context: OpenContext): Promise<LoopContent> {
   const { systemId } = await findLoop(loopId)
-  const [systemRow, loops, conditions, parameters, criteria] = await Promise.all([
-    findSystem(systemId), listLoops(systemId), listConditions(systemId), listParameters(systemId), listCriteria(systemId),
+  const [systemRow, loops, conditions, parameters, blocks, criteria] = await Promise.all([
+    findSystem(systemId), listLoops(systemId), listConditions(systemId), listParameters(systemId), listBlocks(systemId), listCriteria(systemId),
   ])
   const loop = loops.find(({ id }) => id === loopId)
   if (!loop) throw new AppError('notFound', 'There is no such loop.')
   const system = presentSystem(systemRow)
   const conditionIds = conditions.map(condition => condition.id)
   const sources = await SourceRow.findAll({ where: { loopId, conditionId: conditionIds }, order: ['id'] })
+  const gains = new BlockGains(blocks, system)
+  const blockGains = Object.fromEntries(await Promise.all(conditions.map(async condition => [condition.id, await gains.allIn(condition)] as const)))
   const cells = await judgeCells(system, [loopId], conditionIds, criteria, context)
-  return { loop, loops: loops.map(({ id, code, name }) => ({ id, code, name })), system, conditions, parameters, criteria, sources: sources.map(presentSource), cells }
+  return { loop, loops: loops.map(({ id, code, name }) => ({ id, code, name })), system, conditions, parameters, blocks, blockGains, criteria, sources: sources.map(presentSource), cells }
 }

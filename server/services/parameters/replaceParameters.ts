@@ -3,6 +3,7 @@ import type { ParameterEntry } from '#shared/schemas/parameter'
 import type { Parameter } from '#shared/types/system'
 import { recordAudit } from '../../audit/recordAudit'
 import { writeTransaction } from '../../database/database'
+import { BlockRow } from '../../database/models/BlockRow'
 import { ConditionRow } from '../../database/models/ConditionRow'
 import { ParameterRow } from '../../database/models/ParameterRow'
 import { ParameterValue } from '../../database/models/ParameterValue'
@@ -20,6 +21,7 @@ export function replaceParameters(systemId: number, entries: ParameterEntry[], c
     const before = await listParameters(systemId)
     const conditionIds = (await ConditionRow.findAll({ where: { systemId }, attributes: ['id'] })).map(condition => condition.id)
     assertConditionsKnown(entries, conditionIds)
+    await assertNoBlockNamed(systemId, entries)
     const added = madeFrom && before.find(parameter => !madeFrom.includes(parameter.id))
     if (added) throw new AppError('conflict', `Somebody else has added the parameter ${added.name} in the meantime.`, { path: 'madeFrom', details: { current: before } })
     const kept = new Set(entries.flatMap(entry => entry.id ?? []))
@@ -40,6 +42,13 @@ function assertConditionsKnown(entries: ParameterEntry[], conditionIds: number[]
     const stray = Object.keys(values).find(id => !conditionIds.includes(Number(id)))
     if (stray !== undefined) throw new AppError('invalidInput', `The parameter ${name} has a value in a condition that is not of this system.`, { path: `parameters[${index}].values.${stray}` })
   }
+}
+
+/** An expression could not tell a parameter from a block of the same name. */
+async function assertNoBlockNamed(systemId: number, entries: ParameterEntry[]): Promise<void> {
+  const blocks = new Set((await BlockRow.findAll({ where: { systemId }, attributes: ['name'] })).map(block => block.name))
+  const index = entries.findIndex(({ name }) => blocks.has(name))
+  if (index >= 0) throw new AppError('invalidInput', `This system has a block with the name ${entries[index]?.name}.`, { path: `parameters[${index}].name` })
 }
 
 /** Stores one entry without its values; returns the parameter's id. */

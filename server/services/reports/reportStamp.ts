@@ -12,13 +12,13 @@ import { sha256Of } from '../../reports/sha256Of'
  * their time; equal stamps before it and inside the freezing transaction say that nothing changed on the way.
  */
 export async function reportStamp(report: ReportRow): Promise<string> {
-  const [newest, { system, loops, conditions, criteria }, parameters, revisions, brand] = await Promise.all([
+  const [newest, { system, loops, conditions, blocks, criteria }, parameters, revisions, brand] = await Promise.all([
     Reports.findByPk(report.id, { attributes: ['version'] }), readSystem(report.systemId), listParameters(report.systemId),
     RevisionRow.findAll({ where: { reportId: report.id }, attributes: ['id', 'state'], order: [['id', 'ASC']] }), findBrand(),
   ])
   const sources = await listSourcesOfRecord(loops.map(({ id }) => id), conditions.map(({ id }) => id))
   const versions = (rows: readonly { id: number, version: number }[]) => rows.map(({ id, version }) => [id, version])
   return sha256Of(JSON.stringify([
-    newest?.version, system.version, versions(loops), versions(conditions), criteria, parameters, versions(sources), revisions.map(({ id, state }) => [id, state]), brand.version,
+    newest?.version, system.version, versions(loops), versions(conditions), versions(blocks), criteria, parameters, versions(sources), revisions.map(({ id, state }) => [id, state]), brand.version,
   ]))
 }

@@ -1,18 +1,22 @@
-import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
+import { namesInExpression } from '#shared/analysis/expressions/namesInExpression'
 import { parseExpression } from '#shared/analysis/expressions/parseExpression'
 import { readLoopInput } from '#shared/analysis/readLoopInput'
 import { AppError } from '#shared/errors/AppError'
 import { loopInputFromDefinition } from '#shared/sources/loopInputFromDefinition'
-import type { SourceDefinition } from '#shared/types/source'
+import type { ExpressionDefinition, SourceDefinition } from '#shared/types/source'
 import type { SystemRow } from '../../database/models/SystemRow'
+import { BlockRow } from '../../database/models/BlockRow'
 import { ParameterRow } from '../../database/models/ParameterRow'
 import { readPoints } from '../uploads/readPoints'
+import { assertBuildable } from './assertBuildable'
+import { naming } from './naming'
 
 /**
- * Refuses a definition that could not be analysed in any condition: an expression that does not parse or names an unknown parameter, numbers the engine does
- * not take, a file with bad rows (each told by its line). What only a condition lacks, such as a parameter's value, is no reason to refuse.
+ * Refuses a definition that could not be analysed in any condition: an expression that does not parse or names what nobody knows, numbers the engine does
+ * not take, a file with bad rows (each told by its line). An expression over blocks is refused, too, where the gains of these blocks cannot be put together as it
+ * says in one of `conditionIds`. What only a condition lacks, such as a parameter's value or a block's gain, is no reason to refuse.
  */
-export async function assertDefinition(definition: SourceDefinition, system: SystemRow): Promise<void> {
+export async function assertDefinition(definition: SourceDefinition, system: SystemRow, conditionIds: readonly number[] = []): Promise<void> {
   const { frequencyUnit } = system
   if (definition.kind === 'measured') {
     const { points, problems } = await readPoints(system.id, definition.uploadId, definition.mapping)
@@ -20,21 +24,17 @@ export async function assertDefinition(definition: SourceDefinition, system: Sys
     naming(() => readLoopInput(loopInputFromDefinition(definition, { frequencyUnit, parameters: {}, points })))
     return
   }
-  if (definition.kind === 'expression') {
-    const parameterNames = (await ParameterRow.findAll({ where: { systemId: system.id }, attributes: ['name'] })).map(parameter => parameter.name)
-    naming(() => parseExpression(definition.expression, { variable: definition.sampleTime === undefined ? 's' : 'z', parameterNames }))
-  }
-  naming(() => readLoopInput(loopInputFromDefinition(definition, { frequencyUnit, parameters: {} })))
+  if (definition.kind === 'expression') await assertExpression(definition, system, conditionIds)
+  else naming(() => readLoopInput(loopInputFromDefinition(definition, { frequencyUnit, parameters: {} })))
 }
 
-/** Runs a check and tells its refusal at the field of the definition it is about. */
-function naming(check: () => unknown): void {
-  try {
-    check()
-  }
-  catch (error) {
-    if (!(error instanceof AnalysisInputError)) throw error
-    const { message, path, position } = error
-    throw new AppError('invalidInput', message, { path: `definition.${path}`, ...(position !== undefined && { details: { position } }), cause: error })
-  }
+async function assertExpression(definition: ExpressionDefinition, system: SystemRow, conditionIds: readonly number[]): Promise<void> {
+  const { expression, sampleTime } = definition
+  const namesOf = async (model: typeof ParameterRow | typeof BlockRow) => (await (model as typeof ParameterRow).findAll({ where: { systemId: system.id }, attributes: ['name'] })).map(row => row.name)
+  const [parameterNames, blockNames] = [await namesOf(ParameterRow), await namesOf(BlockRow)]
+  // Over blocks the words of faults and the variables are others: only where it may name one.
+  const isOverBlocks = blockNames.length > 0 && namesInExpression(expression).some(({ name }) => !parameterNames.includes(name))
+  naming(() => parseExpression(expression, { variable: sampleTime === undefined ? 's' : 'z', parameterNames, ...(isOverBlocks && { blocks: blockNames }) }))
+  naming(() => readLoopInput(loopInputFromDefinition(definition, { frequencyUnit: system.frequencyUnit, parameters: {} })))
+  if (isOverBlocks) await assertBuildable(definition, system, conditionIds)
 }

@@ -19,7 +19,7 @@ import { setAsideOfRecord } from './setAsideOfRecord'
 export async function createSources(loopId: number, fields: NewSource, context: ServiceContext): Promise<Source[]> {
   const { conditionIds, name, definition } = fields
   const { systemId } = await findLoop(loopId)
-  await assertDefinition(definition, await findSystem(systemId))
+  await assertDefinition(definition, await findSystem(systemId), conditionIds)
   return writeTransaction(async () => {
     await findLoop(loopId)
     const known = new Set((await ConditionRow.findAll({ where: { systemId, id: conditionIds }, attributes: ['id'] })).map(condition => condition.id))

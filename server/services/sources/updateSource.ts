@@ -13,8 +13,9 @@ import { readSource } from './readSource'
 /** Changes a source and analyses it. Throws 'conflict' from an older version, and where the definition is refused. */
 export async function updateSource(sourceId: number, change: SourceChange, context: ServiceContext): Promise<AnalysedSource> {
   const { version, name, definition, setAsideReason } = change
-  const system = await findSystemOfSource(await findSource(sourceId))
-  await assertDefinition(definition, system)
+  const before = await findSource(sourceId)
+  const system = await findSystemOfSource(before)
+  await assertDefinition(definition, system, [before.conditionId])
   await writeTransaction(async () => {
     const source = await findSource(sourceId)
     assertNewest(source, version, presentSource(source))

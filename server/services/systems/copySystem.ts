@@ -11,12 +11,13 @@ import { SourceRow } from '../../database/models/SourceRow'
 import { SystemRow } from '../../database/models/SystemRow'
 import { presentSystem } from '../../presenters/presentSystem'
 import { nowOf, type ServiceContext } from '../context'
+import { copyBlocks } from '../blocks/copyBlocks'
 import { copySources } from '../sources/copySources'
 import { copyUpload } from '../uploads/copyUpload'
 import { findSystem } from './findSystem'
 
 /**
- * Copies a whole system under a new name: loops, conditions, parameters, criteria and sources with their uploads; no reports and
+ * Copies a whole system under a new name: loops, conditions, parameters, blocks, criteria and sources with their uploads; no reports and
  * no members but the one who copies, who becomes its engineer.
  */
 export function copySystem(systemId: number, name: string, context: ServiceContext): Promise<System> {
@@ -30,7 +31,14 @@ export function copySystem(systemId: number, name: string, context: ServiceConte
     const loops = await copyLoops(systemId, copy.id, context)
     const conditions = await copyConditions(systemId, copy.id, context)
     await copyParameters(systemId, copy.id, conditions)
-    await copySourcesOf(loops, conditions, copy.id, context)
+    const uploads: Twins = new Map()
+    const uploadOf = async (uploadId: number): Promise<number> => {
+      const twin = uploads.get(uploadId) ?? await copyUpload(uploadId, copy.id, context)
+      uploads.set(uploadId, twin)
+      return twin
+    }
+    await copyBlocks(systemId, { systemId: copy.id, conditionOf: id => conditions.get(id), uploadOf }, context)
+    await copySourcesOf(loops, conditions, uploadOf, context)
     await recordAudit(context, 'system copied', { systemId: copy.id, subjectId: copy.id, payload: { from: systemId, name } })
     return presentSystem(copy)
   })
@@ -75,11 +83,11 @@ async function copyParameters(systemId: number, copyId: number, conditions: Twin
   }
 }
 
-async function copySourcesOf(loops: Twins, conditions: Twins, copyId: number, context: ServiceContext): Promise<void> {
+async function copySourcesOf(loops: Twins, conditions: Twins, uploadOf: (uploadId: number) => Promise<number>, context: ServiceContext): Promise<void> {
   const where = { loopId: [...loops.keys()], conditionId: [...conditions.keys()] }
   const uploads: Twins = new Map()
   for (const source of await SourceRow.findAll({ where })) {
-    if (source.uploadId !== null && !uploads.has(source.uploadId)) uploads.set(source.uploadId, await copyUpload(source.uploadId, copyId, context))
+    if (source.uploadId !== null && !uploads.has(source.uploadId)) uploads.set(source.uploadId, await uploadOf(source.uploadId))
   }
   await copySources(where, (source) => {
     const loopId = loops.get(source.loopId)
