@@ -2,6 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { routeActions, type RouteKey } from '#shared/access/routeActions'
 import { can, type AccessFacts } from '#shared/access/rules'
 import { storeUpload } from '#server/services/uploads/storeUpload'
+import { buildBlock, typed } from '../factories/buildBlock'
 import { buildSnapshot } from '../factories/buildSnapshot'
 import { contextOf } from '../factories/contextOf'
 import { seedReport } from '../factories/seedReport'
@@ -30,8 +31,9 @@ async function seed() {
   const team = await seedTeam()
   const { system, loop, condition, people } = team
   const report = await seedReport(system.id, [loop.id], [condition.id], buildSnapshot(), people.engineer, people.approver)
+  const block = await buildBlock(system.id, contextOf(people.engineer), 'G', typed('1/s'))
   const upload = await storeUpload(system.id, { name: 'sweep.csv', bytes: Buffer.from('f,re,im\n') }, contextOf(people.engineer))
-  return { ...team, ...report, uploadId: upload.id }
+  return { ...team, ...report, block, uploadId: upload.id }
 }
 
 let server: TestServer & { seeded: Awaited<ReturnType<typeof seed>> }
@@ -45,9 +47,9 @@ afterAll(() => server.stop())
 
 /** The route's address with ids of rows that all belong to the seeded system. */
 function addressOf(key: string): string {
-  const { system, loop, condition, source, people, reportId, revisionId, jobId, uploadId } = server.seeded
+  const { system, loop, condition, source, block, people, reportId, revisionId, jobId, uploadId } = server.seeded
   const params: Record<string, number | string> = {
-    systemId: system.id, loopId: loop.id, conditionId: condition.id, sourceId: source.id, personId: people.outsider.id,
+    systemId: system.id, loopId: loop.id, conditionId: condition.id, sourceId: source.id, blockId: block.id, personId: people.outsider.id,
     reportId, revisionId, otherId: revisionId, jobId, uploadId, kind: 'html',
   }
   return key.replace(/^\w+ /, '').replace(/\[(\w+)\]/g, (_, name: string) => {
