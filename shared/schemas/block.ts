@@ -57,7 +57,7 @@ export const blockDefinitionSchema = z.discriminatedUnion('kind', [
   z.strictObject({
     kind: z.literal('measured'),
     uploadId: idField,
-    mapping: mappingSchema.extend({ quantity: z.literal('loopGain', 'A block is measured from its input to its output: take its response itself.') }),
+    mapping: mappingSchema.refine(mapping => mapping.quantity === 'loopGain', { path: ['quantity'], message: 'A block is measured from its input to its output: take its response itself.' }),
     averages: averagesField,
   }),
   z.strictObject({ kind: z.literal('deadTime'), deadTime: z.number('Must be a number.').nonnegative('Must not be under 0.'), unit: z.enum(['s', 'samples'], 'Must be s or samples.') }),

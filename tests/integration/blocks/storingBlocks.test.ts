@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { limits } from '#shared/schemas/limits'
-import type { Block } from '#shared/types/block'
+import type { Block, BlockDefinition } from '#shared/types/block'
 import type { Loop, OperatingCondition, System } from '#shared/types/system'
 import { BlockGainRow } from '#server/database/models/BlockGainRow'
 import { BlockRow } from '#server/database/models/BlockRow'
@@ -46,7 +46,7 @@ beforeEach(async () => {
 
 const names = async () => (await listBlocks(system.id)).map(block => block.name)
 const upload = async (text: string) => (await storeUpload(system.id, { name: 'plant.csv', bytes: Buffer.from(text) }, context)).id
-const matricesOf = (uploadId: number, set: string | null = null) => ({ kind: 'stateSpace', uploadId, set, states: null, inputs: [], outputs: [] }) as const
+const matricesOf = (uploadId: number, set: string | null = null): BlockDefinition => ({ kind: 'stateSpace', uploadId, set, states: null, inputs: [], outputs: [] })
 const oneState = (name: string, pole: number) => `condition, ${name}\nA\n${pole}\nB\n1\nC\n1\nD\n0\n`
 
 describe('a block that cannot be read by itself', () => {
