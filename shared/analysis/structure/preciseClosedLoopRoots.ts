@@ -14,20 +14,21 @@ const NARROW = 1e-9
  */
 export function preciseClosedLoopRoots(loop: FactoredLoop, samples: number): { re: number, im: number }[] {
   const quick = closedLoopRoots(new ReturnDifferenceNumerator(loop, samples))
-  const upper = quick && upperHalf(quick)
+  const upper = quick && upperHalf(quick, loop.sampleTime !== undefined)
   if (upper) return upper
   const { re, im } = polynomialRoots(exactClosedLoopPolynomial(loop, samples), loop.sampleTime !== undefined)
   return Array.from(re, (x, k) => ({ re: x, im: im[k]! })).filter(root => root.im >= 0)
 }
 
 /** Null where a disc is too wide to tell a real root from a pair. */
-function upperHalf({ re, im, radius }: { re: Float64Array, im: Float64Array, radius: Float64Array }): { re: number, im: number }[] | null {
+function upperHalf({ re, im, radius }: { re: Float64Array, im: Float64Array, radius: Float64Array }, sampled: boolean): { re: number, im: number }[] | null {
   const kept: { re: number, im: number }[] = []
   let above = 0
   let below = 0
   for (let k = 0; k < re.length; k++) {
     const [x, y, reach] = [re[k]!, im[k]!, radius[k]!]
-    if (!(reach <= NARROW * Math.hypot(x, y))) return null
+    // In z what tells frequency and damping is how far a root lies from 1.
+    if (!(reach <= NARROW * Math.min(Math.hypot(x, y), sampled ? Math.hypot(x - 1, y) : Infinity))) return null
     for (let j = 0; j < k; j++) {
       if (Math.hypot(x - re[j]!, y - im[j]!) <= reach + radius[j]!) return null
     }
