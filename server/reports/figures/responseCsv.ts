@@ -1,3 +1,4 @@
+import { measuredInputOf } from '#shared/analysis/blocks/measuredInputOf'
 import type { LoopInput } from '#shared/types/analysis'
 import type { SampledCurve } from '#shared/plots/FigureData'
 import { csvOf } from '../package/csvOf'
@@ -6,8 +7,9 @@ const degreesOf = (re: number, im: number) => Math.atan2(im, re) * 180 / Math.PI
 
 /** A measured response as it was read, or a model's loop gain as it was drawn, with full digits. */
 export function responseCsv(input: LoopInput, curve: SampledCurve, frequencyUnit: string): string {
-  if ('measured' in input) {
-    const { quantity, points } = input.measured
+  const measured = measuredInputOf(input)
+  if (measured) {
+    const { quantity, points } = measured.input.measured
     return csvOf([`frequency, ${frequencyUnit}`, `real part of ${quantity}`, 'imaginary part', 'coherence'], points.map(({ frequency, re, im, coherence }) => [frequency, re, im, coherence ?? null]))
   }
   const rows = Array.from(curve.frequency, (frequency, index): [number, number, number] => [frequency, curve.re[index] ?? Number.NaN, curve.im[index] ?? Number.NaN])

@@ -1,7 +1,7 @@
 import type { LoopInput } from '../../types/analysis'
 import { measuredInputOf } from '../blocks/measuredInputOf'
 
-/** Frequencies (rad/s) at which a measured loop gain, or one over a measured block, has its samples; null for a model. @throws AnalysisInputError */
+/** Frequencies (rad/s) at which a measured loop gain has its samples; null for a model. */
 export function samplesOfInput(input: LoopInput): number[] | null {
   const measured = measuredInputOf(input)
   if (measured === null) return null
