@@ -1,15 +1,10 @@
-import type { DemoSystem } from './DemoSystem'
+import type { DemoBlock, DemoSystem } from './DemoSystem'
 
 /** 50 kHz switching and sampling, one sample of computation: all numbers are made up to be of the size such a converter has. */
 const sampleTime = 2e-5
-const inductance = 180e-6
-const resistance = 0.05
-const capacitance = 470e-6
-const loads = [20, 5, 2]
 
-const currentPole = Math.exp(-resistance * sampleTime / inductance)
-const rounded = (value: number) => Number(value.toPrecision(9))
-const currentLoop = 'kI*(z-0.975)/(z-1) * bL/(z-pL) / z'
+const typed = (name: string, role: DemoBlock['role'], units: [string, string], expression: string, notes: string, sampled = false): DemoBlock =>
+  ({ name, role, unitIn: units[0], unitOut: units[1], notes, gain: { kind: 'expression', expression, ...(sampled && { sampleTime }) } })
 
 /** A digitally controlled 400 V to 48 V converter: an inner current loop and an outer voltage loop, both sampled at 50 kHz, at three loads. */
 export const converter: DemoSystem = {
@@ -27,19 +22,27 @@ export const converter: DemoSystem = {
   parameters: [
     { name: 'kI', unit: 'V/A', notes: 'current controller gain', values: [3.4, 3.4, 3.4] },
     { name: 'kV', unit: 'A/V', notes: 'voltage controller gain', values: [1.2, 1.2, 1.2] },
-    { name: 'pL', unit: '', notes: 'pole of the inductor, sampled with zero-order hold', values: [currentPole, currentPole, Math.exp(-resistance * sampleTime / (0.8 * inductance))].map(rounded) },
-    { name: 'bL', unit: 'A/V', notes: 'gain of the inductor, sampled', values: [(1 - currentPole) / resistance, (1 - currentPole) / resistance, (1 - Math.exp(-resistance * sampleTime / (0.8 * inductance))) / resistance].map(rounded) },
-    { name: 'pC', unit: '', notes: 'pole of the output capacitor with the load, sampled', values: loads.map(load => rounded(Math.exp(-sampleTime / (load * capacitance)))) },
-    { name: 'bC', unit: 'V/A', notes: 'gain of the output capacitor with the load, sampled', values: loads.map(load => rounded((1 - Math.exp(-sampleTime / (load * capacitance))) * load)) },
+    { name: 'Lf', unit: 'H', notes: 'inductance', values: [180e-6, 180e-6, 144e-6] },
+    { name: 'Rf', unit: 'ohm', notes: 'resistance of the inductor and the switches', values: [0.05, 0.05, 0.05] },
+    { name: 'Co', unit: 'F', notes: 'output capacitance', values: [470e-6, 470e-6, 470e-6] },
+    { name: 'Ro', unit: 'ohm', notes: 'load', values: [20, 5, 2] },
+  ],
+  blocks: [
+    typed('CI', 'controller', ['A', 'V'], 'kI*(z-0.975)/(z-1)', 'current controller', true),
+    typed('CV', 'controller', ['V', 'A'], 'kV*(z-0.995)/(z-1)', 'voltage controller', true),
+    { name: 'Tc', role: 'delay', unitIn: 'V', unitOut: 'V', notes: 'computation, one sample', gain: { kind: 'deadTime', deadTime: 1, unit: 'samples' } },
+    { name: 'H', role: 'hold', unitIn: 'V', unitOut: 'V', notes: 'the bridge, updated once a sample', gain: { kind: 'hold', hold: 'zeroOrder', sampleTime } },
+    typed('GL', 'plant', ['V', 'A'], '1/(Lf*s+Rf)', 'inductor'),
+    typed('GC', 'plant', ['A', 'V'], 'Ro/(Ro*Co*s+1)', 'output capacitor with the load'),
   ],
   loops: [
     {
-      code: 'CU', name: 'Inductor current', axis: 'converter', breakPoint: 'duty cycle command', loopStates: { VO: 'open' }, notes: '',
-      model: { name: 'design model', definition: { kind: 'expression', expression: currentLoop, sampleTime } },
+      code: 'CU', name: 'Inductor current', axis: 'converter', breakPoint: 'duty cycle command', breakAt: { block: 'Tc', side: 'input' }, loopStates: { VO: 'open' }, notes: '',
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CI*Tc*H*GL' } },
     },
     {
-      code: 'VO', name: 'Output voltage', axis: 'converter', breakPoint: 'current command', loopStates: { CU: 'closed' }, notes: 'The closed current loop stands in the expression as it is, L/(1 + L).',
-      model: { name: 'design model', definition: { kind: 'expression', expression: `kV*(z-0.995)/(z-1) * (${currentLoop})/(1 + ${currentLoop}) * bC/(z-pC)`, sampleTime } },
+      code: 'VO', name: 'Output voltage', axis: 'converter', breakPoint: 'current command', breakAt: { block: 'CV', side: 'output' }, loopStates: { CU: 'closed' }, notes: 'The closed current loop stands in the expression as it is, L/(1 + L).',
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CV * (CI*Tc*H*GL)/(1 + CI*Tc*H*GL) * (H*GC)' } },
     },
   ],
   report: {

@@ -1,6 +1,5 @@
 import type { DemoSystem } from './DemoSystem'
-import { rootsOfTelescopeRate } from './telescopeRate'
-import { coefficientsOfRollPosition } from './rollPosition'
+import { gangwayBlocks } from './gangwayBlocks'
 
 /**
  * An invented motion-compensated access gangway: four hydraulic axes with a rate loop inside a position loop each.
@@ -41,46 +40,47 @@ export const gangway: DemoSystem = {
     { name: 'wTor', unit: 'rad/s', notes: 'torsion mode of the boom tip', values: [140, 124, 110, 108, 102] },
     { name: 'zTor', unit: '', notes: 'damping of the torsion mode', values: [0.012, 0.011, 0.010, 0.010, 0.011] },
   ],
+  blocks: gangwayBlocks,
   loops: [
     {
-      code: 'SL-R', name: 'Slew rate', axis: 'slew', breakPoint: 'servo valve command of the slew motor', loopStates: { 'SL-P': 'open' }, notes: '',
-      model: { name: 'design model', definition: { kind: 'expression', expression: 'kSlR*(1+s/40)/s / (s^2/whSl^2+2*zh*s/whSl+1) * (s^2/(0.9*wLat)^2+0.04*s/wLat+1)/(s^2/wLat^2+0.03*s/wLat+1) / (s/160+1)^2 * exp(-0.006*s)' } },
+      code: 'SL-R', name: 'Slew rate', axis: 'slew', breakPoint: 'servo valve command of the slew motor', breakAt: { block: 'SlValve', side: 'input' }, loopStates: { 'SL-P': 'open' }, notes: '',
+      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CSlR*SlValve*HydSl*BoomSl*SlGyro*TCtrl*TSl' } },
     },
     {
-      code: 'SL-P', name: 'Slew position', axis: 'slew', breakPoint: 'slew rate command', loopStates: { 'SL-R': 'closed' }, notes: 'The closed rate loop stands in the model as a second-order lag at 0.62 of the hydraulic frequency.',
-      model: { name: 'design model', definition: { kind: 'expression', expression: 'kSlP*(1+0.15/s)/s / (s^2/(0.62*whSl)^2+1.0*s/(0.62*whSl)+1) * (1+0.9*s/wLat)/(s^2/wLat^2+0.03*s/wLat+1) * exp(-0.008*s)' } },
+      code: 'SL-P', name: 'Slew position', axis: 'slew', breakPoint: 'slew rate command', breakAt: { block: 'RateSl', side: 'input' }, loopStates: { 'SL-R': 'closed' }, notes: 'The closed rate loop stands in the model as a second-order lag at 0.62 of the hydraulic frequency.',
+      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CSlP*RateSl*TipSl*Int*TCtrl*TSl*TRef' } },
     },
     {
-      code: 'LU-R', name: 'Luff rate', axis: 'luff', breakPoint: 'servo valve command of the luff cylinders', loopStates: { 'LU-P': 'open' }, notes: '',
-      model: { name: 'design model', definition: { kind: 'expression', expression: 'kLuR*(1+s/60)/s / (s^2/whLu^2+2*zh*s/whLu+1) / (s/200+1) * (s^2/(1.12*wVer)^2+0.04*s/wVer+1)/(s^2/wVer^2+0.03*s/wVer+1) * exp(-0.005*s)' } },
+      code: 'LU-R', name: 'Luff rate', axis: 'luff', breakPoint: 'servo valve command of the luff cylinders', breakAt: { block: 'LuValve', side: 'input' }, loopStates: { 'LU-P': 'open' }, notes: '',
+      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CLuR*LuValve*HydLu*BoomLu*TCtrl*TLu' } },
       sweeps: {
         conditionCodes: ['C1', 'C2', 'C3', 'C4', 'C5'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 0.8, to: 140, pointsPerDecade: 110, fine: [{ around: 'wVer', from: 0.9, to: 1.25, points: 90 }],
         truth: { whLu: 0.985, wVer: 1.012, kLuR: 1.03 }, averages: 64, noise: 0.0006, seed: 4201, amplitude: 'valve command 4 % of full scale, 0 to peak',
       },
     },
     {
-      code: 'LU-P', name: 'Luff position', axis: 'luff', breakPoint: 'luff rate command', loopStates: { 'LU-R': 'closed' }, notes: '',
-      model: { name: 'design model', definition: { kind: 'expression', expression: 'kLuP*(1+0.2/s)/s / (s/20+1) / (s^2/whLu^2+0.7*s/whLu+1) * (1+0.2*s/wVer)/(s^2/wVer^2+0.02*s/wVer+1) * exp(-0.010*s)' } },
+      code: 'LU-P', name: 'Luff position', axis: 'luff', breakPoint: 'luff rate command', breakAt: { block: 'RateLu', side: 'input' }, loopStates: { 'LU-R': 'closed' }, notes: '',
+      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CLuP*RateLu*TipLu*Int*TCtrl*TLu*TRefLR' } },
     },
     {
-      code: 'TE-R', name: 'Telescope rate', axis: 'telescope', breakPoint: 'servo valve command of the telescope winch', loopStates: { 'TE-P': 'open' }, notes: '',
-      model: rootsOfTelescopeRate,
+      code: 'TE-R', name: 'Telescope rate', axis: 'telescope', breakPoint: 'servo valve command of the telescope winch', breakAt: { block: 'TeValve', side: 'input' }, loopStates: { 'TE-P': 'open' }, notes: '',
+      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CTeR*TeValve*HydTe*BoomTe*TCtrl*TTe' } },
       sweeps: {
         conditionCodes: ['C2', 'C3'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 1, to: 220, pointsPerDecade: 120, fine: [{ around: 'wAx', from: 0.9, to: 1.1, points: 80 }],
         truth: { whTe: 0.97, wAx: 0.993 }, averages: 64, noise: 0.0005, seed: 4207, amplitude: 'valve command 5 % of full scale, 0 to peak',
       },
     },
     {
-      code: 'TE-P', name: 'Telescope position', axis: 'telescope', breakPoint: 'telescope rate command', loopStates: { 'TE-R': 'closed' }, notes: 'Two integrators in the compensator: the loop is conditionally stable, the gain may not fall far.',
-      model: { name: 'design model', definition: { kind: 'expression', expression: 'kTeP*(1+1.2/s)^2/s / (s/30+1) / (s^2/whTe^2+0.8*s/whTe+1) * exp(-0.006*s)' } },
+      code: 'TE-P', name: 'Telescope position', axis: 'telescope', breakPoint: 'telescope rate command', breakAt: { block: 'RateTe', side: 'input' }, loopStates: { 'TE-R': 'closed' }, notes: 'Two integrators in the compensator: the loop is conditionally stable, the gain may not fall far.',
+      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CTeP*RateTe*Int*TCtrl*TTe*TRef' } },
     },
     {
-      code: 'RO-R', name: 'Roll rate', axis: 'roll', breakPoint: 'servo valve command of the roll actuator', loopStates: { 'RO-P': 'open' }, notes: 'The torsion mode of the boom tip lifts the gain above one a second time.',
-      model: { name: 'design model', definition: { kind: 'expression', expression: 'kRoR*(1+s/40)/s / (s^2/whRo^2+0.84*s/whRo+1) * (s^2/(1.3*wTor)^2+0.02*s/wTor+1)/(s^2/wTor^2+2*zTor*s/wTor+1) * exp(-0.003*s)' } },
+      code: 'RO-R', name: 'Roll rate', axis: 'roll', breakPoint: 'servo valve command of the roll actuator', breakAt: { block: 'HydRo', side: 'input' }, loopStates: { 'RO-P': 'open' }, notes: 'The torsion mode of the boom tip lifts the gain above one a second time.',
+      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CRoR*HydRo*BoomRo*TCtrl*TRo' } },
     },
     {
-      code: 'RO-P', name: 'Roll position', axis: 'roll', breakPoint: 'roll rate command', loopStates: { 'RO-R': 'closed' }, notes: '',
-      model: coefficientsOfRollPosition,
+      code: 'RO-P', name: 'Roll position', axis: 'roll', breakPoint: 'roll rate command', breakAt: { block: 'RateRo', side: 'input' }, loopStates: { 'RO-R': 'closed' }, notes: '',
+      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CRoP*RateRo*TipRo*Int*TCtrl*TRo*TRefLR' } },
     },
   ],
   report: {

@@ -8,6 +8,7 @@ import { updateReport } from '../services/reports/updateReport'
 import { freezeRevision } from '../services/revisions/freezeRevision'
 import { issueRevision } from '../services/revisions/issueRevision'
 import { listLoops } from '../services/loops/listLoops'
+import { antennaMount } from './antennaMount'
 import { converter } from './converter'
 import type { DemoSystem } from './DemoSystem'
 import { gangway } from './gangway'
@@ -18,7 +19,7 @@ import { storeDemoSystem } from './storeDemoSystem'
 const daysBetweenRevisions = 21
 
 /**
- * Fills an empty database with the demo: people, both systems, their reports, and the issued revisions, rendered as any other.
+ * Fills an empty database with the demo: people, the systems, their reports, and the issued revisions, rendered as any other.
  * Where rendering fails (no Chromium, say) the revision stays a frozen draft and `say` is told why.
  */
 export async function makeDemo(say: (words: string) => void): Promise<void> {
@@ -31,7 +32,7 @@ export async function makeDemo(say: (words: string) => void): Promise<void> {
     return actor
   }
   const as = (role: string, days: number): ServiceContext => ({ actor: actorOf(role), clock: () => daysAgo(days) })
-  for (const demo of [gangway, converter]) {
+  for (const demo of [gangway, converter, antennaMount]) {
     const oldest = demo.revisions.length * daysBetweenRevisions
     const system = await storeDemoSystem(demo, as('engineer', oldest + 10))
     const reportId = await storeDemoReport(system.id, demo, as('engineer', oldest + 3))

@@ -1,11 +1,11 @@
 import { prepareLoopGain } from '#shared/analysis/prepareLoopGain'
-import { loopInputFromDefinition } from '#shared/sources/loopInputFromDefinition'
 import type { OperatingCondition, System } from '#shared/types/system'
 import type { ServiceContext } from '../services/context'
 import { createSources } from '../services/sources/createSources'
 import { chooseOfRecord } from '../services/sources/chooseOfRecord'
 import { storeUpload } from '../services/uploads/storeUpload'
 import type { DemoLoop, DemoSweep, DemoSystem } from './DemoSystem'
+import { gainsIn } from './gainsIn'
 import { makeSweep } from './makeSweep'
 import { valuesIn } from './valuesIn'
 
@@ -14,8 +14,7 @@ export async function storeDemoSweeps(system: System, demo: DemoSystem, loop: De
   for (const [index, condition] of conditions.entries()) {
     if (!sweep.conditionCodes.includes(condition.code)) continue
     const values = trueValues(valuesIn(demo, index), sweep)
-    const { definition } = typeof loop.model === 'function' ? loop.model(values) : loop.model
-    const gain = prepareLoopGain(loopInputFromDefinition(definition, { frequencyUnit: demo.frequencyUnit, parameters: values, points: [] }))
+    const gain = prepareLoopGain({ frequencyUnit: demo.frequencyUnit, expression: loop.model.definition.expression, parameters: values, blocks: gainsIn(demo, index, values) })
     const text = makeSweep({ loop: gain, frequencies: frequenciesOf(sweep, values), averages: sweep.averages, noise: sweep.noise, seed: sweep.seed + index })
     const upload = await storeUpload(system.id, { name: `${loop.code}-${condition.code}-${sweep.name.replace(' ', '')}.csv`, bytes: Buffer.from(text) }, context)
     const [source] = await createSources(loopId, {

@@ -9,10 +9,10 @@ import { createSources } from '../services/sources/createSources'
 import { createSystem } from '../services/systems/createSystem'
 import accounts from './accounts.json'
 import type { DemoLoop, DemoSystem } from './DemoSystem'
+import { storeDemoBlocks } from './storeDemoBlocks'
 import { storeDemoSweeps } from './storeDemoSweeps'
-import { valuesIn } from './valuesIn'
 
-/** Stores a system of the demo through the same services as the screens: members, conditions, parameters, loops, sources. */
+/** Stores a system of the demo through the same services as the screens: members, conditions, parameters, blocks, loops, sources. */
 export async function storeDemoSystem(demo: DemoSystem, context: ServiceContext): Promise<System> {
   const { name, customer, documentNumber, frequencyUnit, description } = demo
   const system = await createSystem({ name, customer, documentNumber, frequencyUnit, description }, context)
@@ -24,6 +24,7 @@ export async function storeDemoSystem(demo: DemoSystem, context: ServiceContext)
     ...parameter,
     values: Object.fromEntries(conditions.map((condition, index) => [condition.id, values[index] ?? Number.NaN])),
   })), context)
+  await storeDemoBlocks(system, demo, conditions, context)
   const loops = new Map<string, Loop>()
   for (const loop of demo.loops) loops.set(loop.code, await storeDemoLoop(system, demo, loop, conditions, context))
   for (const { code, loopStates } of demo.loops) await storeDemoStates(loops, code, loopStates, context)
@@ -31,13 +32,12 @@ export async function storeDemoSystem(demo: DemoSystem, context: ServiceContext)
 }
 
 async function storeDemoLoop(system: System, demo: DemoSystem, loop: DemoLoop, conditions: OperatingCondition[], context: ServiceContext): Promise<Loop> {
-  const { code, name, axis, breakPoint, notes, model } = loop
-  const stored = await createLoop(system.id, { code, name, axis, breakPoint, otherLoops: '', breakAt: null, loopStates: [], notes }, context)
-  const store = (conditionIds: number[], source: { name: string, definition: Exclude<DemoLoop['model'], (...values: never[]) => unknown>['definition'] }) =>
-    createSources(stored.id, { conditionIds, name: source.name, definition: source.definition, ofRecord: true, setAsideReason: '' }, context)
-  if (typeof model !== 'function') await store(conditions.map(condition => condition.id), model)
-  else for (const [index, condition] of conditions.entries()) await store([condition.id], model(valuesIn(demo, index)))
-  if (loop.sweeps !== undefined) await storeDemoSweeps(system, demo, loop, loop.sweeps, stored.id, conditions, context)
+  const { code, name, axis, breakPoint, breakAt, notes, model, setAside = [], sweeps } = loop
+  const stored = await createLoop(system.id, { code, name, axis, breakPoint, otherLoops: '', breakAt, loopStates: [], notes }, context)
+  const conditionIds = conditions.map(condition => condition.id)
+  await createSources(stored.id, { conditionIds, ...model, ofRecord: true, setAsideReason: '' }, context)
+  for (const { reason, ...source } of setAside) await createSources(stored.id, { conditionIds, ...source, ofRecord: false, setAsideReason: reason }, context)
+  if (sweeps !== undefined) await storeDemoSweeps(system, demo, loop, sweeps, stored.id, conditions, context)
   return stored
 }
 

@@ -1,4 +1,5 @@
 import type { z } from 'zod'
+import { blockDefinitionSchema } from '../schemas/block'
 import { manifestSchema } from '../schemas/manifest'
 import { readBySchema, type InputFault } from '../schemas/readBySchema'
 import { sourceDefinitionSchema } from '../schemas/source'
@@ -41,6 +42,12 @@ function readDefinitions(manifest: Manifest): InputFault[] {
     if (data !== null && 'upload' in data) read.add(uploadKeyOf(data.upload as ManifestUploadName))
     return (data ?? definition) as Definition
   }
+  manifest.blocks.forEach((block, place) => {
+    if (block.definition !== null) block.definition = readAt(blockDefinitionSchema, block.definition, `blocks[${place}].definition`)
+    for (const [code, definition] of Object.entries(block.byCondition)) {
+      block.byCondition[code] = readAt(blockDefinitionSchema, definition, `blocks[${place}].byCondition.${code}`)
+    }
+  })
   manifest.loops.forEach((loop, place) => loop.sources.forEach((source, index) => {
     source.definition = readAt(sourceDefinitionSchema, source.definition, `loops[${place}].sources[${index}].definition`)
   }))

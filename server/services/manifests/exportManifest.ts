@@ -1,10 +1,12 @@
 import { manifestDefinition } from '#shared/manifest/manifestDefinition'
 import { writeManifest } from '#shared/manifest/writeManifest'
-import { manifestFormat, manifestVersion, type ManifestLoop, type ManifestLoopState, type ManifestParameter, type ManifestSource, type ManifestUpload, type ManifestUploadName } from '#shared/types/manifest'
+import type { Block, BlockDefinition } from '#shared/types/block'
+import { manifestFormat, manifestVersion, type ManifestBlock, type ManifestLoop, type ManifestLoopState, type ManifestParameter, type ManifestSource, type ManifestUpload, type ManifestUploadName } from '#shared/types/manifest'
 import type { Loop, OperatingCondition, Parameter } from '#shared/types/system'
 import { writeTransaction } from '../../database/database'
 import { SourceRow } from '../../database/models/SourceRow'
 import { UploadRow } from '../../database/models/UploadRow'
+import { listBlocks } from '../blocks/listBlocks'
 import { listConditions } from '../conditions/listConditions'
 import { listCriteria } from '../criteria/listCriteria'
 import { listLoops } from '../loops/listLoops'
@@ -22,8 +24,10 @@ export function exportManifest(systemId: number): Promise<{ name: string, text: 
     const conditions = await listConditions(systemId)
     const loops = await listLoops(systemId)
     const uploads = new UploadsNamed(await UploadRow.findAll({ where: { systemId }, attributes: ['id', 'fileName', 'sha256'] }))
+    const manifestBlocks = (await listBlocks(systemId)).map(block => manifestBlock(block, conditions, uploads))
     const sources = await SourceRow.findAll({ where: { loopId: loops.map(loop => loop.id), conditionId: conditions.map(condition => condition.id) }, order: ['id'] })
-    const manifestLoops = loops.map(loop => manifestLoop(loop, loops, sources.filter(source => source.loopId === loop.id), conditions, uploads))
+    const blockNames = new Set(manifestBlocks.map(block => block.name))
+    const manifestLoops = loops.map(loop => manifestLoop(loop, loops, blockNames, sources.filter(source => source.loopId === loop.id), conditions, uploads))
     return {
       name,
       text: writeManifest({
@@ -32,7 +36,7 @@ export function exportManifest(systemId: number): Promise<{ name: string, text: 
         system: { name, customer, documentNumber, frequencyUnit, description },
         conditions: conditions.map(({ code, name, coordinates, tags, notes }) => ({ code, name, coordinates: coordinates.map(({ name, unit, value }) => ({ name, unit, value })), tags, notes })),
         parameters: (await listParameters(systemId)).map(parameter => manifestParameter(parameter, conditions)),
-        blocks: [],
+        blocks: manifestBlocks,
         loops: manifestLoops,
         criteria: (await listCriteria(systemId)).map(({ quantity, limit }) => ({ quantity, limit })),
         uploads: await uploads.used(),
@@ -47,13 +51,22 @@ const byCode = <Value>(record: Record<number, Value>, conditions: OperatingCondi
 
 const manifestParameter = ({ name, unit, notes, values }: Parameter, conditions: OperatingCondition[]): ManifestParameter => ({ name, unit, notes, values: byCode(values, conditions) })
 
-function manifestLoop(loop: Loop, loops: Loop[], sources: SourceRow[], conditions: OperatingCondition[], uploads: UploadsNamed): ManifestLoop {
+function manifestBlock({ name, role, unitIn, unitOut, notes, definition, byCondition }: Block, conditions: OperatingCondition[], uploads: UploadsNamed): ManifestBlock {
+  const named = (definition: BlockDefinition) => manifestDefinition(definition, id => uploads.nameOf(id))
+  return {
+    name, role, unitIn, unitOut, notes,
+    definition: definition && named(definition),
+    byCondition: Object.fromEntries(Object.entries(byCode(byCondition, conditions)).map(([code, definition]) => [code, named(definition)])),
+  }
+}
+
+function manifestLoop(loop: Loop, loops: Loop[], blockNames: ReadonlySet<string>, sources: SourceRow[], conditions: OperatingCondition[], uploads: UploadsNamed): ManifestLoop {
   const { code, name, axis, breakPoint, breakAt, otherLoops, notes } = loop
   const loopStates = loop.loopStates.flatMap(({ loopId, state, gain }): ManifestLoopState[] => {
     const other = loops.find(({ id }) => id === loopId)
     return other === undefined ? [] : [{ loop: other.code, state, ...(state === 'held' && { gain }) }]
   })
-  return { code, name, axis, breakPoint, breakAt: breakAt && { block: breakAt.block, side: breakAt.side }, otherLoops, loopStates, notes, sources: groupSources(sources, conditions, uploads) }
+  return { code, name, axis, breakPoint, breakAt: breakAt && blockNames.has(breakAt.block) ? { block: breakAt.block, side: breakAt.side } : null, otherLoops, loopStates, notes, sources: groupSources(sources, conditions, uploads) }
 }
 
 /** Sources that are the same in several conditions as one; two alike in one condition stay two. */

@@ -17,6 +17,7 @@ import type { UploadBytes } from './readManifestUploads'
 /** A system stored from a manifest, with each definition and its place there. */
 export interface StoredManifest {
   system: SystemRow
+  blocks: { path: string, block: Block }[]
   sources: { path: string, definition: SourceDefinition }[]
 }
 
@@ -38,10 +39,11 @@ export async function storeManifest(manifest: Manifest, files: readonly UploadBy
   const conditions = await storeConditions(manifest, systemId, context)
   await storeParameters(manifest, systemId, conditions)
   const uploads = await storeUploads(files, systemId, context)
+  const blocks = await storeBlocks(manifest, systemId, conditions, uploads, context)
   const loops = await storeLoops(manifest, systemId, context)
   const sources = []
   for (const [index, loop] of manifest.loops.entries()) sources.push(...await storeSources(loop, `loops[${index}]`, idIn(loops, loop.code), conditions, uploads, context))
-  return { system, sources }
+  return { system, blocks, sources }
 }
 
 async function storeConditions({ conditions }: Manifest, systemId: number, context: ServiceContext): Promise<Ids> {
@@ -67,6 +69,24 @@ async function storeUploads(files: readonly UploadBytes[], systemId: number, con
   }
   return ids
 }
+
+async function storeBlocks({ blocks }: Manifest, systemId: number, conditions: Ids, uploads: Ids, context: ServiceContext): Promise<StoredManifest['blocks']> {
+  const stored = []
+  for (const [index, { name, role, unitIn, unitOut, notes, definition, byCondition }] of blocks.entries()) {
+    const own = definition && storedDefinition<BlockDefinition>(definition, upload => idIn(uploads, uploadKeyOf(upload)))
+    const ofConditions = Object.entries(byCondition).map(([code, gain]) => ({
+      conditionId: idIn(conditions, code), definition: storedDefinition<BlockDefinition>(gain, upload => idIn(uploads, uploadKeyOf(upload))),
+    }))
+    const row = await BlockRow.create({
+      systemId, name, role, unitIn, unitOut, notes, definition: own, uploadId: uploadOf(own), position: index + 1, version: 1, createdAt: nowOf(context),
+    })
+    await BlockGainRow.bulkCreate(ofConditions.map(({ conditionId, definition }) => ({ blockId: row.id, conditionId, definition, uploadId: uploadOf(definition) })))
+    stored.push({ path: `blocks[${index}]`, name })
+  }
+  return stored
+}
+
+const uploadOf = (definition: BlockDefinition | null): number | null => definition !== null && 'uploadId' in definition ? definition.uploadId : null
 
 /** All loops first: each may name any other. */
 async function storeLoops({ loops }: Manifest, systemId: number, context: ServiceContext): Promise<Ids> {

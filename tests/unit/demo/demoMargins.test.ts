@@ -22,8 +22,11 @@ interface GoldenMargins {
   closestApproaches: [number, number][]
 }
 
-/** What the engine promises, twice: both sides are results of its own. Frequencies relative; deg, dB and distances as they are. */
-const accuracy = { frequency: 2e-9, margin: 2e-6, distance: 2e-9 }
+/**
+ * What the engine promises, twice: both sides are results of its own. Frequencies relative; deg, dB and distances as they are. The converter's poles and gains were
+ * discretised by hand then and rounded to nine digits, 5e-10 of 1, which moves a pole at 0.995 by 1e-7 of its distance from 1.
+ */
+const accuracyOf = (key: string) => ({ frequency: /^(?:CU|VO) /.test(key) ? 1e-8 : 2e-9, margin: 2e-6, distance: 2e-9 })
 
 const margins = golden as unknown as Record<string, GoldenMargins>
 const cases = [gangway, converter].flatMap(demoLoopInputs)
@@ -40,6 +43,7 @@ describe('the demo, however its loops are built', () => {
 
   it.each(cases.filter(({ key }) => key in margins))('keeps every margin of $key', ({ key, input }) => {
     const expected = margins[key] as GoldenMargins
+    const accuracy = accuracyOf(key)
     const found = analyseLoop(input)
     expect({ verdict: found.stability.verdict, proven: found.coverage.proven }).toEqual({ verdict: expected.verdict, proven: expected.proven })
     expect([found.gainCrossovers.length, found.phaseCrossovers.length, found.closestApproaches.length])
