@@ -1,3 +1,4 @@
+import { newBlockSchema } from '#shared/schemas/block'
 import type { BlockDefinition } from '#shared/types/block'
 import type { OperatingCondition, System } from '#shared/types/system'
 import { createBlock } from '../services/blocks/createBlock'
@@ -10,8 +11,7 @@ import { valuesIn } from './valuesIn'
 export async function storeDemoBlocks(system: System, demo: DemoSystem, conditions: OperatingCondition[], context: ServiceContext): Promise<void> {
   for (const { name, role, unitIn, unitOut, notes, gain, file } of demo.blocks) {
     const uploadId = file === undefined ? 0 : (await storeUpload(system.id, { name: file.name, bytes: Buffer.from(file.text) }, context)).id
-    const gains = gainsOf(gain, demo, conditions, uploadId)
-    await createBlock(system.id, { name, role, unitIn, unitOut, notes, ...gains }, context)
+    await createBlock(system.id, newBlockSchema.parse({ name, role, unitIn, unitOut, notes, ...gainsOf(gain, demo, conditions, uploadId) }), context)
   }
 }
 

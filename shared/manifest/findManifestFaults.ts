@@ -3,6 +3,8 @@ import type { Manifest, ManifestLoop } from '../types/manifest'
 
 /** Sources a manifest may hold, each counted once for every operating condition it is of. */
 const mostSources = 100_000
+/** Gains of blocks in single conditions that a manifest may hold. */
+const mostGains = 20_000
 
 /** What the parts of a manifest say of one another and cannot: codes and names that stand twice or are not there, and sources of record. */
 export function findManifestFaults(manifest: Manifest): InputFault[] {
@@ -14,6 +16,8 @@ export function findManifestFaults(manifest: Manifest): InputFault[] {
     .map(code => ({ path: `${path}.${code}`, message: `There is no operating condition ${code} among the conditions.` }))
   const sourceCount = loops.flatMap(loop => loop.sources).reduce((sum, source) => sum + source.conditions.length, 0)
   if (sourceCount > mostSources) return [{ path: 'loops', message: `There are ${sourceCount} sources, one for each condition counted; a manifest may hold ${mostSources}.` }]
+  const gainCount = blocks.reduce((sum, { byCondition }) => sum + Object.keys(byCondition).length, 0)
+  if (gainCount > mostGains) return [{ path: 'blocks', message: `There are ${gainCount} gains of blocks in single conditions; a manifest may hold ${mostGains}.` }]
   return [
     ...standingTwice(conditions.map(({ code }, index) => ({ path: `conditions[${index}].code`, name: code })), 'another operating condition'),
     ...standingTwice([

@@ -4,6 +4,7 @@ import { manifestSchema } from '../schemas/manifest'
 import { readBySchema, type InputFault } from '../schemas/readBySchema'
 import { sourceDefinitionSchema } from '../schemas/source'
 import { manifestFormat, manifestVersion, type Manifest, type ManifestUploadName } from '../types/manifest'
+import { findBlockCircles } from './findBlockCircles'
 import { findManifestFaults } from './findManifestFaults'
 
 export type ManifestReading = { manifest: Manifest, faults: null } | { manifest: null, faults: InputFault[] }
@@ -51,6 +52,7 @@ function readDefinitions(manifest: Manifest): InputFault[] {
   manifest.loops.forEach((loop, place) => loop.sources.forEach((source, index) => {
     source.definition = readAt(sourceDefinitionSchema, source.definition, `loops[${place}].sources[${index}].definition`)
   }))
+  faults.push(...findBlockCircles(manifest.blocks))
   if (faults.length > 0) return faults
   return manifest.uploads.flatMap((upload, index) => read.has(uploadKeyOf(upload)) ? [] : [{ path: `uploads[${index}]`, message: `No definition reads the file ${upload.fileName}: leave it out.` }])
 }

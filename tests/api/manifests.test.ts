@@ -26,7 +26,7 @@ describe('the manifest of a system', () => {
   })
 
   it('is refused with every fault at its path, and then there is no such system', async () => {
-    const text = (await manifestExample()).replace('"k/s/(s/60+1)"', '"k/s/(s/60+"').replace('"Bench axis"', '"Never stored"')
+    const text = (await manifestExample()).replace('"k*T*P"', '"k*T*(P"').replace('"Bench axis"', '"Never stored"')
     expect(await engineer.post('/api/manifests', text, json)).toMatchObject({
       status: 400, body: { error: { code: 'invalidInput', path: 'loops[0].sources[0].definition.expression', details: { faults: [{ path: 'loops[0].sources[0].definition.expression' }] } } },
     })

@@ -1,7 +1,9 @@
 import { uploadKeyOf } from '#shared/manifest/readManifest'
 import { storedDefinition } from '#shared/manifest/storedDefinition'
-import type { Manifest, ManifestLoop, ManifestUploadName } from '#shared/types/manifest'
+import type { BlockDefinition } from '#shared/types/block'
+import type { Manifest, ManifestDefinition, ManifestLoop, ManifestUploadName } from '#shared/types/manifest'
 import type { SourceDefinition } from '#shared/types/source'
+import { BlockRow } from '../../database/models/BlockRow'
 import { ConditionRow } from '../../database/models/ConditionRow'
 import { CriterionRow } from '../../database/models/CriterionRow'
 import { LoopRow } from '../../database/models/LoopRow'
@@ -11,18 +13,20 @@ import { ParameterValue } from '../../database/models/ParameterValue'
 import { SourceRow } from '../../database/models/SourceRow'
 import { SystemRow } from '../../database/models/SystemRow'
 import { UploadRow } from '../../database/models/UploadRow'
+import { storeGains, uploadOf } from '../blocks/storeGains'
 import { nowOf, type ServiceContext } from '../context'
 import type { UploadBytes } from './readManifestUploads'
 
 /** A system stored from a manifest, with each definition and its place there. */
 export interface StoredManifest {
   system: SystemRow
-  blocks: { path: string, block: Block }[]
-  sources: { path: string, definition: SourceDefinition }[]
+  /** id of each condition by its code */
+  conditions: Ids
+  sources: { path: string, definition: SourceDefinition, conditionIds: number[] }[]
 }
 
 /** The ids that codes and names became. */
-type Ids = ReadonlyMap<string, number>
+export type Ids = ReadonlyMap<string, number>
 
 const idIn = (ids: Ids, name: string): number => {
   const id = ids.get(name)
@@ -39,11 +43,11 @@ export async function storeManifest(manifest: Manifest, files: readonly UploadBy
   const conditions = await storeConditions(manifest, systemId, context)
   await storeParameters(manifest, systemId, conditions)
   const uploads = await storeUploads(files, systemId, context)
-  const blocks = await storeBlocks(manifest, systemId, conditions, uploads, context)
+  await storeBlocks(manifest, systemId, conditions, uploads, context)
   const loops = await storeLoops(manifest, systemId, context)
   const sources = []
   for (const [index, loop] of manifest.loops.entries()) sources.push(...await storeSources(loop, `loops[${index}]`, idIn(loops, loop.code), conditions, uploads, context))
-  return { system, blocks, sources }
+  return { system, conditions, sources }
 }
 
 async function storeConditions({ conditions }: Manifest, systemId: number, context: ServiceContext): Promise<Ids> {
@@ -70,23 +74,14 @@ async function storeUploads(files: readonly UploadBytes[], systemId: number, con
   return ids
 }
 
-async function storeBlocks({ blocks }: Manifest, systemId: number, conditions: Ids, uploads: Ids, context: ServiceContext): Promise<StoredManifest['blocks']> {
-  const stored = []
+async function storeBlocks({ blocks }: Manifest, systemId: number, conditions: Ids, uploads: Ids, context: ServiceContext): Promise<void> {
+  const stored = (definition: ManifestDefinition<BlockDefinition>) => storedDefinition<BlockDefinition>(definition, upload => idIn(uploads, uploadKeyOf(upload)))
   for (const [index, { name, role, unitIn, unitOut, notes, definition, byCondition }] of blocks.entries()) {
-    const own = definition && storedDefinition<BlockDefinition>(definition, upload => idIn(uploads, uploadKeyOf(upload)))
-    const ofConditions = Object.entries(byCondition).map(([code, gain]) => ({
-      conditionId: idIn(conditions, code), definition: storedDefinition<BlockDefinition>(gain, upload => idIn(uploads, uploadKeyOf(upload))),
-    }))
-    const row = await BlockRow.create({
-      systemId, name, role, unitIn, unitOut, notes, definition: own, uploadId: uploadOf(own), position: index + 1, version: 1, createdAt: nowOf(context),
-    })
-    await BlockGainRow.bulkCreate(ofConditions.map(({ conditionId, definition }) => ({ blockId: row.id, conditionId, definition, uploadId: uploadOf(definition) })))
-    stored.push({ path: `blocks[${index}]`, name })
+    const own = definition && stored(definition)
+    const block = await BlockRow.create({ systemId, name, role, unitIn, unitOut, notes, definition: own, uploadId: uploadOf(own), position: index + 1, version: 1, createdAt: nowOf(context) })
+    await storeGains(block, Object.fromEntries(Object.entries(byCondition).map(([code, gain]) => [idIn(conditions, code), stored(gain)])))
   }
-  return stored
 }
-
-const uploadOf = (definition: BlockDefinition | null): number | null => definition !== null && 'uploadId' in definition ? definition.uploadId : null
 
 /** All loops first: each may name any other. */
 async function storeLoops({ loops }: Manifest, systemId: number, context: ServiceContext): Promise<Ids> {
@@ -108,10 +103,11 @@ async function storeSources({ sources }: ManifestLoop, path: string, loopId: num
   const idOf = (upload: ManifestUploadName) => idIn(uploads, uploadKeyOf(upload))
   for (const [index, source] of sources.entries()) {
     const { name, ofRecord, setAsideReason } = source
+    const conditionIds = source.conditions.map(code => idIn(conditions, code))
     const definition = storedDefinition<SourceDefinition>(source.definition, idOf)
-    await SourceRow.bulkCreate(source.conditions.map(code => ({
+    await SourceRow.bulkCreate(conditionIds.map(conditionId => ({
       loopId,
-      conditionId: idIn(conditions, code),
+      conditionId,
       name,
       kind: definition.kind,
       definition,
@@ -121,7 +117,7 @@ async function storeSources({ sources }: ManifestLoop, path: string, loopId: num
       version: 1,
       createdAt: nowOf(context),
     })))
-    stored.push({ path: `${path}.sources[${index}]`, definition })
+    stored.push({ path: `${path}.sources[${index}]`, definition, conditionIds })
   }
   return stored
 }

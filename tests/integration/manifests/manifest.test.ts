@@ -113,6 +113,17 @@ describe('a manifest with a fault', () => {
     ['no source of record', manifest => sourceOf(manifest, 1).ofRecord = false, 'loops[0].sources', /EMPTY no source .* of record/],
     ['the state of an unknown loop', manifest => firstOf(manifest.loops).loopStates.push({ loop: 'VEL', state: 'open' }), 'loops[0].loopStates[0].loop', /no loop VEL/],
     ['the state of the loop itself', manifest => firstOf(manifest.loops).loopStates.push({ loop: 'POS', state: 'open' }), 'loops[0].loopStates[0].loop', /only the others/],
+    ['a block with the name of a parameter', manifest => firstOf(manifest.blocks).name = 'k', 'blocks[0].name', /k stands twice/],
+    ['a gain in an unknown condition', manifest => firstOf(manifest.blocks).byCondition.C9 = { kind: 'deadTime', deadTime: 1, unit: 's' }, 'blocks[0].byCondition.C9', /no operating condition C9/],
+    ['a block that names itself', manifest => firstOf(manifest.blocks).definition = { kind: 'expression', expression: '1/(s+P)' }, 'blocks[0].definition.expression', /P names itself/],
+    ['blocks that name one another in a circle in one condition', (manifest) => {
+      firstOf(manifest.blocks).byCondition.FULL = { kind: 'expression', expression: 'T/s' }
+      Object.assign(manifest.blocks[1] ?? {}, { byCondition: { FULL: { kind: 'expression', expression: '1/(1+P)' } } })
+    }, 'blocks[1].byCondition.FULL.expression', /in a circle: P, T, P/],
+    ['a block with an unknown name', manifest => firstOf(manifest.blocks).byCondition.FULL = { kind: 'expression', expression: '1/(s+q)' }, 'blocks[0].byCondition.FULL.expression', /q/],
+    ['a block with a section that is no number', manifest => firstOf(manifest.blocks).definition = { kind: 'sections', rows: [['1', '0', 'x', '1', '0', '0']], gain: '1', sampleTime: 1 }, 'blocks[0].definition.rows[0][2]', /"x" is no number/],
+    ['matrices that the file does not hold', manifest => firstOf(manifest.blocks).definition = { kind: 'stateSpace', set: null, states: null, inputs: [], outputs: [], upload: { fileName: 'sweep1.csv', sha256: firstOf(manifest.uploads).sha256 } }, 'blocks[0].definition.upload', /./],
+    ['a sampled block beside a continuous one without a hold', manifest => Object.assign(manifest.blocks[1] ?? {}, { definition: { kind: 'expression', expression: '1/z', sampleTime: 0.004 } }), 'loops[0].sources[0].definition.expression', /hold/],
     ['a break point at an unknown block', manifest => firstOf(manifest.loops).breakAt = { block: 'V', side: 'input' }, 'loops[0].breakAt.block', /no block V/],
     ['an upload that is not there', manifest => manifest.uploads = [], 'loops[0].sources[1].definition.upload', /no sweep1\.csv/],
     ['an id in place of an upload', manifest => Object.assign(sourceOf(manifest, 1).definition, { uploadId: 1 }), 'loops[0].sources[1].definition.uploadId', /Ids mean nothing/],
