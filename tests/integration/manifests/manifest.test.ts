@@ -6,6 +6,7 @@ import { SourceRow } from '#server/database/models/SourceRow'
 import { SystemRow } from '#server/database/models/SystemRow'
 import { UploadRow } from '#server/database/models/UploadRow'
 import { closeAnalysisPool } from '#server/adapters/analysisPool/analysisPool'
+import { antennaMount } from '#server/demo/antennaMount'
 import { converter } from '#server/demo/converter'
 import { gangway } from '#server/demo/gangway'
 import { storeDemoPeople } from '#server/demo/storeDemoPeople'
@@ -46,7 +47,7 @@ describe('a manifest', () => {
     expect(await again(await manifestExample())).toBe(await manifestExample())
   })
 
-  it.each([['gangway', gangway], ['converter', converter]] as const)('of the %s of the demo makes a system with the same manifest and the same analyses', async (_, demo) => {
+  it.each([['gangway', gangway], ['converter', converter], ['antenna mount', antennaMount]] as const)('of the %s of the demo makes a system with the same manifest and the same analyses', async (_, demo) => {
     const original = await storeDemoSystem(demo, context)
     const { text } = await exportManifest(original.id)
     const twin = await importManifest(text, context)
