@@ -35,8 +35,7 @@ export function exactLeafSource(): ExactLeafSource {
       const key = `${name}:${keyOfLoop(continuous)}`
       const known = equivalents.get(key)
       if (known) return known
-      const { loop: equivalent, accuracy, averaged } = discretise(continuous, gain)
-      const loop = workedOut(equivalent)
+      const { loop, accuracy, averaged } = discretise(continuous, gain)
       accuracies.push(accuracy)
       if (averaged !== null && !notes.some(note => note.block === name && note.code === 'averaged hold')) notes.push({ block: name, code: 'averaged hold', message: averaged })
       equivalents.set(key, loop)

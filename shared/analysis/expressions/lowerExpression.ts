@@ -5,6 +5,7 @@ import { exactLeafSource } from '../blocks/exactLeafSource'
 import { hiddenModeNotes } from '../blocks/hiddenModeNotes'
 import type { FactoredLoop } from '../FactoredLoop'
 import type { ExactLoop } from './ExactLoop'
+import { differenceOfFactors } from './differenceOfFactors'
 import { excessDegree } from './excessDegree'
 import type { ExpressionNode } from './ExpressionNode'
 import type { GeneralLoop } from './GeneralLoop'
@@ -40,7 +41,7 @@ export function lowerExpression(input: ExpressionInput): LoweredExpression {
     throw new AnalysisInputError('The loop is sampled, but nothing in this expression is: put the hold before its continuous part, as in H0*G.', 'expression', tree.position)
   }
   refuseUnusable(exact, sampleTime, tree, scope)
-  const structure = input.blocks && {
+  const structure: LoopStructure | undefined = input.blocks && {
     ...sampleTime !== undefined && { sampleTime },
     ...leaves.accuracy() && { accuracy: leaves.accuracy()! },
     approximated: false,
@@ -48,6 +49,7 @@ export function lowerExpression(input: ExpressionInput): LoweredExpression {
   }
   if (exact.sums.size === 0) {
     const loop = rationalPart(exact, sampleTime)
+    if (structure && structure.accuracy) structure.accuracy = withFactors(structure.accuracy, exact, loop)
     return withStructure({ kind: 'factored', loop, notes: hiddenModes(loop) }, loop)
   }
   const loop = generalLoopFromExact(exact, tree.position)
@@ -56,6 +58,12 @@ export function lowerExpression(input: ExpressionInput): LoweredExpression {
   function withStructure(lowered: LoweredExpression, factors: FactoredLoop): LoweredExpression {
     return structure ? { ...lowered, structure: { ...structure, notes: [...structure.notes, ...hiddenModeNotes(factors, leaves.used)] } } : lowered
   }
+}
+
+/** The accuracy of the blocks with that of the factors found for the whole. */
+function withFactors({ relative, basis }: NonNullable<LoopStructure['accuracy']>, exact: ExactLoop, loop: FactoredLoop): NonNullable<LoopStructure['accuracy']> {
+  const { largest, frequencies } = differenceOfFactors(exact, loop)
+  return { relative: relative + largest, basis: `${basis}, factors compared at ${frequencies} frequencies` }
 }
 
 function refuseUnusable(exact: ExactLoop, sampleTime: number | undefined, tree: ExpressionNode, scope: BlockScope<ExactLoop>): void {

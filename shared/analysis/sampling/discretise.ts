@@ -112,11 +112,11 @@ function equivalentOf(continuous: ExactLoop, hold: HoldGain): DiscreteEquivalent
         // the factors are whole numbers, the poles of the sum monic
         scale: lead.times(powerOfTwo(sum.exponent - bits)).times(leadOf(down)).times(zeroOrder ? Rational.one : sampleTime),
         delay: Rational.zero,
-        numerator: FactorProduct.times(blocksConstant ? FactorProduct.times(factors, Z_MINUS_ONE) : factors, images),
-        denominator: FactorProduct.times(
+        numerator: FactorProduct.asPrecise(FactorProduct.times(blocksConstant ? FactorProduct.times(factors, Z_MINUS_ONE) : factors, images)),
+        denominator: FactorProduct.asPrecise(FactorProduct.times(
           FactorProduct.times(zeroOrder && !blocksConstant ? FactorProduct.without(down, Z_MINUS_ONE) : down, images),
           powersOfZ(zeroOrder ? whole : whole - 1),
-        ),
+        )),
         inverted: FactorProduct.empty,
         common: new Set(),
         sums: new Map(),
@@ -126,7 +126,7 @@ function equivalentOf(continuous: ExactLoop, hold: HoldGain): DiscreteEquivalent
         loop,
         accuracy: {
           relative,
-          basis: `partial fractions of ${bits} bits behind ${holdWords(hold)}, compared at ${frequencies.length} frequencies with the factors of the plant and with the sum of its modes in z`,
+          basis: `discrete equivalent behind ${holdWords(hold)} by partial fractions of ${bits} bits`,
         },
         averaged: averagedWords(hold),
       }

@@ -209,6 +209,6 @@ describe('what is said of the accuracy', () => {
   it('a bound far below that of doubles, and how it was found', () => {
     const { accuracy } = discretise(exactOf('exp(-0.013*s)*(s+2)/((s+1)*(s^2+0.02*s+100))'), zeroOrder(0.01))
     expect(accuracy.relative).toBeLessThan(1e-20)
-    expect(accuracy.basis).toMatch(/^partial fractions of \d+ bits behind the zero-order hold, compared at 11 frequencies/)
+    expect(accuracy.basis).toMatch(/^discrete equivalent behind the zero-order hold by partial fractions of \d+ bits$/)
   })
 })
