@@ -2,6 +2,7 @@ import type { MarginSummary } from '../types/analysis'
 import type { Criterion, CriterionQuantity } from '../types/criterion'
 import type { ReportSnapshot, SnapshotCell } from '../types/snapshot'
 import type { ComparedCell, ComparedQuantity, ComparedSide, RevisionComparison } from '../types/comparison'
+import { breakPointChanges } from './breakPointChanges'
 import { blockChanges } from './blockChanges'
 import { isSameData } from './isSameData'
 
@@ -104,6 +105,7 @@ export function compareSnapshots(before: ReportSnapshot, after: ReportSnapshot):
     criteriaChanges: criteriaChanges(before.criteria, after.criteria),
     parameterChanges: parameterChanges(before, after),
     blockChanges: blockChanges(before, after),
+    breakPointChanges: breakPointChanges(before, after),
     cells: compareCells(before, after),
   }
 }

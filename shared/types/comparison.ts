@@ -41,6 +41,8 @@ export interface RevisionComparison {
   parameterChanges: string[]
   /** such as 'block F (filter): gain changed in C1 and C2; used by SL-P' */
   blockChanges: string[]
+  /** the title lines of loops opened elsewhere or with other loops in another state, such as 'SL-P: opened at valve command; ... to opened at the output of C; ...' */
+  breakPointChanges: string[]
   /** in the order of the newer revision, cells that only the older one has last */
   cells: ComparedCell[]
 }
