@@ -3,6 +3,7 @@ import { AnalysisInputError } from './AnalysisInputError'
 import { analyseFactored } from './analyseFactored'
 import { atMeasuredBlock } from './blocks/atMeasuredBlock'
 import { measuredInputOf } from './blocks/measuredInputOf'
+import { withAccuracy } from './blocks/withAccuracy'
 import { analyseGeneralLoop } from './expressions/analyseGeneralLoop'
 import { evaluateGeneralLoop } from './expressions/evaluateGeneralLoop'
 import { lowerExpression } from './expressions/lowerExpression'
@@ -29,7 +30,7 @@ export function analyseLoop(input: LoopInput): LoopAnalysis {
     const lowered = lowerExpression(input)
     const analysis = lowered.kind === 'factored' ? analyseFactored(lowered.loop, input) : analyseGeneralLoop(lowered.loop, input)
     if (!lowered.structure) return analysis
-    return withApproximation({ ...analysis, structure: lowered.structure }, input,
+    return withApproximation(withAccuracy({ ...analysis, structure: lowered.structure }), input,
       () => lowered.kind === 'factored' ? prepareFactoredGain(lowered.loop) : evaluateGeneralLoop(lowered.loop))
   }
   throw new AnalysisInputError('This source form is not analysed yet.', 'expression')

@@ -3,6 +3,7 @@ import { AnalysisInputError } from '../AnalysisInputError'
 import type { ExactLoop } from '../expressions/ExactLoop'
 import { excessDegree } from '../expressions/excessDegree'
 import type { ChannelNumbers } from './channelOfBlock'
+import { stateSpaceLeaf } from '../stateSpace/stateSpaceLeaf'
 import { coefficientsLeaf } from './leaves/coefficientsLeaf'
 import { modalLeaf } from './leaves/modalLeaf'
 import { sectionsLeaf } from './leaves/sectionsLeaf'
@@ -38,6 +39,6 @@ function leafOf(gain: RationalGain, { output, input }: ChannelNumbers): ExactLoo
     case 'zerosPoles': return zerosPolesLeaf(gain)
     case 'sections': return sectionsLeaf(gain)
     case 'modal': return modalLeaf(gain, output, input)
-    case 'stateSpace': throw new AnalysisInputError('State space is not available yet.', '')
+    case 'stateSpace': return stateSpaceLeaf(gain, output, input).loop
   }
 }

@@ -5,6 +5,7 @@ import { FactorProduct } from '../expressions/FactorProduct'
 import type { LeafSource } from './BlockScope'
 import { discretise } from '../sampling/discretise'
 import { exactAlgebra } from './exactAlgebra'
+import { stateSpaceLeaf } from '../stateSpace/stateSpaceLeaf'
 import { exactLeaf } from './exactLeaf'
 
 /** What an expression uses of a block, in one domain. */
@@ -44,6 +45,11 @@ export function exactLeafSource(): ExactLeafSource {
     rational: (block, gain, channel) => {
       const leaf = exactLeaf(gain, channel)
       const loop = leaf && (gain.kind === 'modal' || gain.kind === 'stateSpace') ? workedOut(leaf) : leaf
+      if (gain.kind === 'stateSpace') {
+        const { notes: hidden, accuracy } = stateSpaceLeaf(gain, channel.output, channel.input)
+        notes.push(...hidden.map(note => ({ block, ...note })))
+        accuracies.push(accuracy())
+      }
       if (loop) used.push({ block, loop, sampled: 'sampleTime' in gain && gain.sampleTime !== undefined })
       return loop
     },
