@@ -124,7 +124,8 @@ export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
   const { busy, error, errorAt, formError, submit } = useSubmit()
   /** Empty fields are told only once one has tried to save. */
   const tried = ref(false)
-  const isAt = (found: string | undefined, wanted: string) => found === wanted || found?.startsWith(`${wanted}[`) === true || found?.startsWith(`${wanted}.`) === true
+  /** Tables tell what is wrong with each of their cells; of a list in one field an entry's fault is that of the field. */
+  const isAt = (found: string | undefined, wanted: string) => found === wanted || (!/(?:rows|modes)$/.test(wanted) && (found?.startsWith(`${wanted}[`) === true || found?.startsWith(`${wanted}.`) === true))
   /** What is wrong with a field of the gain looked at; entries such as 'zeros[2]' belong to the field 'zeros'. */
   function gainError(field: string): string | undefined {
     const wanted = `${path.value}.${field}`

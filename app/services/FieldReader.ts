@@ -22,14 +22,14 @@ export class FieldReader {
   }
 
   /** A number that may be left out; `check` says what is wrong with its value. */
-  optional(path: string, text: string, check?: (value: number) => string | null): number | undefined {
-    return this.valueOf(path, text, parseNumberText, `'${text.trim()}' is not a number. Write it like 12.5 or 1.2e3.`, check)
+  optional(path: string, text: string, check?: (value: number) => string | null, place = ''): number | undefined {
+    return this.valueOf(path, text, parseNumberText, `${place}'${text.trim()}' is not a number. Write it like 12.5 or 1.2e3.`, check)
   }
 
-  /** A number that must be there; 0 stands in for it while it is not. */
-  required(path: string, text: string, what: string, check?: (value: number) => string | null): number {
+  /** A number that must be there; 0 stands in for it while it is not. `place` stands before what is told of one among many. */
+  required(path: string, text: string, what: string, check?: (value: number) => string | null, place = ''): number {
     if (text.trim() === '') this.fault(path, `Type ${what}.`)
-    return this.optional(path, text, check) ?? 0
+    return this.optional(path, text, check, place) ?? 0
   }
 
   /** A time in seconds, typed with a unit or without. */

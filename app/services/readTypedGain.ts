@@ -91,9 +91,11 @@ const coefficientNames = ['b0', 'b1', 'b2', 'a0', 'a1', 'a2']
 function readModal(typed: TypedGain, reader: FieldReader): ModalGain {
   const inputs = reader.read('inputs', () => channelNames(typed.inputs), { names: [], count: 1 })
   const outputs = reader.read('outputs', () => channelNames(typed.outputs), { names: [], count: 1 })
+  const numberOf = (path: string, text: string, what: string, field: string, more = '', check?: (value: number) => string | null) =>
+    reader.required(path, text, `the ${field} of ${what}${more}`, check, `${what.charAt(0).toUpperCase()}${what.slice(1)}, ${field}: `)
   const gains = (path: string, what: string, row: { gainIn: string[], gainOut: string[] }) => {
     const list = (side: 'gainIn' | 'gainOut', count: number) => Array.from({ length: count }, (_, index) =>
-      reader.required(`${path}.${side}[${index}]`, row[side][index] ?? '', `${what}, gain ${side === 'gainIn' ? 'in' : 'out'}${count > 1 ? ` ${index + 1}` : ''}; 0 where it has none`))
+      numberOf(`${path}.${side}[${index}]`, row[side][index] ?? '', what, `gain ${side === 'gainIn' ? 'in' : 'out'}${count > 1 ? ` ${index + 1}` : ''}`, '; 0 where it has none'))
     return { gainIn: list('gainIn', inputs.count), gainOut: list('gainOut', outputs.count) }
   }
   const isTyped = (mode: TypedMode) => !isBlank([mode.name, mode.frequency, mode.damping, ...mode.gainIn, ...mode.gainOut])
@@ -103,8 +105,8 @@ function readModal(typed: TypedGain, reader: FieldReader): ModalGain {
     if (!isTyped(mode)) return []
     const path = `modes[${index}]`
     const what = `mode ${index + 1}`
-    const frequency = reader.required(`${path}.frequency`, mode.frequency, `${what}, its frequency`, positive('The frequency of a mode'))
-    const damping = reader.required(`${path}.damping`, inRatio(mode.damping, typed.dampingUnit), `${what}, its damping`)
+    const frequency = numberOf(`${path}.frequency`, mode.frequency, what, 'frequency', '', positive('The frequency of a mode'))
+    const damping = numberOf(`${path}.damping`, inRatio(mode.damping, typed.dampingUnit), what, 'damping')
     return [{ name: mode.name.trim() === '' ? String(index + 1) : mode.name.trim(), frequency, damping, ...gains(path, what, mode) }]
   })
   const rigid = typed.rigid.flatMap((term, index) => isTypedTerm(term)
