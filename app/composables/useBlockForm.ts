@@ -1,4 +1,5 @@
 import type { BlockDefinition } from '#shared/types/block'
+import { blocksClient } from '~/services/blocksClient'
 import { systemsClient } from '~/services/systemsClient'
 import { newBlock, readTypedBlock, typedBlock, type TypedBlock } from '~/services/TypedBlock'
 import { emptyGain, type TypedGain } from '~/services/TypedGain'
@@ -27,6 +28,7 @@ interface Kept {
 export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
   const store = useSystemStore()
   const toasts = useToastStore()
+  const { value: inUse, load: loadUse } = useLoad(() => blocksClient.list(systemId))
   const { value: parameters, error: parametersError, load: loadParameters } = useLoad(() => systemsClient.parameters(systemId))
 
   const kept = ref<Kept>({ version: null, typed: newBlock('Hz'), at: 'every' })
@@ -39,6 +41,8 @@ export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
   const unit = computed(() => detail.value?.system.frequencyUnit ?? 'Hz')
   const conditions = computed(() => detail.value?.conditions ?? [])
   const stored = computed(() => detail.value?.blocks.find(block => block.id === blockId) ?? null)
+  /** the loops and blocks that name it */
+  const usage = computed(() => inUse.value?.find(block => block.id === blockId) ?? null)
   const back = `/systems/${systemId}/set-up?part=blocks`
   const unsaved = computed(() => begun.value && textOf() !== asBegun.value)
   useUnsavedChanges(unsaved, () => draft.discard())
@@ -57,7 +61,7 @@ export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
   }
 
   async function begin() {
-    await Promise.all([store.open(systemId), loadParameters()])
+    await Promise.all([store.open(systemId), loadParameters(), loadUse()])
     if (detail.value === null || parameters.value === null) return
     kept.value = asStored()
     asBegun.value = textOf()
@@ -196,7 +200,7 @@ export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
 
   const loadError = computed(() => store.error ?? parametersError.value)
   return {
-    kept, typed, detail, stored, conditions, condition, isShared, gain, shownGain, shownIn, parameters, values, others, channel, back, unsaved, begun, begin, beginAfresh, loadError, restored: draft.restored,
+    kept, typed, detail, stored, usage, conditions, condition, isShared, gain, shownGain, shownIn, parameters, values, others, channel, back, unsaved, begun, begin, beginAfresh, loadError, restored: draft.restored,
     giveOwn, live, moved, isChanged, gainError, faults, otherProblems, tried, busy, errorAt, formError, conflict, save, keepMine, takeTheirs, whereWords, error,
   }
 }
