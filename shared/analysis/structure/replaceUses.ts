@@ -1,5 +1,6 @@
 import type { ExpressionInput } from '../../types/analysis'
 import type { BlockGain } from '../../types/block'
+import { orderBlocks } from '../blocks/orderBlocks'
 import { usesInText, type BlockUse } from './blockUses'
 
 /**
@@ -17,7 +18,8 @@ export function replaceUses(input: ExpressionInput, replaced: readonly { use: Bl
     const name = names.get(keyOf(use))
     return name === undefined ? written : written.slice(0, use.from) + name + written.slice(use.to)
   }, text)
-  for (const [name, gain] of Object.entries(blocks)) {
+  for (const name of orderBlocks(input.expression, input.blocks ?? {})) {
+    const gain = blocks[name]!
     if (gain.kind === 'expression') blocks[name] = { ...gain, expression: rewrite(gain.expression) }
   }
   return { ...input, expression: rewrite(input.expression), blocks }

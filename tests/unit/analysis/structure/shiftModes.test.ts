@@ -182,6 +182,12 @@ describe('which modes are moved', () => {
     expect(shiftModes({ expression: 'C*G', blocks: { C, G } }, roles)).toMatchObject({ modes: [], notes: [] })
   })
 
+  it('a block that the loop does not need may be broken', () => {
+    const G = expression('1/s^2+0.1/(s^2+0.02*s+100)')
+    const { modes } = shiftModes({ expression: 'C*G', blocks: { C, G, X: expression('G[3, 4]*(') } }, roles)
+    expect(modes[0]!.shifts.map(({ failure }) => failure)).toEqual([null, null, null, null])
+  })
+
   it('a mode without a name is counted', () => {
     expect(shiftModes({ expression: 'C*G', blocks: { C, G: table([['', 9, 0.01, 0.1], [' ', 10, 0.01, 0.1]]) } }, roles).modes.map(({ mode }) => mode)).toEqual(['mode 1', 'mode 2'])
   })
