@@ -30,18 +30,18 @@ export function responseAlgebra(sampleTime: number | undefined): LoopAlgebra<Res
         return { re: re * factor, im: im * factor }
       }
     },
-    add: (a, b) => (w) => {
+    add: (a, b) => once((w) => {
       const [x, y] = [a(w), b(w)]
       return { re: x.re + y.re, im: x.im + y.im }
-    },
-    multiply: (a, b) => w => product(a(w), b(w)),
+    }),
+    multiply: (a, b) => once(w => product(a(w), b(w))),
     invert: value => w => inverse(value(w)),
-    raise: (value, exponent) => (w) => {
+    raise: (value, exponent) => once((w) => {
       const base = exponent < 0 ? inverse(value(w)) : value(w)
       let power: Complex = { re: 1, im: 0 }
       for (let repeat = 0; repeat < Math.abs(exponent); repeat++) power = product(power, base)
       return power
-    },
+    }),
     delay: (value, delay) => {
       if (delay.sign === 0) return value
       const time = delay.toNumber()
@@ -51,6 +51,16 @@ export function responseAlgebra(sampleTime: number | undefined): LoopAlgebra<Res
     behindHold: (continuous, { gain }) => w => product(continuous(w), held(gain, w)),
     hasSeveralDelays: () => false,
     excess: () => null,
+  }
+}
+
+/** Keeps the last value: blocks of blocks of blocks would else be worked out over and over at one frequency. */
+function once(response: Response): Response {
+  let at = Number.NaN
+  let value: Complex = { re: Number.NaN, im: Number.NaN }
+  return (w) => {
+    if (w !== at) [at, value] = [w, response(w)]
+    return value
   }
 }
 

@@ -7,11 +7,11 @@ export const expressionLimits = {
   depth: 60,
   exponent: 50,
   /** order of the loop */
-  degree: 200,
+  degree: 300,
   /** degree of a polynomial that has to be multiplied out, and its roots found again */
-  expandedDegree: 120,
+  expandedDegree: 260,
   /** bits of an exact coefficient */
-  bits: 20_000,
+  bits: 40_000,
   /** different dead times in one sum */
   delays: 64,
 } as const

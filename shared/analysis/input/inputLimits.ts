@@ -7,6 +7,8 @@ export const inputLimits = {
   parameters: 1_000,
   nameLength: 500,
   blocks: 500,
+  /** characters of the expressions of all blocks together */
+  blockExpressionsLength: 100_000,
   blockNameLength: 60,
   /** of a state space */
   states: 200,

@@ -18,9 +18,15 @@ export function readBlocks(value: unknown, parameterNames: readonly string[]): R
   if (entries.length > inputLimits.blocks) {
     throw new AnalysisInputError(`blocks holds ${entries.length} names; at most ${inputLimits.blocks} are read.`, 'blocks')
   }
+  let characters = 0
   return Object.fromEntries(entries.map(([name, entry]) => {
     checkName(name, parameterNames)
-    return [name, atBlock(name, () => readBlockGain(entry))]
+    const gain = atBlock(name, () => readBlockGain(entry))
+    characters += gain.kind === 'expression' ? gain.expression.length : 0
+    if (characters > inputLimits.blockExpressionsLength) {
+      throw new AnalysisInputError(`The expressions of the blocks have more than ${inputLimits.blockExpressionsLength} characters together.`, `blocks.${name}.expression`)
+    }
+    return [name, gain]
   }))
 }
 

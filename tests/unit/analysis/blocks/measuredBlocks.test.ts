@@ -124,3 +124,11 @@ describe('a loop over a measured block', () => {
     expect(loop.input.measured.points[50]).toMatchObject({ frequency: inHz[50], re: expect.closeTo(im / w, 13), im: expect.closeTo(-re / w, 13) })
   })
 })
+
+describe('blocks of blocks over a measured one', () => {
+  it('that double at every step are worked out once each', () => {
+    const doubling = Object.fromEntries(Array.from({ length: 40 }, (_, i): [string, BlockGain] => [`B${i}`, gain(i === 0 ? 'G' : `(B${i - 1} + B${i - 1})/2`)]))
+    const { points } = measuredInputOf({ expression: 'B39', blocks: { ...doubling, G } })!.input.measured
+    expect(points[7]).toMatchObject({ re: G.points[7]!.re, im: G.points[7]!.im })
+  })
+})
