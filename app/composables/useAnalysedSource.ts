@@ -3,6 +3,7 @@ import { judgeAnalysis } from '#shared/analysis/criteria/judgeAnalysis'
 import type { LoopFigureData } from '#shared/plots/FigureData'
 import type { Criterion } from '#shared/types/criterion'
 import type { AnalysedSource, Source } from '#shared/types/source'
+import type { DrawnCurve, DrawRequest } from '~/workers/drawCurves'
 
 interface Options {
   source: Ref<Source | null>
@@ -12,6 +13,8 @@ interface Options {
   name: MaybeRefOrGetter<string>
   criteria: MaybeRefOrGetter<readonly Criterion[]>
   required: MaybeRefOrGetter<number | null>
+  /** other sources to be drawn in the same figures */
+  beside?: MaybeRefOrGetter<readonly DrawnCurve[]>
 }
 
 /** A stored source with its analysis, how that stands to the criteria, and its figures, sampled in the worker. */
@@ -33,23 +36,40 @@ export function useAnalysedSource(options: Options) {
     if (source === null) return
     try {
       const found = await options.read(source.id, mine.signal)
-      if (mine.signal.aborted) return
-      analysed.value = found
-      if (found.input === null || found.analysis === null) return
-      const drawn = await engine().draw({
-        title: toValue(options.title),
-        requiredVectorMargin: toValue(options.required),
-        curves: [{ name: toValue(options.name), input: found.input, analysis: found.analysis }],
-      })
-      if (!mine.signal.aborted) figures.value = drawn
+      if (!mine.signal.aborted) analysed.value = found
     }
     catch (error) {
       if (!mine.signal.aborted) problem.value = error instanceof Error ? error.message : String(error)
     }
   }
 
+  /** What the figures show: null while nothing is analysed. */
+  const wanted = computed((): DrawRequest | null => {
+    const { input, analysis } = analysed.value ?? { input: null, analysis: null }
+    if (input === null || analysis === null) return null
+    return {
+      title: toValue(options.title),
+      requiredVectorMargin: toValue(options.required),
+      curves: [{ name: toValue(options.name), input, analysis }, ...toValue(options.beside) ?? []],
+    }
+  })
+
+  /** The figures as they are stay in sight until those with other curves are drawn. */
+  async function draw(request: DrawRequest | null): Promise<void> {
+    if (request === null) return
+    const isNewest = () => wanted.value === request
+    try {
+      const drawn = await engine().draw(request)
+      if (isNewest()) figures.value = drawn
+    }
+    catch (error) {
+      if (isNewest()) problem.value = error instanceof Error ? error.message : String(error)
+    }
+  }
+
   if (import.meta.client) {
     watch(() => options.source.value === null ? null : `${options.source.value.id}/${options.source.value.version}`, () => void show(options.source.value), { immediate: true })
+    watch(wanted, request => void draw(request), { immediate: true })
     onScopeDispose(() => reading?.abort())
   }
 

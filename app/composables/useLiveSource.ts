@@ -2,6 +2,7 @@ import type { MaybeRefOrGetter } from 'vue'
 import type { MeasurementPreview } from '#shared/importers/previewMeasurement'
 import type { MeasurementProblem } from '#shared/importers/MeasurementProblem'
 import type { FrequencyUnit } from '#shared/types/analysis'
+import type { BlockGain } from '#shared/types/block'
 import type { Criterion } from '#shared/types/criterion'
 import { readTypedSource, type TypedProblem, type TypedSource } from '~/services/TypedSource'
 import type { AnalysisFailed, LiveAnalysis } from '~/workers/engine'
@@ -12,6 +13,7 @@ interface LiveFacts {
   /** values in the condition that is looked at, as typed */
   parameters: Record<string, number>
   parameterNames: string[]
+  blockNames: string[]
   criteria: Criterion[]
 }
 
@@ -33,18 +35,26 @@ const pause = 120
  * What the engine says of a source while it is typed, computed in the worker. `problems` are told at the field of their path,
  * `faults` at their place in the expression, `rows` by line of the measured file. The last good result stays in sight,
  * marked as old, while what is typed cannot be analysed.
+ *
+ * @param gains of the blocks in the condition looked at; they may be large, so they go to the worker once and not with every letter typed
  */
-export function useLiveSource(typed: MaybeRefOrGetter<TypedSource>, facts: MaybeRefOrGetter<LiveFacts | null>) {
+export function useLiveSource(typed: MaybeRefOrGetter<TypedSource>, facts: MaybeRefOrGetter<LiveFacts | null>, gains: MaybeRefOrGetter<Record<string, BlockGain>>) {
   const engine = useEngine()
   const preview = shallowRef<MeasurementPreview | null>(null)
   const result = shallowRef<LiveAnalysis | null>(null)
   const isOld = ref(false)
+  /** the gains that the worker has */
+  let given: Record<string, BlockGain> | null = null
   let timer: ReturnType<typeof setTimeout> | undefined
 
   const { answer, failure, pending, ask } = useLatest<Question, Answer>(async ({ typed, facts }) => {
     const answer: Answer = { result: null, problems: [], faults: [], rows: [] }
+    const blocks = toValue(gains)
+    if (blocks !== given) await engine().takeBlocks(toRaw(blocks))
+    given = blocks
     if (typed.kind === 'expression' && typed.expression.trim() !== '') {
-      answer.faults = (await engine().checkExpression(typed.expression, { variable: typed.sampled ? 'z' : 's', parameterNames: facts.parameterNames }))
+      const { parameterNames, blockNames } = facts
+      answer.faults = (await engine().checkExpression(typed.expression, { variable: typed.sampled ? 'z' : 's', parameterNames, ...blockNames.length > 0 && { blocks: blockNames } }))
         .map(({ message, position }) => ({ message, position }))
     }
     const read = readTypedSource(typed)
@@ -77,10 +87,12 @@ export function useLiveSource(typed: MaybeRefOrGetter<TypedSource>, facts: Maybe
     void ask(JSON.parse(JSON.stringify({ typed: toValue(typed), facts: known })) as Question)
   }
 
-  watch([() => toValue(typed), () => toValue(facts)], () => {
+  function refreshSoon(): void {
     clearTimeout(timer)
     timer = setTimeout(refresh, pause)
-  }, { deep: true })
+  }
+  watch([() => toValue(typed), () => toValue(facts)], refreshSoon, { deep: true })
+  watch(() => toValue(gains), refreshSoon)
   onMounted(refresh)
   onScopeDispose(() => clearTimeout(timer))
 

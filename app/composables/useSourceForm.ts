@@ -96,7 +96,13 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
       return value === null || Number.isNaN(value) ? [] : [[name, value]]
     })) as Record<string, number>
   })
-  const names = computed(() => kept.value.typed.kind === 'expression' ? namesInExpression(kept.value.typed.expression) : [])
+  const blocks = computed(() => detail.value?.blocks ?? [])
+  const gains = computed(() => condition.value === null ? {} : detail.value?.blockGains[condition.value.id] ?? {})
+  const used = computed(() => kept.value.typed.kind === 'expression' && condition.value !== null ? blocksUsed(kept.value.typed.expression, blocks.value, condition.value.id) : [])
+  const sampling = computed(() => samplingInWords(used.value.map(({ block, definition }) => ({ name: block.name, definition }))))
+  const completion = computed(() => completionNames({ blocks: blocks.value, parameters: detail.value?.parameters ?? [], gains: gains.value, conditionId: condition.value?.id ?? null }))
+  /** parameters that the expression itself names */
+  const names = computed(() => kept.value.typed.kind === 'expression' ? namesUsed(kept.value.typed.expression).filter(name => !blocks.value.some(block => block.name === name)) : [])
   const facts = computed(() => detail.value === null || !begun.value
     ? null
     : {
@@ -104,9 +110,10 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
         frequencyUnit: detail.value.system.frequencyUnit,
         parameters: parameters.value,
         parameterNames: [...new Set([...detail.value.parameters.map(parameter => parameter.name), ...Object.keys(parameters.value)])],
+        blockNames: blocks.value.map(block => block.name),
         criteria: detail.value.criteria,
       })
-  const live = useLiveSource(() => kept.value.typed, facts)
+  const live = useLiveSource(() => kept.value.typed, facts, gains)
   const { answer, preview } = live
 
   async function takeFile(chosen: File) {
@@ -187,7 +194,7 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
   }
 
   return {
-    kept, detail, stored, condition, others, names, back, unsaved, begun, begin, beginAfresh, restored: draft.restored,
+    kept, detail, stored, condition, others, names, used, sampling, completion, back, unsaved, begun, begin, beginAfresh, restored: draft.restored,
     live, fileName, takeFile, rowProblems, fieldError, otherProblems,
     busy, errorAt, formError, conflict, save, keepMine, takeTheirs,
   }

@@ -6,7 +6,7 @@ import type { Upload } from '#shared/types/source'
 import { callApi } from './apiClient'
 
 export type SystemFields = Pick<System, 'name' | 'customer' | 'documentNumber' | 'frequencyUnit' | 'description'>
-export type LoopFields = Pick<Loop, 'code' | 'name' | 'axis' | 'breakPoint' | 'otherLoops' | 'notes'>
+export type LoopFields = Pick<Loop, 'code' | 'name' | 'axis' | 'breakPoint' | 'otherLoops' | 'breakAt' | 'loopStates' | 'notes'>
 export type ConditionFields = Pick<OperatingCondition, 'code' | 'name' | 'coordinates' | 'tags' | 'notes'>
 export type ParameterFields = Pick<Parameter, 'name' | 'unit' | 'notes' | 'values'> & { id?: number, version?: number }
 

@@ -1,3 +1,5 @@
+import { gainDecreaseCaution } from '#shared/formatting/gainDecreaseCaution'
+import { formatDecibels } from '#shared/formatting/formatDecibels'
 import { verdictOrder } from '#shared/analysis/criteria/verdictOrder'
 import type { CriterionQuantity, CriterionRow, Verdict } from '#shared/types/criterion'
 import type { BoardCell } from '#shared/types/system'
@@ -21,6 +23,10 @@ export interface BoardValue {
   crossings: string | null
   /** what a reader must know of the lists: 'not proven', '2 untrusted gaps', null where every entry is proven */
   caution: string | null
+  /** where falling gain reaches -1: briefly, and in full; null where it does not, or where the value shown says it */
+  gainFall: { brief: string, full: string } | null
+  /** why the verdict cannot be right beside that of another loop of the same closed system */
+  disagreement: string | null
 }
 
 const rank = (verdict: Verdict) => verdictOrder.indexOf(verdict)
@@ -57,7 +63,7 @@ function standingOf(cell: BoardCell, shown: CriterionRow | null): string {
 function cautionOf(cell: BoardCell): string | null {
   if (cell.analysis === null) return null
   const { proven, exceptions } = cell.analysis.coverage
-  if (cell.source?.kind === 'measured') {
+  if (cell.source?.kind === 'measured' || cell.analysis.samples !== undefined) {
     if (exceptions.length === 0) return null
     return exceptions.length === 1 ? '1 untrusted gap' : `${exceptions.length} untrusted gaps`
   }
@@ -69,6 +75,13 @@ function textOf(cell: BoardCell, shown: CriterionRow | null): string {
   if (cell.failure !== null || cell.analysis === null) return 'cannot be analysed'
   if (cell.analysis.stability.verdict !== 'stable') return cell.analysis.stability.verdict
   return shown === null ? 'no limit' : marginInWords(shown)
+}
+
+function gainFallOf({ analysis }: BoardCell, shown: CriterionRow | null): BoardValue['gainFall'] {
+  const decrease = analysis?.summary?.gainDecrease ?? null
+  const full = gainDecreaseCaution(analysis?.summary ?? null)
+  if (decrease === null || full === null || shown?.direction === 'fall') return null
+  return { brief: `if gain falls: ${formatDecibels(decrease)} left`, full }
 }
 
 export function boardValue(cell: BoardCell, quantity: CriterionQuantity): BoardValue {
@@ -83,5 +96,7 @@ export function boardValue(cell: BoardCell, quantity: CriterionQuantity): BoardV
     ratio: stable && shown !== null ? ratioOf(shown) : null,
     crossings: cell.analysis === null ? null : `${cell.analysis.gainCrossovers.length} gain · ${cell.analysis.phaseCrossovers.length} phase`,
     caution: cautionOf(cell),
+    gainFall: gainFallOf(cell, stable ? shown : null),
+    disagreement: cell.disagreement,
   }
 }

@@ -2,18 +2,19 @@ import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
 import { analyseLoop } from '#shared/analysis/analyseLoop'
 import { judgeAnalysis } from '#shared/analysis/criteria/judgeAnalysis'
 import { checkExpression } from '#shared/analysis/expressions/checkExpression'
-import { prepareLoopGain } from '#shared/analysis/prepareLoopGain'
+import { closedLoopPoles } from '#shared/analysis/structure/closedLoopPoles'
+import { shiftModes } from '#shared/analysis/structure/shiftModes'
 import { readLoopInput } from '#shared/analysis/readLoopInput'
 import type { MeasurementProblem } from '#shared/importers/MeasurementProblem'
 import { previewMeasurement, type MeasurementPreview } from '#shared/importers/previewMeasurement'
 import { readMeasurement } from '#shared/importers/readMeasurement'
-import { buildLoopFigureData, type CurveSource } from '#shared/plots/buildLoopFigureData'
-import { curveSourceOf } from '#shared/plots/curveSourceOf'
 import type { LoopFigureData } from '#shared/plots/FigureData'
 import { loopInputFromDefinition, type DefinitionFacts } from '#shared/sources/loopInputFromDefinition'
-import type { LoopAnalysis, LoopInput } from '#shared/types/analysis'
+import type { LoopAnalysis } from '#shared/types/analysis'
+import type { BlockGain } from '#shared/types/block'
 import type { Criterion, Judgement } from '#shared/types/criterion'
 import type { MeasuredDefinition, SourceDefinition } from '#shared/types/source'
+import { drawCurves } from './drawCurves'
 import { blockLook, type BlockLook, type LookRequest } from './blockLook'
 import { UploadShelf } from './UploadShelf'
 
@@ -36,37 +37,25 @@ export interface LiveRequest {
   criteria: Criterion[]
 }
 
-export interface DrawRequest {
-  title: string
-  requiredVectorMargin: number | null
-  curves: [DrawnCurve, ...DrawnCurve[]]
-}
-
-export interface DrawnCurve {
-  name: string
-  input: LoopInput
-  analysis: LoopAnalysis
-}
-
 const requiredVectorMarginOf = (criteria: readonly Criterion[]) => criteria.find(criterion => criterion.quantity === 'vectorMargin')?.limit ?? null
-
-const curveSource = ({ name, input, analysis }: DrawnCurve): CurveSource => curveSourceOf(name, input, analysis, prepareLoopGain(input))
 
 function analyseDefinition({ title, name, definition, facts, criteria }: LiveRequest): LiveAnalysis | AnalysisFailed {
   try {
-    const input = readLoopInput(loopInputFromDefinition(definition, facts))
+    const input = readLoopInput(loopInputFromDefinition(definition, { ...facts, blocks: knownBlocks }))
     const analysis = analyseLoop(input)
-    const figures = draw({ title, requiredVectorMargin: requiredVectorMarginOf(criteria), curves: [{ name, input, analysis }] })
+    const figures = drawCurves({ title, requiredVectorMargin: requiredVectorMarginOf(criteria), curves: [{ name, input, analysis }] })
     return { analysis, judgement: judgeAnalysis(analysis, criteria), figures }
   }
   catch (error) {
-    if (error instanceof AnalysisInputError) return { failure: { message: error.message, path: error.path, ...error.position !== undefined && { position: error.position } } }
+    if (error instanceof AnalysisInputError) return failureOf(error, definition)
     throw error
   }
 }
 
-function draw({ title, requiredVectorMargin, curves: [first, ...others] }: DrawRequest): LoopFigureData {
-  return buildLoopFigureData({ title, requiredVectorMargin, curves: [curveSource(first), ...others.map(curveSource)] })
+/** A fault of the loop gain at its character as typed: a dead time beside an expression stands around it, in brackets that nobody typed. */
+function failureOf({ message, path, position }: AnalysisInputError, definition: SourceDefinition): AnalysisFailed {
+  const before = path === 'expression' && definition.kind === 'expression' && (definition.deadTime ?? 0) !== 0 ? 1 : 0
+  return { failure: { message, path, ...position !== undefined && { position: Math.max(0, position - before) } } }
 }
 
 /** What a file of state-space matrices holds, without the numbers. */
@@ -90,6 +79,9 @@ function lookAtBlock(request: LookRequest): { look: BlockLook } | AnalysisFailed
   }
 }
 
+/** Gains of the system's blocks in the condition looked at; they stay in the worker, since they may be large. */
+let knownBlocks: Record<string, BlockGain> = {}
+
 /** Text of the file that was opened last; it stays in the worker, since it may be large. */
 let openedText = ''
 
@@ -97,11 +89,22 @@ let openedText = ''
 export const engine = {
   checkExpression,
 
+  /** The blocks that expressions may name from now on. */
+  takeBlocks(gains: Record<string, BlockGain>): void {
+    knownBlocks = gains
+  },
+
+  /** The poles of the closed loop, each with the open-loop pole it comes from. */
+  closedLoopPoles,
+
+  /** The margins with each flexible mode moved. */
+  shiftModes,
+
   /** Analyses a model as it is typed. Failures of the input are part of the answer, with the field and the place. */
   analyse: (request: LiveRequest): LiveAnalysis | AnalysisFailed => analyseDefinition(request),
 
   /** The figures of a loop that was analysed before. */
-  draw,
+  draw: drawCurves,
 
   async openFile(file: Blob): Promise<MeasurementPreview> {
     openedText = await file.text()

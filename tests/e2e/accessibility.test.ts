@@ -1,12 +1,9 @@
-import { createRequire } from 'node:module'
-import type { AxeResults } from 'axe-core'
 import type { Browser, BrowserContext, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { axeFaults, type AxeFault } from './axeFaults'
 import { openBrowser, signIn } from './openBrowser'
 import { startDemoServer, type DemoServer } from './startDemoServer'
 
-const axePath = createRequire(import.meta.url).resolve('axe-core/axe.min.js')
-const rules = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa']
 const password = 'keep-a-wide-berth'
 
 let server: DemoServer
@@ -28,20 +25,12 @@ async function newPage(): Promise<Page> {
   return context.newPage()
 }
 
-interface Found { rule: string, help: string, places: string[] }
-
 /** Every fault of the page as it stands once `landmark` is there. */
-async function faultsAt(page: Page, path: string, landmark: string): Promise<Found[]> {
+async function faultsAt(page: Page, path: string, landmark: string): Promise<AxeFault[]> {
   await page.goto(server.url + path)
   await page.getByRole('heading', { name: landmark }).first().waitFor()
   await page.waitForLoadState('networkidle')
-  await page.addScriptTag({ path: axePath })
-  const results = await page.evaluate(async (values): Promise<AxeResults> => {
-    const { axe } = globalThis as unknown as { axe: typeof import('axe-core') }
-    return axe.run(document, { runOnly: { type: 'tag', values } })
-  }, rules)
-  expect(results.passes.length, 'axe looked at the page').toBeGreaterThan(5)
-  return results.violations.map(({ id, help, nodes }) => ({ rule: id, help, places: nodes.map(({ html, target }) => `${target.join(' ')}: ${html.slice(0, 200)}`) }))
+  return axeFaults(page)
 }
 
 async function findPlaces(): Promise<void> {

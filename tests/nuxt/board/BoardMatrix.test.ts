@@ -28,6 +28,14 @@ describe('the matrix of the board', () => {
     expect(texts[3]).toBe('no data')
   })
 
+  it('flags both cells of break points that disagree', async () => {
+    const words = 'Opened here the closed loop is stable, opened at TE-P the same closed loop is unstable.'
+    const matrix = await mount([buildCell(1, 1, buildAnalysis(), { disagreement: words }), buildCell(2, 1, buildAnalysis(unstable), { disagreement: words })])
+    const cellsShown = matrix.findAll('[role=gridcell]')
+    expect(cellsShown.map(cell => cell.text().includes('break points disagree'))).toEqual([true, false, true, false])
+    expect(cellsShown[0]!.find('[title]').attributes('title')).toBe(words)
+  })
+
   it('is one stop of the tab key; arrow keys walk it and stay inside', async () => {
     const matrix = await mount(cells)
     const links = matrix.findAll<HTMLElement>('[role=gridcell] a')

@@ -43,6 +43,16 @@ describe('the table of every crossing', () => {
     ])
   })
 
+  it('tells where the continuous approximation of a sampled loop is wrong, beside each crossing, and has no such column otherwise', async () => {
+    const approximation = { gain: -0.2, phase: -3.4, distance: 0.02 }
+    const analysis = buildAnalysis({ gainCrossovers: [{ frequency: 10, phaseMargin: 60, delayMargin: 0.1, slope: 'falling', approximation }] })
+    const table = await mountSuspended(CrossingTable, { props: { analysis } })
+    expect(table.findAll('thead th').map(head => head.text())).toContain('Approximation')
+    expect(rowsOf(table)[0]).toContain('lag 3.40 deg more, 0.20 dB less')
+    expect((await mountSuspended(CrossingTable, { props: { analysis, compact: true } })).text()).toContain('approximation: lag 3.40 deg more, 0.20 dB less')
+    expect((await mountSuspended(CrossingTable, { props: { analysis: buildAnalysis() } })).text()).not.toContain('pproximation')
+  })
+
   it('lights the mark of the row under the pointer or the focus', async () => {
     const table = await mountSuspended(CrossingTable, { props: { analysis: buildAnalysis() }, attachTo: document.body })
     await table.findAll('tbody tr')[1]!.trigger('mouseenter')

@@ -39,6 +39,14 @@ describe('what a cell of the board shows', () => {
     expect(boardValue(buildCell(1, 1, buildAnalysis()), 'vectorMargin').caution).toBeNull()
   })
 
+  it('cautions briefly where falling gain reaches -1, unless the value shown says it', () => {
+    const analysis = buildAnalysis({ phaseCrossovers: [{ frequency: 1, gainMargin: -6.1, slope: 'rising' }], summary: { ...buildAnalysis().summary!, gainDecrease: -6.1 } })
+    expect(boardValue(buildCell(1, 1, analysis), 'vectorMargin').gainFall).toEqual({ brief: 'if gain falls: 6.1 dB left', full: 'gain falls in saturation or at start-up: 6.1 dB left' })
+    expect(boardValue(buildCell(1, 1, analysis), 'gainMargin').gainFall).toBeNull()
+    expect(boardValue(buildCell(1, 1, buildAnalysis()), 'vectorMargin').gainFall).toBeNull()
+    expect(boardValue(buildCell(1, 1, buildAnalysis(unstable)), 'vectorMargin').gainFall).toBeNull()
+  })
+
   it('says so where no crossing limits the margin', () => {
     expect(boardValue(buildCell(1, 1, buildAnalysis({ phaseCrossovers: [] })), 'gainMargin').text).toBe('no crossing')
   })
