@@ -26,16 +26,20 @@ const MOST_LEFT = 1e-4
  * gains some 13 digits. `lead` is the leading coefficient, `scale`
  * the size of the numbers that the values come from, below 2^-104 of which a root is not known.
  *
+ * Roots of a cluster that rounding does not tell apart come with the large corrections that are left of them.
+ *
  * @throws RangeError when the iteration does not settle
  */
 export function refineDoubleDoubleRoots(value: PreciseValue, lead: ScaledNumber, scale: number, start: { re: Float64Array, im: Float64Array }): DoubleDoubleRoots {
   const refinement = new Refinement(value, lead, scale, start)
   if (!refinement.settle(PAIRED_SWEEPS, true)) {
     refinement.spread()
-    if (!refinement.settle(FREE_SWEEPS, false)) throw new RangeError('the roots do not settle')
+    const settled = refinement.settle(FREE_SWEEPS, false)
     pairDoubleDoubleRoots(refinement.roots)
     refinement.separate()
     refinement.measure()
+    // roots of an exact multiple go round one another for ever, as near as rounding lets them
+    if (!settled && refinement.roots.correction.some(size => !(size <= MOST_LEFT * scale))) throw new RangeError('the roots do not settle')
   }
   return refinement.roots
 }

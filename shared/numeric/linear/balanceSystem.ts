@@ -10,8 +10,8 @@ const MOST_SWEEPS = 60
 const FARTHEST = 400
 
 /**
- * Scales the states by powers of two so that the row and the column of each state in [A B; C 0] are of about one size, B and C first brought
- * to the size of A: rounding relative to the norm of A then spares small entries.
+ * Scales the states by powers of two so that the row and the column of each state in A are of about one size (its diagonal aside): rounding relative to the norm
+ * of A then spares small entries. B and C go along and have no say: where they are large, slow modes would be spoiled.
  * Sources: E. E. Osborne, 'On pre-conditioning of matrices', J. ACM 7 (1960); B. N. Parlett, C. Reinsch, 'Balancing a matrix for calculation
  * of eigenvalues and eigenvectors', Numerische Mathematik 13 (1969).
  */
@@ -19,16 +19,11 @@ export function balanceSystem(a: readonly (readonly number[])[], b: readonly (re
   const n = a.length
   const exponents = new Int32Array(n)
   const scaled = a.map(row => row.slice())
-  const inflow = b.map(row => row.reduce((sum, value) => sum + Math.abs(value), 0))
-  const outflow = Array.from({ length: n }, (_, i) => c.reduce((sum, row) => sum + Math.abs(row[i]!), 0))
-  const size = largest(scaled.map(row => row.reduce((sum, value) => Math.max(sum, Math.abs(value)), 0)))
-  const inScale = size > 0 && largest(inflow) > 0 ? size / largest(inflow) : 1
-  const outScale = size > 0 && largest(outflow) > 0 ? size / largest(outflow) : 1
   for (let sweep = 0, changed = true; changed && sweep < MOST_SWEEPS; sweep++) {
     changed = false
     for (let i = 0; i < n; i++) {
-      let column = outflow[i]! * outScale * 2 ** exponents[i]!
-      let row = inflow[i]! * inScale * 2 ** -exponents[i]!
+      let column = 0
+      let row = 0
       for (let j = 0; j < n; j++) {
         if (j === i) continue
         column += Math.abs(scaled[j]![i]!)
@@ -54,8 +49,4 @@ export function balanceSystem(a: readonly (readonly number[])[], b: readonly (re
     c: c.map(row => row.map((value, i) => value * 2 ** exponents[i]!)),
     exponents,
   }
-}
-
-function largest(values: number[]): number {
-  return values.reduce((most, value) => Math.max(most, value), 0)
 }

@@ -1,4 +1,6 @@
 const MOST_STEPS = 60
+/** Steps after which an entry below the diagonal counts as zero beside the norm and no longer beside its neighbours: rounding keeps a defective zero from less. */
+const PATIENCE = 20
 
 /**
  * Eigenvalues of a real upper Hessenberg matrix (size by size, row by row; overwritten) by the QR algorithm with double shifts, in doubles:
@@ -18,7 +20,7 @@ export function hessenbergEigenvalues(h: Float64Array, size: number): { re: Floa
     let start = last
     for (; start > 0; start--) {
       const around = Math.abs(h[(start - 1) * n + start - 1]!) + Math.abs(h[start * n + start]!)
-      if (Math.abs(h[start * n + start - 1]!) <= 2 ** -53 * (around === 0 ? norm : around)) {
+      if (Math.abs(h[start * n + start - 1]!) <= 2 ** -53 * (around === 0 || steps >= PATIENCE ? norm : around)) {
         h[start * n + start - 1] = 0
         break
       }
