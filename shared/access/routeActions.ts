@@ -51,6 +51,7 @@ export const routeActions = {
   'GET /api/systems/[systemId]/blocks': 'see loops, data and drafts',
   'POST /api/systems/[systemId]/blocks': 'change loops, criteria and drafts',
   'PUT /api/systems/[systemId]/blocks/order': 'change loops, criteria and drafts',
+  'POST /api/systems/[systemId]/blocks/effects': 'change loops, criteria and drafts',
   'POST /api/systems/[systemId]/matrices': 'change loops, criteria and drafts',
   'POST /api/systems/[systemId]/uploads': 'change loops, criteria and drafts',
   'GET /api/systems/[systemId]/reports': 'read issued revisions',

@@ -47,6 +47,6 @@ export async function readLoop(loopId: number, context: OpenContext): Promise<Lo
   const sources = await SourceRow.findAll({ where: { loopId, conditionId: conditionIds }, order: ['id'] })
   const gains = new BlockGains(blocks, system)
   const blockGains = Object.fromEntries(await Promise.all(conditions.map(async condition => [condition.id, await gains.allIn(condition)] as const)))
-  const cells = await judgeCells(system, [loopId], conditionIds, criteria, context)
+  const cells = await judgeCells(system, [loop], conditionIds, criteria, loops, context)
   return { loop, loops: loops.map(({ id, code, name }) => ({ id, code, name })), system, conditions, parameters, blocks, blockGains, criteria, sources: sources.map(presentSource), cells }
 }

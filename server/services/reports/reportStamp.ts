@@ -1,8 +1,8 @@
 import type { ReportRow } from '../../database/models/ReportRow'
 import { ReportRow as Reports } from '../../database/models/ReportRow'
 import { RevisionRow } from '../../database/models/RevisionRow'
+import { SourceRow } from '../../database/models/SourceRow'
 import { listParameters } from '../parameters/listParameters'
-import { listSourcesOfRecord } from '../sources/listSourcesOfRecord'
 import { readSystem } from '../systems/readSystem'
 import { findBrand } from '../brand/findBrand'
 import { sha256Of } from '../../reports/sha256Of'
@@ -16,7 +16,7 @@ export async function reportStamp(report: ReportRow): Promise<string> {
     Reports.findByPk(report.id, { attributes: ['version'] }), readSystem(report.systemId), listParameters(report.systemId),
     RevisionRow.findAll({ where: { reportId: report.id }, attributes: ['id', 'state'], order: [['id', 'ASC']] }), findBrand(),
   ])
-  const sources = await listSourcesOfRecord(loops.map(({ id }) => id), conditions.map(({ id }) => id))
+  const sources = await SourceRow.findAll({ where: { loopId: loops.map(({ id }) => id), conditionId: conditions.map(({ id }) => id) }, attributes: ['id', 'version'], order: ['id'] })
   const versions = (rows: readonly { id: number, version: number }[]) => rows.map(({ id, version }) => [id, version])
   return sha256Of(JSON.stringify([
     newest?.version, system.version, versions(loops), versions(conditions), versions(blocks), criteria, parameters, versions(sources), revisions.map(({ id, state }) => [id, state]), brand.version,

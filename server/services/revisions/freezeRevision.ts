@@ -14,15 +14,26 @@ import { writeSnapshot } from '../../reports/snapshotText'
 import type { ServiceContext } from '../context'
 import { findReport } from '../reports/findReport'
 import { reportStamp } from '../reports/reportStamp'
+import { judgeCells } from '../systems/judgeCells'
+import { readSystem } from '../systems/readSystem'
 import { presentRevisions } from './listRevisions'
 
 /** Times a freeze is begun again when somebody changes the system meanwhile. */
 const mostTries = 3
 
 /** Throws 'refused' with every obstacle in words where the report cannot be frozen. */
-async function assertFreezable(report: ReportRow): Promise<void> {
-  const obstacles = freezeObstacles(await coverageOf(report))
+async function assertFreezable(report: ReportRow, context: ServiceContext): Promise<void> {
+  const covered = await coverageOf(report)
+  const obstacles = freezeObstacles({ ...covered, disagreements: await disagreementsIn(report, covered, context) })
   if (obstacles.length > 0) throw new AppError('refused', `This report cannot be frozen yet. ${obstacles.join(' ')}`, { details: { obstacles } })
+}
+
+async function disagreementsIn(report: ReportRow, { loops, conditions }: Awaited<ReturnType<typeof coverageOf>>, context: ServiceContext) {
+  const all = await readSystem(report.systemId)
+  const cells = await judgeCells(all.system, loops, conditions.map(condition => condition.id), all.criteria, all.loops, context)
+  return cells.flatMap(({ loopId, conditionId, disagreement }) => disagreement === null
+    ? []
+    : [{ loopCode: loops.find(({ id }) => id === loopId)?.code ?? '', conditionCode: conditions.find(({ id }) => id === conditionId)?.code ?? '', words: disagreement }])
 }
 
 /** The revision stored if nothing changed since the stamp was taken; null where it must be tried again. */
@@ -30,7 +41,7 @@ async function tryToFreeze(reportId: number, changeNote: string, context: Servic
   // The stamp first: whatever is read after it and changed in between, the report's own row too, differs from it at the end.
   const stamp = await reportStamp(await findReport(reportId))
   const report = await findReport(reportId)
-  await assertFreezable(report)
+  await assertFreezable(report, context)
   const revisions = await RevisionRow.findAll({ where: { reportId } })
   const draft = { ...nextDraft(revisions), changeNote }
   const snapshot = await collectSnapshot(report, draft, context)
@@ -55,7 +66,8 @@ async function tryToFreeze(reportId: number, changeNote: string, context: Servic
 
 /**
  * Freezes a report: takes a snapshot of every input and result as the next draft of the letter after the newest issued one, and queues its
- * rendering. Throws 'refused' with the obstacles in words where a loop lacks its break point, or nothing is covered.
+ * rendering. Throws 'refused' with the obstacles in words where a loop lacks its break point, break points of one
+ * closed system disagree, or nothing is covered.
  */
 export async function freezeRevision(reportId: number, { changeNote }: NewRevision, context: ServiceContext): Promise<Revision> {
   for (let attempt = 1; attempt <= mostTries; attempt++) {

@@ -7,9 +7,9 @@ type Pair = Pick<ReportSnapshot['cells'][number], 'loopCode' | 'conditionCode'>
 const keptRevisions = 200
 const kept = new Map<number, Pair[]>()
 
-/** Pairs of a model source that are not proven or have no analysis. Measured ones carry their gaps instead, and a pair without a source says 'no data'. */
+/** Pairs of a model source that are not proven or have no analysis. Measured ones, by a measured block too, carry their gaps instead, and a pair without a source says 'no data'. */
 export const unprovenOf = ({ cells }: ReportSnapshot): Pair[] => cells
-  .filter(({ source, analysis }) => source !== null && source.kind !== 'measured' && analysis?.coverage.proven !== true)
+  .filter(({ source, analysis }) => source !== null && source.kind !== 'measured' && analysis?.samples === undefined && analysis?.coverage.proven !== true)
   .map(({ loopCode, conditionCode }) => ({ loopCode, conditionCode }))
 
 export async function unprovenCells(revisionId: number): Promise<Pair[]> {

@@ -6,6 +6,6 @@ import { readSystem } from './readSystem'
 /** The board of a system: every loop in every condition, by its source of record. */
 export async function readBoard(systemId: number, context: OpenContext): Promise<Board> {
   const { system, loops, conditions, criteria } = await readSystem(systemId)
-  const cells = await judgeCells(system, loops.map(loop => loop.id), conditions.map(condition => condition.id), criteria, context)
+  const cells = await judgeCells(system, loops, conditions.map(condition => condition.id), criteria, loops, context)
   return { system, loops, conditions, criteria, cells }
 }
