@@ -1,5 +1,7 @@
 import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
+import { measuredInputOf } from '#shared/analysis/blocks/measuredInputOf'
 import { lowerExpression } from '#shared/analysis/expressions/lowerExpression'
+import { namesInExpression } from '#shared/analysis/expressions/namesInExpression'
 import { AppError } from '#shared/errors/AppError'
 import type { ExpressionInput } from '#shared/types/analysis'
 import type { ExpressionDefinition } from '#shared/types/source'
@@ -28,17 +30,20 @@ export async function assertBuildable(definition: ExpressionDefinition, system: 
     if (tried.has(build)) continue
     tried.add(build)
     try {
-      lowerExpression(input)
+      if (measuredInputOf(input) === null) lowerExpression(input)
     }
     catch (error) {
-      // What is wrong in a block is told where that is looked at; the expression is right until it is mended.
       if (!(error instanceof AnalysisInputError)) throw error
-      if (error.path !== 'expression') continue
-      const { message, position } = error
-      throw new AppError('invalidInput', `${message} (in the condition ${condition.code})`, { path: 'definition.expression', ...(position !== undefined && { details: { position } }), cause: error })
+      // A block that cannot be taken at all is told where its loops are looked at; the expression is right until that is mended.
+      if (/^blocks\.\w+$/.test(error.path)) continue
+      const position = error.path === 'expression' ? error.position : placeOfBlock(definition.expression, error.path)
+      throw new AppError('invalidInput', `${error.message} (in the condition ${condition.code})`, { path: 'definition.expression', ...(position !== undefined && { details: { position } }), cause: error })
     }
   }
 }
+
+/** Where the block of a path as in 'blocks.G.sampleTime' is named; the start where only another block names it. */
+const placeOfBlock = (expression: string, path: string) => namesInExpression(expression).find(({ name }) => name === path.split('.')[1])?.position ?? 0
 
 function unlessMissing(error: unknown): null {
   if (error instanceof AnalysisInputError) return null
