@@ -1,6 +1,6 @@
 import { z } from 'zod'
 import { finiteNumber, idField, lineText, notesField, versionField } from './fields'
-import { averagesField, coefficientsField, complexNumbersField, deadTimeField, expressionField, mappingSchema, sampleTimeField } from './gain'
+import { averagesField, coefficientsField, complexNumbersField, deadTimeField, expressionField, mappingSchema, poleCountField, sampleTimeField } from './gain'
 import { limits } from './limits'
 import { parameterNameField } from './parameter'
 
@@ -59,6 +59,8 @@ export const blockDefinitionSchema = z.discriminatedUnion('kind', [
     uploadId: idField,
     mapping: mappingSchema.refine(mapping => mapping.quantity === 'loopGain', { path: ['quantity'], message: 'A block is measured from its input to its output: take its response itself.' }),
     averages: averagesField,
+    openLoopUnstablePoles: poleCountField,
+    openLoopOriginPoles: poleCountField,
   }),
   z.strictObject({ kind: z.literal('deadTime'), deadTime: z.number('Must be a number.').nonnegative('Must not be under 0.'), unit: z.enum(['s', 'samples'], 'Must be s or samples.') }),
   z.strictObject({

@@ -10,6 +10,9 @@ export const sampleTimeField = z.number('Must be a number.').positive('Must be o
 export const expressionField = z.string().max(limits.expression, `At most ${limits.expression} characters.`)
 export const averagesField = z.int('Must be a whole number.').positive('Must be over 0.').optional()
 
+/** Poles counted beyond or on the stability boundary. */
+export const poleCountField = z.int('Must be a whole number.').nonnegative('Must not be under 0.').max(limits.order).optional()
+
 const column = z.int('Must be a whole number.').nonnegative('Columns are counted from 0.').max(1000)
 
 /** How the columns of an uploaded response are read. */

@@ -1,11 +1,11 @@
 import { z } from 'zod'
 import { finiteNumber, idField, lineField, nameField, versionField } from './fields'
-import { averagesField, coefficientsField, complexNumbersField, deadTimeField, expressionField, mappingSchema, sampleTimeField } from './gain'
+import { averagesField, coefficientsField, complexNumbersField, deadTimeField, expressionField, mappingSchema, poleCountField, sampleTimeField } from './gain'
 import { limits } from './limits'
 
 const deadTime = deadTimeField
 const sampleTime = sampleTimeField.optional()
-const poleCount = z.int('Must be a whole number.').nonnegative('Must not be under 0.').max(limits.order).optional()
+const poleCount = poleCountField
 
 /** How a loop's gain is given. Whether it can be analysed is the engine's to say. */
 export const sourceDefinitionSchema = z.discriminatedUnion('kind', [

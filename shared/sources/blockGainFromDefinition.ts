@@ -27,11 +27,14 @@ export function blockGainFromDefinition(definition: BlockDefinition, facts: Bloc
     case 'sections': return sectionsGain(definition)
     case 'measured': {
       const { points = [], frequencyUnit } = facts
+      const { averages, openLoopUnstablePoles, openLoopOriginPoles } = definition
       if (points.length === 0) throw new AnalysisInputError('No points were read from the file.', 'mapping')
       const scale = scaleOfFrequency(definition.mapping.frequencyUnit, frequencyUnit)
       return {
         kind: 'measured', points: points.map(point => ({ ...point, frequency: point.frequency * scale })),
-        ...(definition.averages !== undefined && { averages: definition.averages }),
+        ...(averages !== undefined && { averages }),
+        ...(openLoopUnstablePoles !== undefined && { openLoopUnstablePoles }),
+        ...(openLoopOriginPoles !== undefined && { openLoopOriginPoles }),
       }
     }
     default: return definition

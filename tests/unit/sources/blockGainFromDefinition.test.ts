@@ -44,10 +44,10 @@ describe('the gain of a block from its stored definition', () => {
       .toEqual({ kind: 'stateSpace', a: [[-1]], b: [[1]], c: [[1], [2]], d: [[0], [0]], inputs: ['torque'], outputs: ['rate', 'angle'], sampleTime: 0.001 })
   })
 
-  it('turns measured frequencies into the unit of the loop, and refuses a response without points', () => {
+  it('turns measured frequencies into the unit of the loop, hands on what is stated of its poles, and refuses a response without points', () => {
     const mapping = { frequencyColumn: 0, frequencyUnit: 'Hz', form: 'dB and degrees', firstColumn: 1, secondColumn: 2, coherenceColumn: null, quantity: 'loopGain' } as const
-    const measured: BlockDefinition = { kind: 'measured', uploadId: 1, mapping, averages: 8 }
-    expect(blockGainFromDefinition(measured, { ...facts, points: [{ frequency: 1, re: 1, im: 0 }] })).toEqual({ kind: 'measured', points: [{ frequency: 2 * Math.PI, re: 1, im: 0 }], averages: 8 })
+    const measured: BlockDefinition = { kind: 'measured', uploadId: 1, mapping, averages: 8, openLoopOriginPoles: 1 }
+    expect(blockGainFromDefinition(measured, { ...facts, points: [{ frequency: 1, re: 1, im: 0 }] })).toEqual({ kind: 'measured', points: [{ frequency: 2 * Math.PI, re: 1, im: 0 }], averages: 8, openLoopOriginPoles: 1 })
     expect(faultOf(() => read(measured))).toMatchObject({ path: 'mapping' })
   })
 
