@@ -66,6 +66,13 @@ export class BlockScope<V> {
     return evaluateTree(tree, this.scope)
   }
 
+  /** Why an expression that is zero is refused, with the blocks that are. */
+  zero(): AnalysisInputError {
+    const names = [...this.parts].filter(([, part]) => part === null).map(([name]) => name.replace('[', ' in its channel [').replace(/\d+/g, number => `${Number(number) + 1}`))
+    const because = names.length === 0 ? '' : ` What is zero: the block ${names.join(', the block ')}.`
+    return new AnalysisInputError(`The expression is zero: a loop gain of zero has no crossings to find.${because}`, 'expression', this.tree.position)
+  }
+
   private expressionBlock(name: string, gain: ExpressionGain, names: Parameters<typeof parseExpression>[1]): LoopPart<V> | null {
     const tree = parseExpression(gain.expression, names)
     const part = this.arithmetic.brackets(evaluateTree(tree, this.scope))

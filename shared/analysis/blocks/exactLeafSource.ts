@@ -27,7 +27,7 @@ export interface ExactLeafSource extends LeafSource<ExactLoop> {
 export function exactLeafSource(): ExactLeafSource {
   const used: UsedLeaf[] = []
   const notes: StructureNote[] = []
-  const accuracies: NonNullable<LoopStructure['accuracy']>[] = []
+  const accuracies: (() => NonNullable<LoopStructure['accuracy']>)[] = []
   const equivalents = new Map<string, ExactLoop>()
   return {
     used,
@@ -37,7 +37,7 @@ export function exactLeafSource(): ExactLeafSource {
       const known = equivalents.get(key)
       if (known) return known
       const { loop, accuracy, averaged } = discretise(continuous, gain)
-      accuracies.push(accuracy)
+      accuracies.push(() => accuracy)
       if (averaged !== null && !notes.some(note => note.block === name && note.code === 'averaged hold')) notes.push({ block: name, code: 'averaged hold', message: averaged })
       equivalents.set(key, loop)
       return loop
@@ -48,7 +48,7 @@ export function exactLeafSource(): ExactLeafSource {
       if (gain.kind === 'stateSpace') {
         const { notes: hidden, accuracy } = stateSpaceLeaf(gain, channel.output, channel.input)
         notes.push(...hidden.map(note => ({ block, ...note })))
-        accuracies.push(accuracy())
+        accuracies.push(accuracy)
       }
       if (loop) used.push({ block, loop, sampled: 'sampleTime' in gain && gain.sampleTime !== undefined })
       return loop
@@ -60,9 +60,12 @@ export function exactLeafSource(): ExactLeafSource {
     measured: () => {
       throw new AnalysisInputError('A measured block makes the loop a measured one.', '')
     },
-    accuracy: () => accuracies.length === 0
-      ? undefined
-      : { relative: accuracies.reduce((sum, { relative }) => sum + relative, 0), basis: [...new Set(accuracies.map(({ basis }) => basis))].join('; ') },
+    accuracy: () => {
+      const found = accuracies.map(accuracy => accuracy())
+      return found.length === 0
+        ? undefined
+        : { relative: found.reduce((sum, { relative }) => sum + relative, 0), basis: [...new Set(found.map(({ basis }) => basis))].join('; ') }
+    },
   }
 }
 

@@ -46,12 +46,14 @@ function pointByPoint(input: ExpressionInput, blocks: Record<string, BlockGain>,
 
   let at = 0
   const responses = new Map<string, Response>(measured.map(name => [name, () => gainOf(name).points[at]!]))
-  const scope = new BlockScope(input, responseLeafSource(sampleTime, responses))
+  const leaves = responseLeafSource(sampleTime, responses)
+  const scope = new BlockScope(input, leaves)
   const part = scope.evaluate()
-  if (part === null) throw new AnalysisInputError('The expression is zero: a loop gain of zero has no crossings to find.', 'expression', scope.tree.position)
+  if (part === null) throw scope.zero()
   const { value } = scope.arithmetic.settle(part, scope.tree.position)
 
-  const notes: StructureNote[] = []
+  const notes: StructureNote[] = [...leaves.notes]
+  const accuracy = leaves.accuracy()
   const note = (block: string, code: StructureNote['code'], message: string) => notes.push({ block, code, message })
   const proportional = measured.length === 1 && powerIn(input, blocks, needed, first) === 1
   const { averages, points } = gainOf(first)
@@ -79,7 +81,7 @@ function pointByPoint(input: ExpressionInput, blocks: Record<string, BlockGain>,
       measured: { quantity: 'loopGain', points: loopPoints, ...proportional && averages !== undefined && { averages } },
       ...proportional && openLoopPoles(input, first, gainOf(first), message => note(first, 'other', message)),
     },
-    structure: { ...sampleTime !== undefined && { sampleTime }, approximated: false, notes },
+    structure: { ...sampleTime !== undefined && { sampleTime }, ...accuracy && { accuracy }, approximated: false, notes },
   }
 }
 

@@ -3,7 +3,7 @@ import type { ExactLoop } from '../expressions/ExactLoop'
 import { rationalPart } from '../expressions/rationalPart'
 import { prepareFactoredGain } from '../prepareFactoredGain'
 import type { LeafSource } from './BlockScope'
-import { exactLeaf } from './exactLeaf'
+import { exactLeafSource, type ExactLeafSource } from './exactLeafSource'
 import { type Response, responseAlgebra } from './responseAlgebra'
 
 /**
@@ -12,11 +12,14 @@ import { type Response, responseAlgebra } from './responseAlgebra'
  * @param sampleTime s, of the loop
  * @param measured the values of each measured block by its name
  */
-export function responseLeafSource(sampleTime: number | undefined, measured: ReadonlyMap<string, Response>): LeafSource<Response> {
+export function responseLeafSource(sampleTime: number | undefined, measured: ReadonlyMap<string, Response>): LeafSource<Response> & Pick<ExactLeafSource, 'notes' | 'accuracy'> {
+  const { rational, notes, accuracy } = exactLeafSource()
   return {
+    notes,
+    accuracy,
     algebra: responseAlgebra(sampleTime),
-    rational: (_, gain, channel) => {
-      const loop = exactLeaf(gain, channel)
+    rational: (name, gain, channel) => {
+      const loop = rational(name, gain, channel)
       return loop && responseOf(loop, 'sampleTime' in gain && gain.sampleTime !== undefined ? sampleTime : undefined)
     },
     expression: () => {},

@@ -33,17 +33,16 @@ export function lowerExpression(input: ExpressionInput): LoweredExpression {
   const scope = new BlockScope(input, leaves)
   const { tree, sampleTime } = scope
   const part = scope.evaluate()
-  if (part === null) {
-    throw new AnalysisInputError('The expression is zero: a loop gain of zero has no crossings to find.', 'expression', tree.position)
-  }
+  if (part === null) throw scope.zero()
   const { value: exact, domain } = scope.arithmetic.settle(part, tree.position)
   if (sampleTime !== undefined && domain === 'continuous') {
     throw new AnalysisInputError('The loop is sampled, but nothing in this expression is: put the hold before its continuous part, as in H0*G.', 'expression', tree.position)
   }
   refuseUnusable(exact, sampleTime, tree, scope)
+  const accuracy = leaves.accuracy()
   const structure: LoopStructure | undefined = input.blocks && {
     ...sampleTime !== undefined && { sampleTime },
-    ...leaves.accuracy() && { accuracy: leaves.accuracy()! },
+    ...accuracy && { accuracy },
     approximated: false,
     notes: leaves.notes,
   }

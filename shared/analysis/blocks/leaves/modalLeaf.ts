@@ -12,8 +12,8 @@ interface Fraction {
 
 /**
  * One channel of a modal table (numbers from 0): sum of gainOut gainIn s^derivative/(s^2 + 2 damping w s + w^2) and of the rigid terms, exactly, over
- * their common denominator with each mode a factor of its own. w is the frequency in rad/s, from Hz rounded once. Modes without gain in the channel are no part
- * of it. Null where nothing is left.
+ * their common denominator with each mode a factor of its own. w is the frequency in rad/s, from Hz rounded once. Modes and rigid terms without gain in the channel are no part
+ * of it, but for modes without damping or with less: those stay as hidden ones. Null where nothing is left.
  */
 export function modalLeaf({ frequencyUnit, derivative, modes, rigid }: ModalGain, output: number, input: number): ExactLoop | null {
   const terms = new Map<string, { factor: PolynomialFactor, gain: Rational }>()
@@ -27,6 +27,8 @@ export function modalLeaf({ frequencyUnit, derivative, modes, rigid }: ModalGain
     terms.set(key, { factor, gain })
   }
   const used = [...terms].filter(([, { gain }]) => gain.sign !== 0)
+  // one that is not stable stays in the loop, seen or not: in numerator and denominator alike
+  const hidden = new Map([...terms].filter(([, { gain, factor }]) => gain.sign === 0 && factor.coefficients[1]! <= 0n).map(([key, { factor }]) => [key, factor]))
   // rigid[k] s^-k
   const rigidGains = [0, -1, -2].map(power => rigid.filter(term => term.power === power).reduce((sum, term) => sum.plus(gainOf(term)), Rational.zero))
   const integrators = rigidGains[2]!.sign !== 0 ? 2 : rigidGains[1]!.sign !== 0 ? 1 : 0
@@ -50,8 +52,8 @@ export function modalLeaf({ frequencyUnit, derivative, modes, rigid }: ModalGain
   return {
     scale: scale.over(Rational.of(common, 1n)),
     delay: Rational.zero,
-    numerator: factors,
-    denominator,
+    numerator: FactorProduct.times(factors, hidden),
+    denominator: FactorProduct.times(denominator, hidden),
     inverted: FactorProduct.empty,
     // as in a sum typed out, see ExactLoop
     common: new Set(fractions.length > 1 ? denominator.keys() : []),

@@ -204,6 +204,23 @@ describe('a modal table', () => {
   })
 })
 
+describe('a mode of a table that a channel does not show', () => {
+  const table = (damping: number): BlockGain => ({
+    kind: 'modal', frequencyUnit: 'rad/s', derivative: 0, rigid: [{ power: -2, gainIn: [1], gainOut: [0, 1] }], inputs: [], outputs: [],
+    modes: [{ name: 'seen', frequency: 3, damping: 0.1, gainIn: [1], gainOut: [1, 1] }, { name: 'unseen', frequency: 5, damping, gainIn: [1], gainOut: [0, 1] }],
+  })
+
+  it('is no part of it where it is damped', () => {
+    const { structure: _, ...analysis } = analyse(over('G[1, 1]', { G: table(0.1) }))
+    expect(analysis).toEqual(analyse({ expression: '1/(s^2 + 2*d*3*s + 9)', parameters: { d: 0.1 } }))
+  })
+
+  it('stays in the verdict where it is not', () => {
+    expect(analyse(over('G[1, 1]', { G: table(-0.01) }))).toMatchObject({ stability: { verdict: 'unstable' }, structure: { notes: [{ block: 'G', code: 'hidden unstable' }] } })
+    expect(analyse(over('G[1, 1]', { G: table(0) }))).toMatchObject({ stability: { verdict: 'marginal' }, structure: { notes: [{ block: 'G', code: 'hidden boundary' }] } })
+  })
+})
+
 describe('hidden modes', () => {
   it('an unstable pole of a block that another cancels is told with its block, and the verdict knows', () => {
     const analysis = analyse(over('C*G', { C: gain('2*(s-1)/(s+5)'), G: gain('3/((s-1)*(s+2))') }))
@@ -220,5 +237,32 @@ describe('hidden modes', () => {
 
   it('poles of a block in its own feedback do not stay', () => {
     expect(analyse(over('G/(1 + H*G)', { G: gain('1/(s-1)'), H: gain('5') })).structure?.notes).toEqual([])
+  })
+})
+
+describe('state space among other blocks', () => {
+  const plant: BlockGain = {
+    kind: 'stateSpace', a: [[-1, 0, 0], [0, 2, 0], [0, 0, -3]], b: [[1, 0], [1, 0], [0, 1]], c: [[1, 0, 1], [1, 1, 0]], d: [[0, 0], [0, 0]], inputs: ['torque', 'force'], outputs: ['rate', 'angle'],
+  }
+
+  it('a channel that is zero is told by its block', () => {
+    expect(refused('2*G[angle, force]', { G: plant }).message).toBe('The expression is zero: a loop gain of zero has no crossings to find. What is zero: the block G in its channel [2,2].')
+  })
+
+  it('is its channels typed out, in a feedback over two of them too', () => {
+    const at = (input: ExpressionInput) => {
+      const out = new Float64Array(2)
+      const { evaluate } = prepareLoopGain(readLoopInput(input))
+      return [0.1, 1, 7].flatMap(w => (evaluate(w, out), [...out]))
+    }
+    const blocks = at(over('K*G[rate, torque]/(1 + 5*G[angle, torque])', { G: plant, K: gain('2/(s+4)') }))
+    const typed = at({ expression: '2/(s+4)/(s+1)/(1 + 5*(1/(s+1) + 1/(s-2)))' })
+    blocks.forEach((value, i) => expect(value).toBeCloseTo(typed[i]!, 12))
+  })
+
+  it('modes that a channel does not show are told, and an unstable one decides the verdict', () => {
+    const { structure, stability } = analyse(over('G[1, 1]', { G: plant }))
+    expect(structure?.notes.map(({ block, code }) => [block, code])).toEqual([['G', 'unreachable'], ['G', 'unobservable'], ['G', 'hidden unstable']])
+    expect(stability.verdict).toBe('unstable')
   })
 })
