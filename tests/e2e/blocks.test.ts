@@ -2,8 +2,7 @@ import { createRequire } from 'node:module'
 import type { AxeResults } from 'axe-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { Browser, Locator, Page } from 'playwright-core'
-import accounts from '#server/demo/accounts.json'
-import { keepScreenshot, openBrowser, signIn } from './openBrowser'
+import { keepScreenshot, openBrowser } from './openBrowser'
 import { startDemoServer, type DemoServer } from './startDemoServer'
 
 const axePath = createRequire(import.meta.url).resolve('axe-core/axe.min.js')
@@ -21,14 +20,20 @@ describe('loop gains built from blocks', () => {
   const faults: string[] = []
 
   beforeAll(async () => {
-    server = await startDemoServer()
+    server = await startDemoServer({ demo: false })
     browser = await openBrowser()
     // the page's own policy admits no script of a test, which axe is
     const context = await browser.newContext({ viewport: { width: 1280, height: 900 }, bypassCSP: true })
     page = await context.newPage()
     page.on('pageerror', error => faults.push(`script error: ${error.message}`))
-    await signIn(page, server.url, 'engineer@tern.example', accounts.password)
-    // A system of its own, so that the demo's blocks play no part.
+    await page.goto(`${server.url}/set-up`)
+    await page.waitForLoadState('networkidle')
+    await page.getByLabel('Name').fill('Ada Holm')
+    await page.getByLabel('E-mail').fill('ada@works.example')
+    await page.getByLabel('Password').fill('twelve characters at least')
+    await page.locator('form button[type=submit]').click()
+    await page.waitForURL('**/people')
+    // Who makes a system is its engineer.
     const created = await post<{ id: number }>('/api/systems', { name: 'Kittiwake mast head', customer: '', documentNumber: '', frequencyUnit: 'rad/s', description: '' })
     system = `/systems/${created.id}`
     for (const [code, name] of [['C1', 'Light'], ['C2', 'Heavy']]) await post(`/api${system}/conditions`, { code, name, coordinates: [], tags: [], notes: '' })
