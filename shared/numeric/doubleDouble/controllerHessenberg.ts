@@ -9,8 +9,8 @@ export interface ControllerHessenberg {
   starts: number[]
 }
 
-/** Part of the norm below which a column counts as zero: 2^-93, about 1e-28, some thousand units of the reduction's own rounding. */
-const NEGLIGIBLE = 2 ** -93
+/** Part of the norm below which a column counts as zero: 2^-78, about 3e-24. The reduction's own rounding, 1e-31, grows where the states before it are nearly dependent. */
+const NEGLIGIBLE = 2 ** -78
 const SPLITTER = 134217729
 
 /**

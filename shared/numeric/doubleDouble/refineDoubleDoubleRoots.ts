@@ -12,7 +12,7 @@ export interface ScaledNumber {
 
 /** With conjugates kept conjugate; then without, where a pair and two reals could not be told apart by their starting points. */
 const PAIRED_SWEEPS = 12
-const FREE_SWEEPS = 60
+const FREE_SWEEPS = 300
 const TARGET = 2 ** -97
 /** In parts of `scale`. */
 const FLOOR = 2 ** -104
@@ -79,7 +79,7 @@ class Refinement {
         this.computeCorrection(k)
         if (partner && im[k] === 0) this.wi[k] = 0
         const size = Math.hypot(this.wr[k]!, this.wi[k]!)
-        if (size < 0.5 * correction[k]!) stalls[k] = 0
+        if (size < 0.97 * correction[k]!) stalls[k] = 0
         else stalls[k]!++
         correction[k] = Math.min(correction[k]!, size)
         const modulus = Math.hypot(re[k]!, im[k]!)
