@@ -62,6 +62,7 @@ export const routeActions = {
   'DELETE /api/loops/[loopId]': 'change loops, criteria and drafts',
   'POST /api/loops/[loopId]/restore': 'change loops, criteria and drafts',
   'POST /api/loops/[loopId]/copy': 'change loops, criteria and drafts',
+  'GET /api/loops/[loopId]/conditions/[conditionId]/sources': 'see loops, data and drafts',
   'POST /api/loops/[loopId]/sources': 'change loops, criteria and drafts',
 
   'PATCH /api/conditions/[conditionId]': 'change loops, criteria and drafts',

@@ -92,5 +92,6 @@ export interface EngineAnswers {
   analysis: LoopAnalysis
   closedLoopPoles: ClosedLoopPoles
   modeShifts: ModeShiftTable
+  sourceDifference: SourceDifference
 }
 export type EngineAnswer = EngineAnswers[keyof EngineAnswers]

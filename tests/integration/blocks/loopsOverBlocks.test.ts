@@ -13,6 +13,7 @@ import { updateLoop } from '#server/services/loops/updateLoop'
 import { replaceParameters } from '#server/services/parameters/replaceParameters'
 import { createReport } from '#server/services/reports/createReport'
 import { freezeRevision } from '#server/services/revisions/freezeRevision'
+import { compareLoopSources } from '#server/services/sources/compareLoopSources'
 import { createSources } from '#server/services/sources/createSources'
 import { readSource } from '#server/services/sources/readSource'
 import { readBoard } from '#server/services/systems/readBoard'
@@ -180,6 +181,31 @@ describe('what a drafted block would do', () => {
     await updateBlock(stored?.id ?? 0, { version: 1, definition: typed('0.25') }, context)
     const cell = (await readBoard(system.id, context)).cells.find(({ loopId, conditionId }) => loopId === loop.id && conditionId === c1.id)
     expect(cell?.analysis?.summary).toEqual(effect?.after?.summary)
+  })
+})
+
+describe('the sources of a loop in a condition', () => {
+  it('are told with how far each lies from the one of record', async () => {
+    await buildBlock(system.id, context, 'P', typed('1/(s*(s+1)^2)'))
+    const model = await buildSource(loop.id, c1.id, context, over('P'))
+    const [louder] = await createSources(loop.id, { conditionIds: [c1.id], name: 'louder', definition: over('2*P'), ofRecord: false, setAsideReason: 'the gain was wrong' }, context) as [Source]
+    await buildSource(loop.id, c2.id, context, over('P'))
+    const { sources, differences } = await compareLoopSources(loop.id, c1.id, context)
+    expect(sources.map(({ source }) => source.id)).toEqual([model.id, louder.id])
+    expect(differences).toHaveLength(1)
+    expect(differences[0]).toMatchObject({ reference: model.name, other: 'louder', reason: null })
+    // twice the gain is 6.0206 dB more at every frequency, and no lag
+    for (const { gain, phase } of differences[0]?.bands ?? []) {
+      expect(gain.difference).toBeCloseTo(20 * Math.log10(2), 9)
+      expect(phase.difference).toBeCloseTo(0, 9)
+    }
+    expect(differences[0]?.bands.length).toBeGreaterThan(0)
+  })
+
+  it('are none where there is none, and not found in a condition of another system', async () => {
+    expect(await compareLoopSources(loop.id, c2.id, context)).toEqual({ sources: [], differences: [] })
+    const foreign = await buildCondition((await buildSystem(context)).id, context)
+    await expect(compareLoopSources(loop.id, foreign.id, context)).rejects.toMatchObject({ code: 'notFound' })
   })
 })
 
