@@ -1,4 +1,4 @@
-import { ComplexArithmetic, isZero, logSize, place } from '../../numeric/extended/ComplexArithmetic'
+import { ComplexArithmetic, isZero, logSize, place, toDoubles } from '../../numeric/extended/ComplexArithmetic'
 import type { ComplexFloat } from '../../numeric/extended/ComplexFloat'
 import type { Rational } from '../../numeric/extended/Rational'
 import type { HoldEdge } from './holdEdges'
@@ -12,6 +12,9 @@ export interface SampledFraction {
   multiplicity: number
   coefficients: ComplexFloat[][]
 }
+
+/** ln of the growth within one sample beyond which doubles hold nothing beside that mode. */
+const MOST_GROWTH = 34.5
 
 /**
  * The z-transform of samples f((j + fraction) T), j >= 0, of each edge, divided by z: with f = sum c_l t^l/l! e^(pt) it is the sum of the
@@ -29,6 +32,7 @@ export function sampledFractions(fractions: PartialFraction[], edges: HoldEdge[]
   const result: SampledFraction[] = []
   for (const { pole, coefficients } of fractions) {
     const m = coefficients.length
+    if (toDoubles(arithmetic.multiply(pole, time)).re > MOST_GROWTH) throw new RangeError('a mode grows more than 1e15-fold within one sample; sample faster')
     const image = arithmetic.exponential(arithmetic.multiply(pole, time))
     const vanishing = logSize(image) < -arithmetic.bits
     const growth = vanishing ? [] : exponentialSeries(time, m, arithmetic).map((term, k) => k === 0 ? ComplexArithmetic.zero : arithmetic.multiply(term, image))

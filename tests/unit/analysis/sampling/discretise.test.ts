@@ -70,7 +70,8 @@ describe('what has no discrete equivalent is refused with the reason', () => {
   })
 
   it('a mode that grows beyond use within one sample', () => {
-    expect(refusalOf('1/(s-1e6)', zeroOrder(1))).toMatch(/cannot be worked out: the exponential leaves the range/)
+    for (const rate of [35, 1e6]) expect(refusalOf(`1/(s-${rate})`, zeroOrder(1))).toMatch(/cannot be worked out: a mode grows more than 1e15-fold within one sample/)
+    expectEquivalent('1/(s-34)', zeroOrder(1), [Math.expm1(34) / 34], [1, -Math.exp(34)])
   })
 })
 
