@@ -42,15 +42,13 @@ export function polynomialRoots(polynomial: ExactPolynomial, aboutOne = false): 
 function simpleRoots(exact: ExactPolynomial, aboutOne: boolean): RefinedRoots {
   const scaled = ScaledPolynomial.fromExact(exact)
   if (aboutOne) {
-    const crowded = rootsAboutOne(exact)
-    if (crowded && isInRange(crowded)) {
-      try {
-        return refineRoots(scaled, crowded)
-      }
-      catch (error) {
-        // Not found this way: the usual one comes next, and tells if it finds none either.
-        if (!(error instanceof RangeError)) throw error
-      }
+    try {
+      const crowded = rootsAboutOne(exact)
+      if (crowded) return crowded
+    }
+    catch (error) {
+      // Not found this way: the usual one comes next, and tells if it finds none either.
+      if (!(error instanceof RangeError)) throw error
     }
   }
   const start = aberthRoots(scaled)

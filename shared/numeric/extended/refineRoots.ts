@@ -11,6 +11,8 @@ export interface RefinedRoots {
 
 const MAXIMAL_SWEEPS = 80
 const MOST_BITS = 20_000
+/** Power of two of the product of a root's distances from the others. */
+const LEAST_PRODUCT = -900
 
 /**
  * Brings approximate simple roots of a real polynomial to the last bit of each part, conjugate pairs exact, and
@@ -21,12 +23,14 @@ const MOST_BITS = 20_000
  * correction of K. Weierstrass (1891). Only P(r_k) needs more than doubles: double-double first, and fixed point of as many
  * bits as a cluster or a wide range asks for. The identity in `RefinedRoots` is exact for any distinct r_k.
  *
+ * @param onto what real parts are rounded to in the end, where not every double will do; the bounds are those of the roots so rounded
  * @throws RangeError when roots cannot be told apart (a multiple root: divide those out first)
  */
-export function refineRoots(polynomial: ScaledPolynomial, start: { re: Float64Array, im: Float64Array }): RefinedRoots {
+export function refineRoots(polynomial: ScaledPolynomial, start: { re: Float64Array, im: Float64Array }, onto?: (re: number) => number): RefinedRoots {
   const state = new Refinement(polynomial, start)
   state.iterate()
   state.pairConjugates()
+  if (onto) state.re.set(state.re.map(onto))
   return { re: state.re, im: state.im, correction: state.finalCorrections() }
 }
 
@@ -113,6 +117,8 @@ class Refinement {
     const square = pr * pr + pi * pi
     if (square === 0) throw new RangeError('two roots cannot be told apart')
     const product = Math.sqrt(square)
+    // Below this the polynomial's value beside a root leaves the range of doubles, and its correction would seem smaller than it is.
+    if (exponent + Math.log2(product) < LEAST_PRODUCT) throw new RangeError('the roots crowd too closely about one point')
     const modulus = Math.sqrt(a * a + b * b)
     // All below in units of 2^shift.
     const target = targetOf(a, b)

@@ -1,20 +1,39 @@
 import { aberthRoots, evaluateWithDerivative, type WithDerivative } from './aberthRoots'
 import type { ExactPolynomial } from './ExactPolynomial'
 import { initialRoots } from './initialRoots'
+import { refineRoots, type RefinedRoots } from './refineRoots'
 import { ScaledPolynomial } from './ScaledPolynomial'
 
 /** Nearer to 1 than this the polynomial is evaluated in powers of x - 1. */
 const REACH = 0.5
 
 /**
- * Starting points of all roots of a polynomial most of whose roots crowd about 1, as those of a system sampled fast do: in powers of x they are lost to cancellation,
- * in powers of x - 1, into which the exact coefficients go without rounding, they lie apart. Null where 1 itself is a root; 0 may be none.
+ * All roots, all simple, of a polynomial most of whose roots crowd about 1, as those of a system sampled fast do: in powers of x they are lost to cancellation,
+ * in powers of x - 1, into which the exact coefficients go without rounding, they lie apart. The roots are doubles x with x - 1 a double too, so that their proven
+ * bounds, found in powers of x - 1, hold. Null where 1 itself is a root; 0 may be none.
+ *
+ * @throws RangeError when roots cannot be told apart
  */
-export function rootsAboutOne(exact: ExactPolynomial): { re: Float64Array, im: Float64Array } | null {
-  const polynomial = ScaledPolynomial.fromExact(exact)
-  const about = shiftByOne(exact.coefficients)
-  if (about[0] === 0n) return null
-  const shifted = ScaledPolynomial.fromExact({ coefficients: about, exponent: exact.exponent })
+export function rootsAboutOne(exact: ExactPolynomial): RefinedRoots | null {
+  const coefficients = shiftByOne(exact.coefficients)
+  if (coefficients[0] === 0n) return null
+  const shifted = ScaledPolynomial.fromExact({ coefficients, exponent: exact.exponent })
+  const start = startingPoints(ScaledPolynomial.fromExact(exact), shifted)
+  if (!start.re.every(Number.isFinite) || !start.im.every(Number.isFinite)) return null
+  for (let k = 0; k < start.re.length; k++) start.re[k] = (start.re[k] as number) - 1
+  const { re, im, correction } = refineRoots(shifted, start, value => (1 + value) - 1)
+  for (let k = 0; k < re.length; k++) {
+    const root = 1 + (re[k] as number)
+    // exact unless the root is far beyond 1
+    const rounding = Math.abs((root - 1) - (re[k] as number)) + Math.abs((root - (root - 1)) - 1)
+    re[k] = root
+    correction[k] = (correction[k] as number) + rounding * (1 + 1e-9)
+  }
+  return { re, im, correction }
+}
+
+/** Aberth's iteration in x, evaluated in powers of x - 1 near 1. */
+function startingPoints(polynomial: ScaledPolynomial, shifted: ScaledPolynomial): { re: Float64Array, im: Float64Array } {
   const evaluate: WithDerivative = (own, shift, a, b, out) => {
     const scale = 2 ** shift
     const x = a * scale - 1

@@ -3,7 +3,9 @@ import type { ExactPolynomial } from '#shared/numeric/extended/ExactPolynomial'
 import { exactFromDoubles } from '#shared/numeric/extended/exactFromDoubles'
 import { multiplyExact } from '#shared/numeric/extended/multiplyExact'
 import { polynomialRoots } from '#shared/numeric/extended/polynomialRoots'
+import { refineRoots } from '#shared/numeric/extended/refineRoots'
 import { rootsAboutOne } from '#shared/numeric/extended/rootsAboutOne'
+import { ScaledPolynomial } from '#shared/numeric/extended/ScaledPolynomial'
 
 const productOf = (factors: number[][]): ExactPolynomial => factors.map(exactFromDoubles).reduce(multiplyExact)
 
@@ -39,5 +41,22 @@ describe('roots of polynomials in z that crowd about 1', () => {
     const sorted = (aboutOne: boolean) => Array.from(polynomialRoots(polynomial, aboutOne).re).sort((a, b) => a - b)
     const [a, b] = [sorted(true), sorted(false)]
     a.forEach((value, k) => expect(Math.abs(value - (b[k] as number))).toBeLessThan(4e-16))
+  })
+})
+
+describe('roots that crowd about 1 so closely that the product of their distances leaves the range of doubles', () => {
+  const { factors, roots } = crowd(74, 0.002)
+  const polynomial = productOf(factors)
+
+  it('are found in powers of z - 1', () => {
+    const found = polynomialRoots(polynomial, true)
+    for (const { re, im } of roots) {
+      expect(Math.min(...Array.from(found.re, (x, k) => Math.hypot(x - re, (found.im[k] as number) - im)))).toBeLessThan(4 * Number.EPSILON / im)
+    }
+  })
+
+  it('are refused in powers of z, where their corrections could not be known, rather than given wrong', () => {
+    const start = { re: Float64Array.from(roots.flatMap(({ re }) => [re, re])), im: Float64Array.from(roots.flatMap(({ im }) => [im, -im])) }
+    expect(() => refineRoots(ScaledPolynomial.fromExact(polynomial), start)).toThrow('the roots crowd too closely about one point')
   })
 })
