@@ -2,6 +2,7 @@ import type { ExpressionInput } from '../../types/analysis'
 import type { BlockGain } from '../../types/block'
 import { AnalysisInputError } from '../AnalysisInputError'
 import { measuredInputOf } from '../blocks/measuredInputOf'
+import { sampleTimeOfInput } from '../sampleTimeOfInput'
 import { lowerExpression } from './lowerExpression'
 import { namesInExpression } from './namesInExpression'
 import { parseExpression, type ExpressionNames } from './parseExpression'
@@ -22,10 +23,10 @@ export function checkExpression(text: string, names: ExpressionNames, parameters
     parseExpression(text, names)
     const { blocks } = names
     if (parameters && !Array.isArray(blocks)) {
-      const input: ExpressionInput = {
-        expression: text, parameters: { ...parameters }, ...names.variable === 'z' && { sampleTime: 1 }, ...blocks && { blocks: blocks as Record<string, BlockGain> },
-      }
-      if (measuredInputOf(input) === null) lowerExpression(input)
+      const input: ExpressionInput = { expression: text, parameters: { ...parameters }, ...blocks && { blocks: blocks as Record<string, BlockGain> } }
+      // nothing that is checked depends on how long a sample is, but for that of its blocks
+      const checked = names.variable === 'z' ? { ...input, sampleTime: sampleTimeOfInput(input) ?? 1 } : input
+      if (measuredInputOf(checked) === null) lowerExpression(checked)
     }
     return []
   }

@@ -64,6 +64,12 @@ describe('an expression as it is typed', () => {
     expect(checkExpression('k*C*P', { ...names, blocks }, { k: 1 })).toEqual([{ message: expect.stringContaining('Improper'), position: 4 }])
   })
 
+  it('in z takes the sample time of its blocks', () => {
+    const controller: BlockGain = { kind: 'expression', expression: '1/(z-0.5)', sampleTime: 0.02 }
+    expect(checkExpression('C*z^-1', { variable: 'z', parameterNames: [], blocks: { C: controller } }, {})).toEqual([])
+    expect(checkExpression('C*z^-1', { variable: 's', parameterNames: [], blocks: { C: controller } }, {})).toEqual([])
+  })
+
   it('is checked over a measured block', () => {
     const measured: BlockGain = { kind: 'measured', points: [{ frequency: 1, re: 1, im: 0 }, { frequency: 2, re: 0.5, im: -0.1 }] }
     expect(checkExpression('C*M', { ...names, blocks: { ...blocks, M: measured } }, {})).toEqual([])
