@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { analyseLoop } from '#shared/analysis/analyseLoop'
 import type { LoopAnalysis } from '#shared/types/analysis'
 import type { BlockGain, ModalGain, StateSpaceGain } from '#shared/types/block'
-import { companion, parallel, rotated, stateSpace } from './coordinates'
+import { companion, parallel, rotated, skewed, stateSpace } from './coordinates'
 
 /** 29 modes of a structure from 3 to about 1200 rad/s, 20 of damping 0.2 to 0.5 %, and a rigid body: 60 states. */
 const frequencies = Array.from({ length: 29 }, (_, k) => Number((3 * 1.24 ** k).toPrecision(6)))
@@ -104,6 +104,15 @@ describe('a loop over a state space', () => {
     const wanted = analyseLoop({ expression: '(0.2*z + 0.1)/(z^2 - 1.5*z + 0.7)', sampleTime: 0.01 })
     expect(found.structure!.sampleTime).toBe(0.01)
     expectSame(found, wanted, 1e-9, 1e-6, 1e-9)
+  })
+
+  it('in coordinates too badly conditioned to tell where its integrators are is not proven, and says why', () => {
+    const gain = skewed(parallel(companion([1], [0.05, 1]), companion([0.3], [0, 0, 1])), 3, 3)
+    const { coverage, structure } = analyseLoop({ expression: '(s + 0.1)*G', blocks: { G: gain } })
+    expect(structure!.accuracy!.relative).toBeGreaterThan(1e-9)
+    expect(coverage.proven).toBe(false)
+    expect(coverage.exceptions[0]).toMatchObject({ from: 0, to: 'infinity', code: 'accuracy' })
+    expect(coverage.exceptions[0]!.reason).toContain('compared with the matrices themselves')
   })
 
   it('is zero, and refused, where no path joins input and output', () => {
