@@ -5,6 +5,7 @@ import { lowerExpression, type LoweredExpression } from '../expressions/lowerExp
 import { parseExpression } from '../expressions/parseExpression'
 import { BlockScope } from './BlockScope'
 import { commonSampleTime } from './commonSampleTime'
+import { exactLeafSource } from './exactLeafSource'
 import { orderBlocks } from './orderBlocks'
 import { powerOfBlock } from './powerOfBlock'
 import type { Complex, Response } from './responseAlgebra'
@@ -42,6 +43,7 @@ function pointByPoint(input: ExpressionInput, blocks: Record<string, BlockGain>,
   const gainOf = (name: string) => blocks[name] as MeasuredGain
   const unit = input.frequencyUnit === 'Hz' ? 2 * Math.PI : 1
   const sampleTime = commonSampleTime(input.sampleTime, needed, blocks)
+  refuseImproper({ ...input, ...sampleTime !== undefined && { sampleTime } }, blocks, needed, measured)
   for (const name of measured) refuseOtherFrequencies(gainOf(first).points, gainOf(name).points, first, name)
 
   let at = 0
@@ -96,6 +98,15 @@ function refuseOtherFrequencies(points: MeasuredPoint[], others: MeasuredPoint[]
   const index = wrong < 0 ? points.length : wrong
   throw new AnalysisInputError(
     `The measured blocks ${first} and ${name} have different frequencies, first at point ${index + 1}: give both at the same ones, nothing is interpolated between points.`, `blocks.${name}.points[${Math.min(index, others.length - 1)}]`)
+}
+
+/** Values at points do not tell an improper block: those without a measured one in them are built exactly too, which refuses it. */
+function refuseImproper(input: ExpressionInput, blocks: Record<string, BlockGain>, needed: string[], measured: string[]): void {
+  const models = needed.filter((name) => {
+    const gain = blocks[name]!
+    return gain.kind === 'expression' && !orderBlocks(gain.expression, blocks).some(inner => measured.includes(inner))
+  })
+  if (models.length > 0) void new BlockScope({ ...input, expression: models.join(' + ') }, exactLeafSource())
 }
 
 /** How often the measured block is a factor of the loop. */

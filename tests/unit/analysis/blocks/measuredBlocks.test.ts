@@ -43,6 +43,12 @@ describe('bad loops over measured blocks', () => {
     expect(refusalOf(() => analyse({ expression: 'M', blocks: { M: { kind: 'measured', points: zero } } })).path).toBe('blocks.M.points[2]')
   })
 
+  it('an improper block beside it, and domains that do not go together', () => {
+    expect(refusalOf(() => analyse({ expression: 'P*G', blocks: { P: gain('1 + 0.2*s'), G } }))).toMatchObject({ path: 'blocks.P.expression', message: expect.stringContaining('Improper') })
+    expect(refusalOf(() => analyse({ expression: 'K*F*G', blocks: { K: gain('1/(z-0.5)', 0.1), F: gain('1/(s+1)'), G } })).message).toContain('without a hold')
+    expect(refusalOf(() => analyse({ expression: 'K*D*G', blocks: { K: gain('1/(z-0.5)', 0.1), D: { kind: 'deadTime', deadTime: 0.5, unit: 'samples' }, G } })).message).toContain('no whole number of samples')
+  })
+
   it('points out of order, and too few', () => {
     const points = [2, 1].map(frequency => ({ frequency, re: 1, im: 0 }))
     expect(refusalOf(() => analyse({ expression: 'M', blocks: { M: { kind: 'measured', points } } })).path).toBe('blocks.M.points[1].frequency')
