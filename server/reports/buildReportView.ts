@@ -2,15 +2,18 @@ import type { EditionFacts, ReportSnapshot } from '#shared/types/snapshot'
 import type { DrawnReport } from './figures/DrawnReport'
 import { markdownToHtml } from './text/markdownToHtml'
 import { loopAnchor } from './view/anchorOf'
+import { blocksSection } from './view/blocksSection'
 import { cautionsSection } from './view/cautionsSection'
 import { cellsOf } from './view/cellsOf'
+import { closedLoopSection } from './view/closedLoopSection'
 import { chapterView } from './view/chapterView'
 import { conditionsSection } from './view/conditionsSection'
 import { conventionsSection } from './view/conventionsSection'
 import { coverView, documentType } from './view/coverView'
 import { criteriaLine } from './view/criteriaWords'
 import { matrixTables } from './view/matrixTables'
-import type { FigureView, ReportView } from './view/ReportView'
+import { modeShiftSection } from './view/modeShiftSection'
+import type { FigureView, ReportView, SectionView } from './view/ReportView'
 import { summaryView } from './view/summaryView'
 
 /** Numbers figures through the document and keeps its order: the summary's chart, then chapter by chapter. */
@@ -20,6 +23,14 @@ function createFigureNumberer(): (figure: Omit<FigureView, 'number'>) => FigureV
     count += 1
     return { ...figure, number: count }
   }
+}
+
+/** The sections there are, numbered on from `first`. */
+function numberedSections(first: number, makers: ((number: string) => SectionView | null)[]): SectionView[] {
+  return makers.reduce<SectionView[]>((sections, make) => {
+    const section = make(String(first + sections.length))
+    return section === null ? sections : [...sections, section]
+  }, [])
 }
 
 const counted = (count: number, noun: string) => `${count} ${noun}${count === 1 ? '' : 's'}`
@@ -48,11 +59,14 @@ export function buildReportView(snapshot: ReportSnapshot, edition: EditionFacts,
     drawn.loops[index]?.leftOut ?? 0,
   ))
   const afterChapters = firstChapter + chapters.length
-  const sections = [
-    conditionsSection(snapshot, String(afterChapters)),
-    conventionsSection(snapshot, String(afterChapters + 1)),
-    cautionsSection(String(afterChapters + 2)),
-  ]
+  const sections = numberedSections(afterChapters, [
+    number => conditionsSection(snapshot, number),
+    number => blocksSection(snapshot, number),
+    number => closedLoopSection(snapshot, cells, number),
+    number => modeShiftSection(snapshot, cells, number),
+    number => conventionsSection(snapshot, number),
+    cautionsSection,
+  ])
   const contents = [
     { number: '1', title: 'Summary', target: 'summary', note: '' },
     { number: '2', title: 'Every loop in every condition', target: 'matrix', note: '' },

@@ -83,6 +83,11 @@ export interface ConditionView {
   coverageTone: Tone
   crossings: TableView | null
   gaps: TableView | null
+  /** other sources against the one of record */
+  differences: TableView | null
+  /** how the loop gain was built from blocks, and what contradicts it */
+  structure: string[]
+  structureTone: Tone
 }
 
 export interface ChapterView {

@@ -7,9 +7,11 @@ import { closedLoopWords } from './closedLoopWords'
 import { compareStanding } from './compareStanding'
 import { coverageWords, gapsTable } from './coverageWords'
 import { crossingsTable } from './crossingsTable'
+import { differencesTable } from './differencesTable'
 import { marginsTable } from './marginsTable'
 import type { ChapterView, ConditionView, FigureView } from './ReportView'
 import { sourcesTable } from './sourcesTable'
+import { structureWords } from './structureWords'
 import { verdictTone } from './verdictTone'
 
 function conditionView({ cell, condition, conditionIndex, loop, loopIndex }: PlacedCell): ConditionView {
@@ -23,7 +25,7 @@ function conditionView({ cell, condition, conditionIndex, loop, loopIndex }: Pla
   }
   if (!analysis) {
     const why = failure === null ? 'There is no source of record for this loop in this condition.' : `There is no analysis: ${failure.message}`
-    return { ...common, closedLoop: why, coverage: [], coverageTone: 'open', crossings: null, gaps: null }
+    return { ...common, closedLoop: why, coverage: [], coverageTone: 'open', crossings: null, gaps: null, differences: null, structure: [], structureTone: 'plain' }
   }
   const crossings = crossingsTable(analysis)
   return {
@@ -33,6 +35,9 @@ function conditionView({ cell, condition, conditionIndex, loop, loopIndex }: Pla
     coverageTone: analysis.coverage.proven || (isMeasured && analysis.coverage.exceptions.length === 0) ? 'plain' : 'open',
     crossings,
     gaps: gapsTable(analysis, isMeasured),
+    differences: differencesTable(cell),
+    structure: [...(cell.disagreement ? [cell.disagreement] : []), ...structureWords(analysis)],
+    structureTone: cell.disagreement ? 'bad' : 'plain',
   }
 }
 

@@ -1,3 +1,4 @@
+import type { LoopStructure } from '#shared/types/analysis'
 import type { SourceDefinition, SourceKind } from '#shared/types/source'
 import { describeBlockGain } from '#shared/formatting/describeBlockGain'
 import { formatDelay } from '#shared/formatting/formatDelay'
@@ -19,10 +20,11 @@ function timing({ deadTime, sampleTime }: { deadTime?: number, sampleTime?: numb
   ]
 }
 
-function partsOf(definition: SourceDefinition): string[] {
+function partsOf(definition: SourceDefinition, structure: LoopStructure | undefined): string[] {
   switch (definition.kind) {
     case 'expression':
-      return [`L(${definition.sampleTime ? 'z' : 's'}) = ${definition.expression}`, ...timing(definition)]
+      // Over blocks the variable is theirs.
+      return [`${structure ? 'L' : definition.sampleTime ? 'L(z)' : 'L(s)'} = ${definition.expression}`, ...timing(definition)]
     case 'coefficients':
     case 'zerosPoles':
       return [describeBlockGain(definition)]
@@ -45,7 +47,7 @@ const quantityNames = {
 }
 
 /** What a source says, as text: the expression, the coefficients, the roots, or how the response was measured. */
-export function sourceWords(definition: SourceDefinition): string {
-  const text = partsOf(definition).join('; ')
+export function sourceWords(definition: SourceDefinition, structure?: LoopStructure): string {
+  const text = partsOf(definition, structure).join('; ')
   return text.length <= printedLength ? text : `${text.slice(0, printedLength)} \u2026 (whole in snapshot.json of the package)`
 }

@@ -1,0 +1,100 @@
+import { describeBlockGain } from '#shared/formatting/describeBlockGain'
+import type { BlockGain } from '#shared/types/block'
+import type { LoopInput } from '#shared/types/analysis'
+import type { ReportSnapshot, SnapshotBlock } from '#shared/types/snapshot'
+import type { SectionView, TableView } from './ReportView'
+import { tableOf } from './tableOf'
+
+/** Characters of a gain that are printed; the package holds the whole. */
+const printedLength = 500
+
+/** Modes of a table that are printed. */
+const printedModes = 60
+
+const blocksOf = (input: LoopInput | null): Record<string, BlockGain> => (input !== null && 'expression' in input && input.blocks) || {}
+const shortened = (text: string) => (text.length <= printedLength ? text : `${text.slice(0, printedLength)} \u2026 (whole in snapshot.json of the package)`)
+
+/** As the engine was given it, where a loop uses it in that condition: it knows what stood in a file. */
+function gainIn(snapshot: ReportSnapshot, block: SnapshotBlock, conditionCode: string): string {
+  const used = snapshot.cells.find(cell => cell.conditionCode === conditionCode && blocksOf(cell.input)[block.name] !== undefined)
+  const gain = blocksOf(used?.input ?? null)[block.name] ?? block.definitions[conditionCode]
+  return gain === undefined ? '' : shortened(describeBlockGain(gain))
+}
+
+/** The gains of a block, conditions with the very same one together. */
+function gainsOf(snapshot: ReportSnapshot, block: SnapshotBlock): { conditions: string[], words: string }[] {
+  const gains: { conditions: string[], words: string, key: string }[] = []
+  for (const { code } of snapshot.conditions) {
+    const words = gainIn(snapshot, block, code)
+    const key = JSON.stringify([words, block.definitions[code]])
+    const same = gains.find(gain => gain.key === key)
+    if (same) same.conditions.push(code)
+    else gains.push({ conditions: [code], words, key })
+  }
+  return gains
+}
+
+function blocksTable(snapshot: ReportSnapshot, blocks: readonly SnapshotBlock[]): TableView {
+  const everywhere = snapshot.conditions.length
+  return tableOf({
+    caption: 'The blocks, and the loops built from each',
+    columns: [{ head: 'block' }, { head: 'role' }, { head: 'conditions' }, { head: 'gain', isWide: true }, { head: 'units', unit: 'out per in' }, { head: 'loops' }],
+    rows: blocks.flatMap((block) => {
+      const loops = snapshot.loops.filter(loop => snapshot.cells.some(cell => cell.loopCode === loop.code && blocksOf(cell.input)[block.name] !== undefined))
+      const units = block.unitIn === '' && block.unitOut === '' ? '' : `${block.unitOut || '1'} per ${block.unitIn || '1'}`
+      return gainsOf(snapshot, block).map(({ conditions, words }, index) => ({
+        cells: [
+          { text: index === 0 ? block.name : '', isHead: true, small: index === 0 ? block.notes : '' },
+          { text: index === 0 ? block.role : '' },
+          { text: conditions.length === everywhere ? 'all' : conditions.join(', ') },
+          words === '' ? { text: 'no gain in this condition', tone: 'quiet' as const } : { text: words, isMono: true },
+          { text: index === 0 ? units : '' },
+          { text: index === 0 ? loops.map(({ code }) => code).join(', ') || 'none' : '' },
+        ],
+      }))
+    }),
+    kind: 'blocks',
+  })
+}
+
+function modesTables(blocks: readonly SnapshotBlock[]): TableView[] {
+  return blocks.flatMap((block) => {
+    const tables = new Map<string, string[]>()
+    for (const [condition, definition] of Object.entries(block.definitions)) {
+      if (definition.kind === 'modal') tables.set(JSON.stringify(definition), [...tables.get(JSON.stringify(definition)) ?? [], condition])
+    }
+    return [...tables].map(([text, conditions]) => {
+      const definition = JSON.parse(text) as Extract<SnapshotBlock['definitions'][string], { kind: 'modal' }>
+      const gains = (values: readonly number[]) => values.map(value => String(Number(value.toPrecision(8)))).join(', ')
+      const left = definition.modes.length - printedModes
+      return tableOf({
+        caption: `Modes of ${block.name}${conditions.length === Object.keys(block.definitions).length ? '' : ` in ${conditions.join(', ')}`}`,
+        columns: [{ head: 'mode' }, { head: 'frequency', unit: definition.frequencyUnit, isNumber: true }, { head: 'damping', isNumber: true }, { head: 'gain in', isNumber: true }, { head: 'gain out', isNumber: true }],
+        rows: [
+          ...definition.rigid.map(term => ({ cells: [{ text: `rigid, s^${term.power}`, isHead: true }, { text: '' }, { text: '' }, { text: gains(term.gainIn) }, { text: gains(term.gainOut) }] })),
+          ...definition.modes.slice(0, printedModes).map(mode => ({
+            cells: [{ text: mode.name, isHead: true }, { text: String(mode.frequency) }, { text: String(mode.damping) }, { text: gains(mode.gainIn) }, { text: gains(mode.gainOut) }],
+          })),
+        ],
+        notes: left > 0 ? [`${left} more modes are in snapshot.json of this revision's package.`] : [],
+        kind: 'modes',
+      })
+    })
+  })
+}
+
+/** How the loop gains are built: every block with its gain in each condition and the loops that use it. Null where no loop is built from blocks. */
+export function blocksSection(snapshot: ReportSnapshot, number: string): SectionView | null {
+  const { blocks = [] } = snapshot
+  if (blocks.length === 0) return null
+  return {
+    number,
+    anchor: 'blocks',
+    title: 'How the loop gains are built',
+    introduction: ['Each block is described once; the loop gains are expressions over their names, printed with the sources of each loop.'],
+    blocks: [
+      { title: '', paragraphs: [], items: [], table: blocksTable(snapshot, blocks) },
+      ...modesTables(blocks).map(table => ({ title: '', paragraphs: [], items: [], table })),
+    ],
+  }
+}

@@ -1,0 +1,67 @@
+import { formatDecibels } from '#shared/formatting/formatDecibels'
+import { formatDegrees } from '#shared/formatting/formatDegrees'
+import { formatDistance } from '#shared/formatting/formatDistance'
+import { formatFrequency } from '#shared/formatting/formatFrequency'
+import { significantDigits } from '#shared/formatting/significantDigits'
+import type { ReportSnapshot } from '#shared/types/snapshot'
+import type { MarginsThere, ModeShiftTable } from '#shared/types/structure'
+import type { PlacedCell } from './cellsOf'
+import { governingCell } from './chapterView'
+import type { SectionView, TableView } from './ReportView'
+import type { CellDraft } from './tableOf'
+import { tableOf } from './tableOf'
+import { withoutUnit } from './withoutUnit'
+
+const figure = (value: number | null | undefined, format: (value: number) => string): CellDraft => (value === null || value === undefined ? { text: 'none', tone: 'quiet' } : { text: withoutUnit(format(value)) })
+
+/** Closed loop and margins; a loop that is not stable has none. */
+function marginCells({ verdict, summary, vectorMargin, failure }: MarginsThere): CellDraft[] {
+  const blank: CellDraft[] = Array.from({ length: 4 }, () => ({ text: '' }))
+  if (failure !== null) return [{ text: 'not analysed', small: failure, tone: 'open' }, ...blank, { text: '' }]
+  const least: CellDraft = { text: vectorMargin === null ? '' : formatDistance(vectorMargin.distance) }
+  if (summary === null) return [{ text: verdict, tone: 'bad' }, ...blank, least]
+  return [
+    { text: verdict },
+    figure(summary.gainIncrease, formatDecibels), figure(summary.gainDecrease, formatDecibels), figure(summary.phaseLag, formatDegrees), figure(summary.phaseLead, formatDegrees),
+    least,
+  ]
+}
+
+function shiftTable({ loop, condition }: PlacedCell, { modes, nominal, frequencyUnit, notes }: ModeShiftTable): TableView {
+  return tableOf({
+    caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: each flexible mode moved, everything else left where it is`,
+    columns: [
+      { head: 'mode' }, { head: 'moved to', unit: frequencyUnit, isNumber: true }, { head: 'closed loop' }, { head: 'gain rise', unit: 'dB', isNumber: true }, { head: 'gain fall', unit: 'dB', isNumber: true },
+      { head: 'lag', unit: 'deg', isNumber: true }, { head: 'lead', unit: 'deg', isNumber: true }, { head: 'least', unit: '|1 + L|', isNumber: true },
+    ],
+    rows: [
+      { isMarked: true, cells: [{ text: 'as it is', isHead: true }, { text: '' }, ...marginCells(nominal)] },
+      ...modes.flatMap(({ block, mode, frequency, damping, shifts }) => shifts.map((shift, index) => ({
+        cells: [
+          { text: index === 0 ? mode : '', isHead: true, small: index === 0 ? `${block}, at ${formatFrequency(frequency, frequencyUnit)}, damping ${significantDigits(damping, 3)}` : '' },
+          { text: formatFrequency(frequency * (1 + shift.change)), small: `${shift.change > 0 ? '+' : '\u2212'}${Math.round(Math.abs(shift.change) * 100)} %` },
+          ...marginCells(shift),
+        ],
+      }))),
+    ],
+    notes,
+    kind: 'shifts',
+  })
+}
+
+/** What becomes of the margins where a flexible mode lies elsewhere than modelled. Null where no loop has such a table. */
+export function modeShiftSection(snapshot: ReportSnapshot, cells: readonly PlacedCell[], number: string): SectionView | null {
+  const tables = snapshot.loops.flatMap((_, index) => {
+    const placed = governingCell(cells.filter(cell => cell.loopIndex === index))
+    const shifts = placed?.cell.modeShifts
+    return placed && shifts && shifts.reason === null ? [shiftTable(placed, shifts)] : []
+  })
+  if (tables.length === 0) return null
+  return {
+    number,
+    anchor: 'mode-shifts',
+    title: 'Flexible modes moved',
+    introduction: ['Each flexible mode of a plant, actuator or sensor moved by \u221220, \u221210, +10 and +20 % with its damping and gains kept and the notch filters left where they are, in the condition that stands worst for the loop; every condition is in tables/mode-shifts.csv of this revision\u2019s package.'],
+    blocks: tables.map(table => ({ title: '', paragraphs: [], items: [], table })),
+  }
+}
