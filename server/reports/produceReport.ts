@@ -23,6 +23,7 @@ export interface ProduceTools {
   renderHtml: HtmlRenderer
   printer: PdfPrinter
   prepareGain: (input: LoopInput) => LoopGain
+  approximateGain: (input: LoopInput) => LoopGain | null
   progress: (step: string, done: number, total: number) => Promise<void>
   signal?: AbortSignal
 }
@@ -39,9 +40,9 @@ const mediaTypes: Record<ArtefactKind, string> = { html: 'text/html; charset=utf
 export async function produceReport(snapshotText: string, edition: EditionFacts, tools: ProduceTools): Promise<ProducedArtefact[]> {
   if (sha256Of(snapshotText) !== edition.snapshotSha256) throw new AppError('unexpected', 'The stored snapshot is not the one that was frozen: its SHA-256 differs.')
   const snapshot = parseSnapshot(snapshotText)
-  const { renderHtml, printer, prepareGain, progress, signal } = tools
+  const { renderHtml, printer, prepareGain, approximateGain, progress, signal } = tools
   const total = snapshot.loops.length + laterSteps
-  const drawn = await drawReportFigures(snapshot, { prepareGain, progress: (step, done) => progress(step, done, total), signal })
+  const drawn = await drawReportFigures(snapshot, { prepareGain, approximateGain, progress: (step, done) => progress(step, done, total), signal })
 
   await progress('Laying out the document', snapshot.loops.length, total)
   const view = buildReportView(snapshot, edition, drawn)

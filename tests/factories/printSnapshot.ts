@@ -11,7 +11,7 @@ import { buildLoopGain } from './buildLoopGain'
 /** The three artefacts of a snapshot, with the project's own templates and fonts. */
 export async function printSnapshot(snapshot: ReportSnapshot, printer: PdfPrinter, change: Partial<EditionFacts> = {}): Promise<Record<ProducedArtefact['kind'], ProducedArtefact>> {
   const renderHtml = await createHtmlRenderer(readAssetsFromFolder(process.cwd()))
-  const artefacts = await produceReport(canonicalJson(snapshot), buildEdition(snapshot, change), { renderHtml, printer, prepareGain: buildLoopGain, progress: async () => undefined })
+  const artefacts = await produceReport(canonicalJson(snapshot), buildEdition(snapshot, change), { renderHtml, printer, prepareGain: buildLoopGain, approximateGain: () => null, progress: async () => undefined })
   const of = (kind: ProducedArtefact['kind']) => {
     const found = artefacts.find(artefact => artefact.kind === kind)
     if (!found) throw new Error(`no ${kind} was produced`)

@@ -23,6 +23,8 @@ import { responseCsv } from './responseCsv'
 export interface DrawOptions {
   /** a loop gain ready to be evaluated */
   prepareGain: (input: LoopInput) => LoopGain
+  /** its continuous approximation, where it is a sampled controller on a continuous plant */
+  approximateGain: (input: LoopInput) => LoopGain | null
   /** told before each loop: words, loops done, loops in all; drawing waits for it */
   progress: (step: string, done: number, total: number) => Promise<void>
   signal?: AbortSignal
@@ -63,12 +65,22 @@ const breathe = () => new Promise<void>(resolve => setImmediate(resolve))
 interface DrawableCell extends PlacedCell {
   gain: LoopGain
   source: CurveSource
+  /** the sources set aside, and the continuous approximation of a sampled loop */
+  beside: CurveSource[]
 }
 
-function drawable(placed: PlacedCell, gain: LoopGain | null): DrawableCell | null {
-  const { cell: { analysis, input }, condition } = placed
+function drawable(placed: PlacedCell, gain: LoopGain | null, { prepareGain, approximateGain }: Pick<DrawOptions, 'prepareGain' | 'approximateGain'>): DrawableCell | null {
+  const { cell: { analysis, input, source, otherSources = [] }, condition } = placed
   if (!analysis || !input || !gain) return null
-  return { ...placed, gain, source: curveSourceOf(`${condition.code} ${condition.name}`, input, analysis, gain) }
+  const place = `${condition.code} ${condition.name}`
+  const setAside = otherSources.flatMap(other => (other.input && other.analysis ? [curveSourceOf(other.name, other.input, other.analysis, prepareGain(other.input))] : []))
+  const approximation = analysis.structure?.approximated ? approximateGain(input) : null
+  return {
+    ...placed,
+    gain,
+    source: curveSourceOf(setAside.length > 0 && source ? `${place}, ${source.name}` : place, input, analysis, gain),
+    beside: [...setAside, ...(approximation ? [{ name: 'continuous approximation', analysis, gain: approximation, isApproximation: true }] : [])],
+  }
 }
 
 /**
@@ -76,7 +88,7 @@ function drawable(placed: PlacedCell, gain: LoopGain | null): DrawableCell | nul
  * condition that stands worst, and for each loop the large figures of its governing condition and small ones of the others.
  * The same snapshot gives the same bytes. Throws the signal's reason when aborted.
  */
-export async function drawReportFigures(snapshot: ReportSnapshot, { prepareGain, progress, signal }: DrawOptions): Promise<DrawnReport> {
+export async function drawReportFigures(snapshot: ReportSnapshot, { prepareGain, approximateGain, progress, signal }: DrawOptions): Promise<DrawnReport> {
   const cells = cellsOf(snapshot)
   const required = limitOf(snapshot.criteria, 'vectorMargin')
   const unit = snapshot.system.frequencyUnit
@@ -99,7 +111,7 @@ export async function drawReportFigures(snapshot: ReportSnapshot, { prepareGain,
     for (const placed of ofLoop) {
       const gain = placed.cell.input && placed.cell.analysis ? prepareGain(placed.cell.input) : null
       gains.set(placed, gain)
-      const found = drawable(placed, gain)
+      const found = drawable(placed, gain, { prepareGain, approximateGain })
       if (found) sources.push(found)
       await breathe()
     }
@@ -115,7 +127,7 @@ export async function drawReportFigures(snapshot: ReportSnapshot, { prepareGain,
 
     for (const cell of sources) {
       const isGoverning = cell === governing
-      const data = buildLoopFigureData({ title, requiredVectorMargin: required, curves: [cell.source] })
+      const data = buildLoopFigureData({ title, requiredVectorMargin: required, curves: [cell.source, ...(isGoverning ? cell.beside : [])] })
       const idOf = (name: LoopFigureName) => `figure-${loopIndex + 1}-${cell.conditionIndex + 1}-${name}`
       const input = cell.cell.input
       if (input) drawn.responses.push({ name: responseName(stemOf(cell), '.csv'), csv: responseCsv(input, data.curves[0].curve, unit) })

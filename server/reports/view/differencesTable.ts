@@ -1,23 +1,24 @@
 import { formatDecibels } from '#shared/formatting/formatDecibels'
-import { formatDegrees } from '#shared/formatting/formatDegrees'
 import { formatFrequency } from '#shared/formatting/formatFrequency'
+import { formatPhaseChange } from '#shared/formatting/formatPhaseChange'
 import { significantDigits } from '#shared/formatting/significantDigits'
 import type { SnapshotCell } from '#shared/types/snapshot'
 import type { DifferenceBand } from '#shared/types/structure'
 import type { TableView } from './ReportView'
 import type { CellDraft } from './tableOf'
 import { tableOf } from './tableOf'
-import { withoutUnit } from './withoutUnit'
 
 /** From this part of the distance to \u22121 on a difference alone could decide a margin. */
 const tellingRatio = 0.5
+
+const gainWords = (difference: number) => (difference === 0 ? '0 dB' : `${formatDecibels(difference)} ${difference > 0 ? 'higher' : 'lower'}`)
 
 function bandCells({ from, to, gain, phase, relative }: DifferenceBand): CellDraft[] {
   const at = (frequency: number) => `at ${formatFrequency(frequency)}`
   return [
     { text: `${formatFrequency(from)} to ${formatFrequency(to)}` },
-    { text: withoutUnit(formatDecibels(gain.difference)), small: at(gain.frequency) },
-    { text: withoutUnit(formatDegrees(phase.difference)), small: at(phase.frequency) },
+    { text: gainWords(gain.difference), small: at(gain.frequency) },
+    { text: formatPhaseChange(phase.difference), small: at(phase.frequency) },
     { text: significantDigits(relative.ratio, 3), small: at(relative.frequency), tone: relative.ratio >= tellingRatio ? 'open' : 'plain' },
   ]
 }
@@ -30,7 +31,7 @@ export function differencesTable({ source, otherSources = [] }: SnapshotCell): T
   return tableOf({
     caption: `Other sources less ${source?.name ?? 'the source of record'}, the largest difference of each band`,
     columns: [
-      { head: 'source' }, { head: 'band', unit: first.difference.frequencyUnit }, { head: 'gain', unit: 'dB', isNumber: true }, { head: 'phase', unit: 'deg', isNumber: true },
+      { head: 'source' }, { head: 'band', unit: first.difference.frequencyUnit }, { head: 'gain' }, { head: 'phase' },
       { head: 'of the distance to \u22121', isNumber: true },
     ],
     rows: compared.flatMap(({ other, difference }) => difference.bands.map((band, index) => ({
