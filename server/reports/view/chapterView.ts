@@ -1,3 +1,4 @@
+import { describeBreakPoint } from '#shared/formatting/describeBreakPoint'
 import type { ReportSnapshot } from '#shared/types/snapshot'
 import { markdownToHtml } from '../text/markdownToHtml'
 import { safeHtml } from '../text/SafeHtml'
@@ -63,8 +64,7 @@ export function chapterView(snapshot: ReportSnapshot, cells: readonly PlacedCell
     tone: worst ? verdictTone(worst.cell.judgement.verdict) : 'open',
     facts: [
       { name: 'Axis', value: loop.axis },
-      { name: 'Opened at', value: loop.breakPoint },
-      { name: 'Other loops', value: loop.otherLoops },
+      { name: 'Break point', value: describeBreakPoint({ ...loop, states: loop.loopStates ?? [] }) },
       { name: 'Notes', value: loop.notes },
     ].filter(({ value }) => value !== ''),
     remarks: loop.remarks === '' ? safeHtml('') : markdownToHtml(loop.remarks),

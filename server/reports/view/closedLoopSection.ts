@@ -1,6 +1,4 @@
-import { formatDelay } from '#shared/formatting/formatDelay'
-import { formatFrequency } from '#shared/formatting/formatFrequency'
-import { significantDigits } from '#shared/formatting/significantDigits'
+import { describeClosedLoopPole } from '#shared/formatting/describeClosedLoopPole'
 import type { ReportSnapshot } from '#shared/types/snapshot'
 import type { ClosedLoopPoles } from '#shared/types/structure'
 import type { PlacedCell } from './cellsOf'
@@ -11,24 +9,16 @@ import { tableOf } from './tableOf'
 /** Poles of one loop that are printed; the package holds every one. */
 const printedPoles = 60
 
-function timeConstantWords(seconds: number | null): string {
-  if (seconds === null) return 'on the boundary'
-  return seconds > 0 ? formatDelay(seconds) : `grows in ${formatDelay(-seconds)}`
-}
-
 function polesTable({ loop, condition }: PlacedCell, { poles, frequencyUnit }: ClosedLoopPoles): TableView {
   const left = poles.length - printedPoles
   return tableOf({
     caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: closed-loop poles`,
     columns: [{ head: 'frequency', unit: frequencyUnit, isNumber: true }, { head: 'damping', isNumber: true }, { head: 'time constant', isNumber: true }, { head: 'goes back to', isWide: true }],
-    rows: poles.slice(0, printedPoles).map(pole => ({
-      cells: [
-        { text: formatFrequency(pole.frequency) },
-        { text: significantDigits(pole.damping, 3), tone: pole.damping < 0 ? 'bad' as const : 'plain' as const },
-        { text: timeConstantWords(pole.timeConstant), tone: pole.timeConstant === null || pole.timeConstant < 0 ? 'bad' as const : 'plain' as const },
-        { text: pole.mode ?? '' },
-      ],
-    })),
+    rows: poles.slice(0, printedPoles).map((pole) => {
+      const { frequency, damping, timeConstant, mode } = describeClosedLoopPole(pole)
+      const tone = pole.timeConstant === null || pole.timeConstant < 0 ? 'bad' as const : 'plain' as const
+      return { cells: [{ text: frequency }, { text: damping, tone }, { text: timeConstant, tone }, { text: mode }] }
+    }),
     notes: left > 0 ? [`${left} more are in tables/closed-loop-poles.csv of this revision's package.`] : [],
     kind: 'poles',
   })

@@ -1,4 +1,5 @@
-import type { ListedFrequency, LoopAnalysis } from '#shared/types/analysis'
+import type { ApproximationDifference, ListedFrequency, LoopAnalysis } from '#shared/types/analysis'
+import { describeApproximation } from '#shared/formatting/describeApproximation'
 import { formatDistance } from '#shared/formatting/formatDistance'
 import { formatFrequency } from '#shared/formatting/formatFrequency'
 import { formatDecibels } from '#shared/formatting/formatDecibels'
@@ -25,6 +26,7 @@ interface Entry {
   delay: string
   distance: string
   change: string
+  approximation: string
 }
 
 const order = (frequency: ListedFrequency) => (frequency === 'infinity' ? Infinity : frequency)
@@ -33,6 +35,9 @@ const distanceText = (distance: number | undefined) => (distance === undefined ?
 /** 'lag 32.3': the unit stands in the head. */
 const phaseText = (degrees: number) => (degrees === 0 ? 'none' : `${degrees > 0 ? 'lag' : 'lead'} ${withoutUnit(formatDegrees(degrees))} deg`)
 const gainText = (decibels: number) => (decibels === 0 ? 'none' : `gain may ${decibels > 0 ? 'rise' : 'fall'} ${withoutUnit(formatDecibels(decibels))} dB`)
+
+/** The head says of what it tells. */
+const approximationText = ({ approximation }: { approximation?: ApproximationDifference }) => (approximation === undefined ? '' : describeApproximation(approximation).replace(/^approximation: /, ''))
 
 function entriesOf(analysis: LoopAnalysis, approaches: LoopAnalysis['closestApproaches']): Entry[] {
   const entries: Entry[] = [
@@ -44,6 +49,7 @@ function entriesOf(analysis: LoopAnalysis, approaches: LoopAnalysis['closestAppr
       delay: significantDigits(crossing.delayMargin * 1000, 3),
       distance: distanceText(crossing.distance),
       change: '',
+      approximation: approximationText(crossing),
     })),
     ...analysis.phaseCrossovers.map((crossing): Entry => ({
       frequency: crossing.frequency,
@@ -53,6 +59,7 @@ function entriesOf(analysis: LoopAnalysis, approaches: LoopAnalysis['closestAppr
       delay: '',
       distance: distanceText(crossing.distance),
       change: '',
+      approximation: approximationText(crossing),
     })),
     ...approaches.map((approach): Entry => ({
       frequency: approach.frequency,
@@ -62,6 +69,7 @@ function entriesOf(analysis: LoopAnalysis, approaches: LoopAnalysis['closestAppr
       delay: '',
       distance: formatDistance(approach.distance),
       change: `${formatGainChange(approach.gainChange)}, ${formatPhaseChange(approach.phaseChange)}`,
+      approximation: approximationText(approach),
     })),
   ]
   // The sort keeps gain crossovers before phase crossovers before approaches at one frequency.
@@ -86,6 +94,7 @@ function noiseNote(noisy: LoopAnalysis['closestApproaches'], unit: string): stri
  */
 export function crossingsTable(analysis: LoopAnalysis): TableView | null {
   const hasMargins = analysis.summary !== null
+  const isApproximated = analysis.structure?.approximated === true
   const noisy = noiseOf(analysis)
   const entries = entriesOf(analysis, analysis.closestApproaches.filter(approach => !noisy.includes(approach)))
   if (entries.length === 0) return null
@@ -97,6 +106,7 @@ export function crossingsTable(analysis: LoopAnalysis): TableView | null {
     ...(hasMargins ? [{ head: 'margin here' }, { head: 'delay', unit: 'ms', isNumber: true }] : []),
     { head: 'distance', unit: '|1 + L|', isNumber: true },
     ...(hasMargins ? [{ head: 'one change that reaches \u22121', isWide: true }] : []),
+    ...(isApproximated ? [{ head: 'continuous approximation' }] : []),
   ]
   const rows = entries.slice(0, printedRows).map(entry => ({
     isMarked: entry.what === 'closest approach',
@@ -107,11 +117,13 @@ export function crossingsTable(analysis: LoopAnalysis): TableView | null {
       ...(hasMargins ? [entry.margin, { text: entry.delay }] : []),
       { text: entry.distance },
       ...(hasMargins ? [{ text: entry.change }] : []),
+      ...(isApproximated ? [{ text: entry.approximation }] : []),
     ],
   }))
   const notes = [
     ...(hasMargins ? [] : ['The closed loop is not shown to be stable, so there are no margins: distances to \u22121 only.']),
     ...(noisy.length > 0 ? [noiseNote(noisy, analysis.frequencyUnit)] : []),
+    ...(isApproximated ? ['The last column says what the continuous approximation, controller times hold, delay and plant, would add to the loop gain found here; it judges nothing.'] : []),
     ...(left > 0 ? [`${left} more are in tables/crossings.csv and tables/closest-approaches.csv of this revision's package.`] : []),
   ]
   return tableOf({ caption: 'Every crossing and closest approach, in order of frequency', columns, rows, notes, kind: 'crossings' })

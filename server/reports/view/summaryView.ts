@@ -3,6 +3,7 @@ import type { Verdict } from '#shared/types/criterion'
 import { verdictOrder } from '#shared/analysis/criteria/verdictOrder'
 import { formatDistance } from '#shared/formatting/formatDistance'
 import { formatFrequency } from '#shared/formatting/formatFrequency'
+import { gainDecreaseCaution } from '#shared/formatting/gainDecreaseCaution'
 import type { PlacedCell } from './cellsOf'
 import { conditionAnchor, loopAnchor } from './anchorOf'
 import { compareStanding } from './compareStanding'
@@ -114,6 +115,18 @@ function attentionTable(snapshot: ReportSnapshot, cells: readonly PlacedCell[]):
   })
 }
 
+/** Every finite margin against falling gain is told: saturation and start-up use it up without anybody changing a gain. */
+function gainFallStatement(cells: readonly PlacedCell[]): string[] {
+  const falling = cells.flatMap(({ cell, loop, condition }) => {
+    const decrease = cell.analysis?.summary?.gainDecrease ?? null
+    return decrease === null ? [] : [{ size: Math.abs(decrease), summary: cell.analysis?.summary ?? null, place: `${loop.code} in ${condition.code}` }]
+  })
+  const least = falling.reduce<(typeof falling)[number] | null>((smallest, next) => (smallest === null || next.size < smallest.size ? next : smallest), null)
+  if (least === null) return []
+  const words = gainDecreaseCaution(least.summary) ?? ''
+  return [`${falling.length === 1 ? '1 pair bears' : `${falling.length} pairs bear`} only so much loss of gain; the least is ${least.place}: ${words}. The anti-windup and the order of starting up must keep it.`]
+}
+
 /** The page a manager acts on: the answer, the counts, the worst of each margin, what needs attention, the crossing chart. */
 export function summaryView(snapshot: ReportSnapshot, cells: readonly PlacedCell[], chart: FigureView | null): SummaryView {
   return {
@@ -125,6 +138,7 @@ export function summaryView(snapshot: ReportSnapshot, cells: readonly PlacedCell
     attention: attentionTable(snapshot, cells),
     chart,
     statements: [
+      ...gainFallStatement(cells),
       'One loop at a time is opened, the others as stated in its chapter. A simultaneous change in several loops is not covered.',
       'Each operating condition is frozen: nothing is said of the way between two of them. Linear margins hold at the amplitude they were measured or modelled for.',
     ],
