@@ -1,19 +1,23 @@
 import { ENGINE_VERSION } from '#shared/analysis/engineVersion'
+import { breakPointDisagreements, cellKey } from '#shared/workflow/breakPointDisagreements'
+import type { Block } from '#shared/types/block'
 import { judgeAnalysis } from '#shared/analysis/criteria/judgeAnalysis'
-import type { ReportSnapshot, SnapshotCell, SnapshotLoop } from '#shared/types/snapshot'
-import type { AnalysedSource, SourceDefinition } from '#shared/types/source'
+import type { ReportSnapshot, SnapshotBlock, SnapshotCell, SnapshotLoop } from '#shared/types/snapshot'
+import type { SourceDefinition } from '#shared/types/source'
 import type { Criterion } from '#shared/types/criterion'
 import type { Loop, OperatingCondition, Parameter } from '#shared/types/system'
 import type { ReportRow } from '../database/models/ReportRow'
 import { RevisionRow } from '../database/models/RevisionRow'
+import { SourceRow } from '../database/models/SourceRow'
 import { UploadRow } from '../database/models/UploadRow'
+import { findStructures, type LoopStructureFacts, type SourcesOfCell } from '../services/analyses/findStructures'
+import { listBlocks } from '../services/blocks/listBlocks'
 import { readBrandForPrint } from '../services/brand/readBrandForPrint'
 import type { ServiceContext } from '../services/context'
 import { nowOf } from '../services/context'
 import { listLoops } from '../services/loops/listLoops'
 import { listParameters } from '../services/parameters/listParameters'
 import { analyseSources } from '../services/sources/analyseSources'
-import { listSourcesOfRecord } from '../services/sources/listSourcesOfRecord'
 import { readSystem } from '../services/systems/readSystem'
 
 /** Rows in the order of the ids given; ids of rows that are gone are left out. */
@@ -27,7 +31,12 @@ async function fileOf(definition: SourceDefinition): Promise<{ name: string, sha
   return upload === null ? null : { name: upload.fileName, sha256: upload.sha256 }
 }
 
-async function cellOf(loop: Loop, condition: OperatingCondition, entry: AnalysedSource | undefined, criteria: Criterion[]): Promise<SnapshotCell> {
+interface CoveredCell extends SourcesOfCell {
+  loop: Loop
+  condition: OperatingCondition
+}
+
+async function cellOf({ loop, condition, ofRecord: entry, others }: CoveredCell, structure: LoopStructureFacts, disagreement: string | null, criteria: Criterion[]): Promise<SnapshotCell> {
   const analysis = entry?.analysis ?? null
   return {
     loopCode: loop.code,
@@ -37,7 +46,27 @@ async function cellOf(loop: Loop, condition: OperatingCondition, entry: Analysed
     analysis,
     failure: entry?.failure ?? null,
     judgement: judgeAnalysis(analysis, criteria),
+    closedLoopPoles: structure.closedLoopPoles,
+    modeShifts: structure.modeShifts,
+    otherSources: others.map(({ source, ...other }, index) => ({
+      name: source.name, kind: source.kind, setAsideReason: source.setAsideReason, ...other, difference: structure.differences[index] ?? null,
+    })),
+    disagreement,
   }
+}
+
+function blocksOf(blocks: readonly Block[], conditions: readonly OperatingCondition[]): SnapshotBlock[] {
+  return blocks.map(({ name, role, unitIn, unitOut, notes, definition, byCondition }) => ({
+    name,
+    role,
+    unitIn,
+    unitOut,
+    notes,
+    definitions: Object.fromEntries(conditions.flatMap(({ id, code }) => {
+      const inEffect = byCondition[id] ?? definition
+      return inEffect === null ? [] : [[code, inEffect]]
+    })),
+  }))
 }
 
 function parametersOf(parameters: readonly Parameter[], conditions: readonly OperatingCondition[]): ReportSnapshot['parameters'] {
@@ -78,15 +107,21 @@ export async function coverageOf(report: ReportRow): Promise<{ loops: Loop[], co
  * computed, so this is never called inside a write transaction.
  */
 export async function collectSnapshot(report: ReportRow, draft: DraftFacts, context: ServiceContext): Promise<ReportSnapshot> {
-  const [{ system, criteria }, { loops, conditions }, parameters, brand, history] = await Promise.all([
-    readSystem(report.systemId), coverageOf(report), listParameters(report.systemId), readBrandForPrint(), historyOf(report.id),
+  const [{ system, criteria }, { loops, conditions }, parameters, blocks, brand, history] = await Promise.all([
+    readSystem(report.systemId), coverageOf(report), listParameters(report.systemId), listBlocks(report.systemId), readBrandForPrint(), historyOf(report.id),
   ])
   const codes = new Map((await listLoops(report.systemId)).map(({ id, code }) => [id, code]))
-  const sources = await listSourcesOfRecord(loops.map(({ id }) => id), conditions.map(({ id }) => id))
+  const sources = await SourceRow.findAll({ where: { loopId: loops.map(({ id }) => id), conditionId: conditions.map(({ id }) => id) }, order: ['id'] })
   const analysed = await analyseSources(sources, system, context)
-  const cells = await Promise.all(loops.flatMap(loop => conditions.map(condition => cellOf(
-    loop, condition, analysed.find(({ source }) => source.loopId === loop.id && source.conditionId === condition.id), criteria,
-  ))))
+  const covered = loops.flatMap(loop => conditions.map((condition): CoveredCell => {
+    const ofCell = analysed.filter(({ source }) => source.loopId === loop.id && source.conditionId === condition.id)
+    return { loop, condition, ofRecord: ofCell.find(({ source }) => source.ofRecord), others: ofCell.filter(({ source }) => !source.ofRecord) }
+  }))
+  const structures = await findStructures(covered, Object.fromEntries(blocks.map(({ name, role }) => [name, role])), context)
+  const disagreements = breakPointDisagreements({ loops, cells: covered.map(({ loop, condition, ofRecord }) => ({ loopId: loop.id, conditionId: condition.id, analysis: ofRecord?.analysis ?? null })) })
+  const cells = await Promise.all(covered.map((cell, index) => (
+    cellOf(cell, structures[index]!, disagreements.get(cellKey(cell.loop.id, cell.condition.id)) ?? null, criteria)
+  )))
   return {
     format: 'wideberth report snapshot',
     formatVersion: 1,
@@ -101,6 +136,7 @@ export async function collectSnapshot(report: ReportRow, draft: DraftFacts, cont
     conditions: conditions.map(({ code, name, coordinates, tags, notes }) => ({ code, name, coordinates, tags, notes })),
     loops: loops.map(loop => snapshotLoop(loop, codes, report)),
     parameters: parametersOf(parameters, conditions),
+    blocks: blocksOf(blocks, conditions),
     cells,
     history,
   }
