@@ -54,12 +54,19 @@ function addTerms(a: DelayedPolynomial, b: DelayedPolynomial): DelayedPolynomial
   if (coefficients.some(coefficient => bitLength(coefficient) > expressionLimits.bits)) {
     throw new RangeError('its exact coefficients have too many digits')
   }
-  const { scale, factors } = FactorProduct.of(coefficients, [first, second].some(FactorProduct.holdsPrecise))
+  const { scale, factors } = FactorProduct.of(coefficients, [first, second].some(isWorkedOut))
   return {
     scale: scale.over(Rational.of(a.scale.denominator * b.scale.denominator, 1n)),
     factors: FactorProduct.times(shared, factors),
     delay: a.delay,
   }
+}
+
+/** Whether the coefficients of a term are others than those typed: a product was multiplied out. */
+function isWorkedOut(factors: FactorMap): boolean {
+  let polynomials = 0
+  for (const { coefficients, power } of factors.values()) if (coefficients.some((value, k) => value !== 0n && k < coefficients.length - 1)) polynomials += power
+  return polynomials > 1 || FactorProduct.holdsPrecise(factors)
 }
 
 function expand(factors: FactorMap): bigint[] {

@@ -35,8 +35,8 @@ export class ContinuousPoles {
   private readonly starts: PoleStart[] = []
 
   constructor(denominator: FactorMap) {
-    for (const { coefficients, power } of denominator.values()) {
-      for (const factor of squareFreeFactors(coefficients)) this.addRoots(factor.coefficients, factor.multiplicity * power)
+    for (const { coefficients, power, precise = false } of denominator.values()) {
+      for (const factor of squareFreeFactors(coefficients)) this.addRoots(factor.coefficients, factor.multiplicity * power, precise)
     }
   }
 
@@ -45,14 +45,14 @@ export class ContinuousPoles {
     return this.starts
   }
 
-  private addRoots(coefficients: bigint[], multiplicity: number): void {
+  private addRoots(coefficients: bigint[], multiplicity: number, precise: boolean): void {
     if (coefficients.length === 2) {
       const root = Rational.of(-(coefficients[0] as bigint), coefficients[1] as bigint).toNumber()
       this.starts.push({ re: root, im: 0, multiplicity, polynomial: coefficients })
       return
     }
     const exact = { coefficients, exponent: 0 }
-    const list = snapToBoundary(polynomialRoots(exact), false, ScaledPolynomial.fromExact(exact))
+    const list = snapToBoundary(polynomialRoots(exact), false, precise ? null : ScaledPolynomial.fromExact(exact))
     for (let k = 0; k < list.re.length; k++) {
       const re = list.re[k] as number
       const im = list.im[k] as number
