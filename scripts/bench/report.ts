@@ -6,7 +6,7 @@ import { join } from 'node:path'
 import { pathToFileURL } from 'node:url'
 import puppeteer from 'puppeteer-core'
 import type { Browser } from 'puppeteer-core'
-import { prepareLoopGain } from '#shared/analysis/prepareLoopGain'
+import { loopGains } from '#server/reports/figures/loopGains'
 import type { ReportSnapshot } from '#shared/types/snapshot'
 import { closeAnalysisPool } from '#server/adapters/analysisPool/analysisPool'
 import { createChromiumPrinter } from '#server/adapters/chromium/chromiumPrinter'
@@ -86,7 +86,7 @@ try {
     delay.enable()
     const start = performance.now()
     const snapshot = JSON.parse(text) as ReportSnapshot
-    const drawn = await drawReportFigures(snapshot, { prepareGain: prepareLoopGain, progress: async () => undefined })
+    const drawn = await drawReportFigures(snapshot, { ...loopGains, progress: async () => undefined })
     const drawnAt = performance.now()
     const edition = { edition: 'draft' as const, label: 'A draft 1', preparedBy: snapshot.frozenBy, preparedAt: snapshot.frozenAt, approvedBy: null, issuedAt: null, snapshotSha256: sha256Of(text) }
     const view = buildReportView(snapshot, edition, drawn)

@@ -1,4 +1,4 @@
-import { prepareLoopGain } from '#shared/analysis/prepareLoopGain'
+import { loopGains } from '../../reports/figures/loopGains'
 import { AppError } from '#shared/errors/AppError'
 import type { EditionFacts } from '#shared/types/snapshot'
 import { revisionLabel } from '#shared/workflow/revisionLabel'
@@ -37,7 +37,7 @@ export const createRenderRevision = ({ renderHtml, printer }: RenderTools): JobH
   const [revision, requester] = await Promise.all([RevisionRow.findByPk(job.revisionId), PersonRow.findByPk(job.requestedBy)])
   if (revision === null || requester === null) throw new AppError('unexpected', 'A job names a revision or a person that is not there.')
   const edition = editionFacts(revision, job, requester)
-  const artefacts = await produceReport(await readSnapshotText(revision.id), edition, { renderHtml: await renderHtml(), printer, prepareGain: prepareLoopGain, progress, signal })
+  const artefacts = await produceReport(await readSnapshotText(revision.id), edition, { renderHtml: await renderHtml(), printer, ...loopGains, progress, signal })
   return async () => {
     await storeArtefacts(revision.id, job.edition, artefacts)
     if (job.edition === 'issued') await completeIssue(revision.id, requester, job.createdAt)

@@ -1,4 +1,4 @@
-import { prepareLoopGain } from '#shared/analysis/prepareLoopGain'
+import { loopGains } from '../../reports/figures/loopGains'
 import { nextDraft } from '#shared/workflow/nextDraft'
 import { RevisionRow } from '../../database/models/RevisionRow'
 import { buildReportView } from '../../reports/buildReportView'
@@ -15,7 +15,7 @@ export async function previewReport(reportId: number, renderHtml: HtmlRenderer, 
   const report = await findReport(reportId)
   const draft = nextDraft(await RevisionRow.findAll({ where: { reportId } }))
   const snapshot = await collectSnapshot(report, { ...draft, changeNote: 'Not frozen yet' }, context)
-  const drawn = await drawReportFigures(snapshot, { prepareGain: prepareLoopGain, progress: async () => undefined })
+  const drawn = await drawReportFigures(snapshot, { ...loopGains, progress: async () => undefined })
   return renderHtml(buildReportView(snapshot, {
     edition: 'preview', label: 'Preview', preparedBy: context.actor.name, preparedAt: snapshot.frozenAt, approvedBy: null, issuedAt: null, snapshotSha256: sha256Of(writeSnapshot(snapshot)),
   }, drawn))

@@ -10,6 +10,7 @@ import { drawFigure } from '#shared/plots/drawFigure'
 import type { LoopFigureData } from '#shared/plots/FigureData'
 import type { FigureName } from '#shared/plots/figures'
 import { figures } from '#shared/plots/figures'
+import { buildBlockResponse } from '#shared/plots/buildBlockResponse'
 import { buildLoopFigureData } from '#shared/plots/buildLoopFigureData'
 import { chooseFrequencyRange } from '#shared/plots/sampling/chooseFrequencyRange'
 import { readoutOf } from '#shared/plots/text/readoutOf'
@@ -184,7 +185,9 @@ describe('an approach no deeper than the noise of its measurement', () => {
 
 describe('captions', () => {
   it.each(Object.keys(figures) as FigureName[])('are whole sentences of what to see, %s', (name) => {
-    const caption = name === 'crossingChart' ? figures.crossingChart.caption(crossingRows()) : figures[name].caption(slewPosition())
+    const caption = name === 'crossingChart'
+      ? figures.crossingChart.caption(crossingRows())
+      : name === 'blockResponse' ? figures.blockResponse.caption(buildBlockResponse({ title: 'G', frequencyUnit: 'rad/s', gain: slewGain })) : figures[name].caption(slewPosition())
     expect(caption).toMatch(/^[A-Z].*\.$/)
     expect(caption).not.toMatch(/ {2}|\.\.|undefined/)
   })

@@ -34,5 +34,7 @@ export function plainEvaluation(node: ExpressionNode, parameters: Record<string,
     }
     case 'multiply': return times(at(node.left), at(node.right))
     case 'divide': return over(at(node.left), at(node.right))
+    case 'brackets': return at(node.content)
+    case 'block': throw new Error(`the block ${node.name} has no value here`)
   }
 }

@@ -159,7 +159,7 @@ describe('open-loop poles by the blocks they come from', () => {
 
   it('blocks that stand alone: no block, no name; a block of the name constructor', () => {
     expect(modesOf({ expression: '1/s', blocks: {} })).toEqual(['integrator'])
-    expect(modesOf({ expression: 'constructor', blocks: { constructor: { kind: 'expression', expression: '1/(s+1)' } } })).toEqual(['real pole of constructor at 1 rad/s'])
+    expect(modesOf({ expression: 'constructor', blocks: { constructor: { kind: 'expression', expression: '1/(s+1)' } as BlockGain } })).toEqual(['real pole of constructor at 1 rad/s'])
   })
 
   it('modes of a modal table go by their names, other poles by their blocks', () => {
