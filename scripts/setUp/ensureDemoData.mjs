@@ -12,7 +12,7 @@ export async function ensureDemoData(entry, folder = dataFolder()) {
   mkdirSync(folder, { recursive: true })
   if (existsSync(join(folder, 'wideberth.sqlite'))) return existsSync(join(folder, 'demo-data'))
   if (process.env.WIDEBERTH_DEMO === '0') return false
-  console.log('Making the demo data: two systems, three issued revisions rendered (about a minute) ...')
+  console.log('Making the demo data: three systems, three issued revisions rendered (about a minute) ...')
   const making = join(folder, 'being-made')
   rmSync(making, { recursive: true, force: true })
   mkdirSync(making)

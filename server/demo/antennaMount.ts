@@ -6,6 +6,8 @@ import { elevations, mountModes } from './mountModes'
 
 /** s; rate loops at 1 kHz */
 const sampleTime = 1e-3
+/** 1/s, of the azimuth and the elevation bearings, found in the survey */
+const bearingFriction = [0.021, 0.034]
 const codes = elevations.map(elevation => `E${elevation}`)
 
 /** Second-order sections as they stand in the drive's code, in 1/16384. */
@@ -28,7 +30,7 @@ const blocks: DemoBlock[] = [
   { name: 'Drive', role: 'actuator', unitIn: 'N m', unitOut: 'N m', notes: 'torque loop of the drives', gain: { kind: 'expression', expression: '1/(s/800+1)' } },
   {
     name: 'G', role: 'plant', unitIn: 'N m', unitOut: 'rad/s', notes: 'correlated with the modal survey: 60 states, a set of matrices an elevation in one file',
-    file: { name: 'mount-correlated.csv', text: makeMatrices(codes.map((code, index) => ({ code, table: correlateModes(mountModes(index), 6100 + index) }))) },
+    file: { name: 'mount-correlated.csv', text: makeMatrices(codes.map((code, index) => ({ code, table: correlateModes(mountModes(index), 6100 + index) })), bearingFriction) },
     gain: ({ code, uploadId }) => ({ kind: 'stateSpace', uploadId, set: code, states: null, inputs: [], outputs: [] }),
   },
   { name: 'Gd', role: 'plant', unitIn: 'N m', unitOut: 'rad/s', notes: 'design model: modal table of the finite element model', gain: ({ index }) => mountModes(index) },
