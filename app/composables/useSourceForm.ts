@@ -99,7 +99,11 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
   const blocks = computed(() => detail.value?.blocks ?? [])
   const gains = computed(() => condition.value === null ? {} : detail.value?.blockGains[condition.value.id] ?? {})
   const used = computed(() => kept.value.typed.kind === 'expression' && condition.value !== null ? blocksUsed(kept.value.typed.expression, blocks.value, condition.value.id) : [])
-  const sampling = computed(() => samplingInWords(used.value.map(({ block, definition }) => ({ name: block.name, definition }))))
+  const sampling = computed(() => {
+    const words = samplingInWords(used.value.map(({ block, definition }) => ({ name: block.name, definition })))
+    const isHeld = used.value.some(({ definition }) => definition?.kind === 'hold')
+    return words !== null && isHeld ? `${words}; continuous blocks behind the hold are taken by their exact discrete equivalent` : words
+  })
   const completion = computed(() => completionNames({ blocks: blocks.value, parameters: detail.value?.parameters ?? [], gains: gains.value, conditionId: condition.value?.id ?? null }))
   /** parameters that the expression itself names */
   const names = computed(() => kept.value.typed.kind === 'expression' ? namesUsed(kept.value.typed.expression).filter(name => !blocks.value.some(block => block.name === name)) : [])
