@@ -12,17 +12,26 @@ export function hiddenModeNotes(loop: FactoredLoop, used: readonly UsedLeaf[]): 
   const cancelled = cancelledPoles(loop)
   if (cancelled.length === 0) return []
   const { sampleTime } = loop
-  const owners = used.flatMap(({ block, loop: leaf, sampled }) => {
-    const { poles } = rationalPart(leaf, sampled ? sampleTime : undefined)
-    return Array.from(poles.re, (re, k) => ({ block, ...inDomain(re, poles.im[k]!, sampleTime !== undefined && !sampled ? sampleTime : undefined) }))
+  const leaves = used.map(({ block, loop: leaf, sampled }) => {
+    const factors = rationalPart(leaf, sampled ? sampleTime : undefined)
+    const place = ({ re, im }: { re: number, im: number }) => inDomain(re, im, sampleTime !== undefined && !sampled ? sampleTime : undefined)
+    return {
+      block,
+      poles: Array.from(factors.poles.re, (re, k) => place({ re, im: factors.poles.im[k]! })),
+      // those that a zero of the block itself cancels: a state that its channel does not show
+      own: cancelledPoles(factors).map(place),
+    }
   })
   return cancelled.map(({ re, im, onBoundary }): StructureNote => {
-    const owner = owners.find(pole => Math.hypot(pole.re - re, pole.im - im) <= SAME_POLE * Math.hypot(re, im))
+    const isHere = (pole: { re: number, im: number }) => Math.hypot(pole.re - re, pole.im - im) <= SAME_POLE * Math.hypot(re, im)
+    const hider = leaves.find(({ own }) => own.some(isHere))
+    if (hider) hider.own.splice(hider.own.findIndex(isHere), 1)
+    const owners = hider ? [hider.block] : [...new Set(leaves.filter(({ poles }) => poles.some(isHere)).map(({ block }) => block))]
     const place = im === 0 ? format(re) : `${format(re)} +- j${format(im)}`
     return {
-      block: owner?.block ?? '',
+      block: owners[0] ?? '',
       code: onBoundary ? 'hidden boundary' : 'hidden unstable',
-      message: `A zero cancels the pole at ${sampleTime === undefined ? 's' : 'z'} = ${place}${owner ? ` of ${owner.block}` : ''}: the mode is not seen in L, the closed loop keeps it, and it is ${onBoundary ? 'on the stability boundary' : 'unstable'}.`,
+      message: `A zero cancels the pole at ${sampleTime === undefined ? 's' : 'z'} = ${place}${owners.length === 0 ? '' : ` of ${owners.join(' or ')}`}: the mode is not seen in L, the closed loop keeps it, and it is ${onBoundary ? 'on the stability boundary' : 'unstable'}.`,
     }
   })
 }

@@ -235,6 +235,13 @@ describe('hidden modes', () => {
     expect(analysis.stability.verdict).toBe('marginal')
   })
 
+  it('a state that its own block hides is that block\'s, though another has a pole at the same place', () => {
+    // two rigid bodies, the second not reached by the input
+    const plant: BlockGain = { kind: 'stateSpace', a: [[0, 0], [0, 0]], b: [[1], [0]], c: [[1, 1]], d: [[0]], inputs: [], outputs: [] }
+    const { structure } = analyse(over('C*H*P', { C: gain('(z-0.9)/(z-1)', 0.1), H: zoh, P: plant }))
+    expect(structure?.notes.map(({ block, code }) => [block, code])).toEqual([['P', 'unreachable'], ['P', 'hidden boundary']])
+  })
+
   it('poles of a block in its own feedback do not stay', () => {
     expect(analyse(over('G/(1 + H*G)', { G: gain('1/(s-1)'), H: gain('5') })).structure?.notes).toEqual([])
   })
