@@ -1,4 +1,5 @@
 import type { BlockDefinition } from '#shared/types/block'
+import { ApiError } from '~/services/ApiError'
 import { blocksClient } from '~/services/blocksClient'
 import { systemsClient } from '~/services/systemsClient'
 import { newBlock, readTypedBlock, typedBlock, type TypedBlock } from '~/services/TypedBlock'
@@ -149,10 +150,11 @@ export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
   const otherProblems = computed(() => (live.answer.value?.problems ?? []).filter(({ path }) => path.startsWith('blocks.') || path.startsWith('stateSpace')).map(({ message }) => message))
   // What was refused is no longer said of what is typed since.
   watch(() => JSON.stringify(typed.value), () => {
-    if (error.value?.path !== undefined && error.value.code !== 'conflict') error.value = null
+    if (error.value?.path !== undefined && !conflict.value) error.value = null
   })
 
-  const conflict = computed(() => error.value?.code === 'conflict')
+  /** A name that is taken is a conflict too, told at its field. */
+  const conflict = computed(() => error.value?.code === 'conflict' && error.value.path === 'version')
 
   /** Goes to the gain at which a refusal stands. */
   function goTo(found: string | undefined) {
@@ -172,8 +174,8 @@ export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
     for (const gain of [typed.value.shared, ...Object.values(typed.value.own)]) dropBlankRows(gain)
     const found = read.value
     if ('problems' in found) {
-      goTo(found.problems[0]?.path)
-      throw new Error(`${whereWords(found.problems[0]?.path)}${found.problems[0]?.message ?? 'Something is missing.'}`)
+      const [first] = found.problems
+      throw new ApiError('invalidInput', first?.message ?? 'Something is missing.', first?.path)
     }
     if (blockId === null) await store.createBlock(found.fields)
     else await store.changeBlock(blockId, { version: kept.value.version ?? 0, ...found.fields })

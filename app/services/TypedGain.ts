@@ -52,6 +52,9 @@ export interface TypedGain {
   states: number | null
   mapping: MeasurementMapping | null
   averages: string
+  /** stated of a measured response */
+  unstablePoles: string
+  originPoles: string
   hold: HoldKind
   duty: string
 }
@@ -59,7 +62,7 @@ export interface TypedGain {
 export const emptyGain = (frequencyUnit: FrequencyUnit): TypedGain => ({
   kind: 'expression', sampled: false, sampleTime: '', expression: '', numerator: '', denominator: '', zeros: '', poles: '', gain: '', deadTime: '', deadTimeUnit: 's',
   rows: [['', '', '', '1', '', '']], frequencyUnit, dampingUnit: 'ratio', derivative: '0', modes: [emptyMode(1, 1)], rigid: [], inputs: '', outputs: '',
-  uploadId: null, fileName: '', set: null, states: null, mapping: null, averages: '', hold: 'zeroOrder', duty: '',
+  uploadId: null, fileName: '', set: null, states: null, mapping: null, averages: '', unstablePoles: '', originPoles: '', hold: 'zeroOrder', duty: '',
 })
 
 export const emptyMode = (inputs: number, outputs: number): TypedMode =>
@@ -88,7 +91,7 @@ export function typedGain(definition: BlockDefinition, frequencyUnit: FrequencyU
     case 'modal':
       return { ...common, ...typedModal(definition) }
     case 'measured':
-      return { ...common, uploadId: definition.uploadId, mapping: definition.mapping, averages: asText(definition.averages) }
+      return { ...common, uploadId: definition.uploadId, mapping: definition.mapping, averages: asText(definition.averages), unstablePoles: asText(definition.openLoopUnstablePoles), originPoles: asText(definition.openLoopOriginPoles) }
     case 'deadTime':
       return { ...common, deadTime: definition.unit === 's' ? timeText(definition.deadTime) : String(definition.deadTime), deadTimeUnit: definition.unit }
     case 'hold':

@@ -1,6 +1,6 @@
+import { readSectionNumber } from '#shared/sources/readSectionNumber'
 import type { BlockDefinition, ModalGain } from '#shared/types/block'
 import { channelNames } from '~/utils/channelNames'
-import { isNumberOrFraction } from '~/utils/isNumberOrFraction'
 import { parseNumberList } from '~/utils/parseNumberList'
 import { parseNumberText } from '~/utils/parseNumberText'
 import { parseRoots } from '~/utils/parseRoots'
@@ -9,6 +9,7 @@ import type { TypedGain, TypedMode, TypedRigidTerm } from './TypedGain'
 import type { TypedProblem } from './TypedSource'
 
 const notNegative = (value: number) => value < 0 ? 'A dead time is not negative.' : null
+const wholeNumber = (value: number) => Number.isInteger(value) && value >= 0 ? null : 'This is a whole number, zero or above.'
 const positive = (what: string) => (value: number) => value > 0 ? null : `${what} is above zero.`
 const given = (name: string, value: number | undefined) => value === undefined ? {} : { [name]: value }
 const isBlank = (cells: readonly string[]) => cells.every(cell => cell.trim() === '')
@@ -53,11 +54,13 @@ function readKind(typed: TypedGain, reader: FieldReader): BlockDefinition | null
       return readModal(typed, reader)
     case 'measured': {
       const averages = reader.optional('averages', typed.averages, value => Number.isInteger(value) && value > 0 ? null : 'This is a whole number above zero.')
+      const openLoopUnstablePoles = reader.optional('openLoopUnstablePoles', typed.unstablePoles, wholeNumber)
+      const openLoopOriginPoles = reader.optional('openLoopOriginPoles', typed.originPoles, wholeNumber)
       if (typed.mapping === null || typed.uploadId === null) {
         reader.fault('mapping', 'Choose the file of the sweep, and say what its columns are.')
         return null
       }
-      return { kind, uploadId: typed.uploadId, mapping: typed.mapping, ...given('averages', averages) }
+      return { kind, uploadId: typed.uploadId, mapping: typed.mapping, ...given('averages', averages), ...given('openLoopUnstablePoles', openLoopUnstablePoles), ...given('openLoopOriginPoles', openLoopOriginPoles) }
     }
     case 'deadTime':
       return typed.deadTimeUnit === 's'
@@ -78,11 +81,11 @@ function readSections(typed: TypedGain, sampleTime: number, reader: FieldReader)
     if (!rows.includes(cells)) continue
     for (const [column, text] of cells.entries()) {
       if (text.trim() === '') reader.fault(`rows[${row}][${column}]`, `Type ${coefficientNames[column]} of section ${row + 1}; 0 where it has none.`)
-      else if (!isNumberOrFraction(text)) reader.fault(`rows[${row}][${column}]`, `Section ${row + 1}, ${coefficientNames[column]}: '${text.trim()}' is not a number and no fraction of two. Write it like -0.98 or 16384/32768.`)
+      else if (readSectionNumber(text) === null) reader.fault(`rows[${row}][${column}]`, `Section ${row + 1}, ${coefficientNames[column]}: '${text.trim()}' is not a number and no fraction of two. Write it like -0.98 or 16384/32768.`)
     }
   }
   const gain = typed.gain.trim() === '' ? '1' : typed.gain.trim()
-  if (!isNumberOrFraction(gain)) reader.fault('gain', `'${gain}' is not a number and no fraction of two.`)
+  if (readSectionNumber(gain) === null) reader.fault('gain', `'${gain}' is not a number and no fraction of two.`)
   return { kind: 'sections', rows: rows.map(row => row.map(cell => cell.trim())), gain, sampleTime }
 }
 

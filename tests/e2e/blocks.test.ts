@@ -100,6 +100,20 @@ describe('loop gains built from blocks', () => {
     await save('C')
   })
 
+  it('tells at its field that a name is taken, and that one cannot stand in an expression', async () => {
+    await addBlock('C', 'Filter')
+    await gainField().fill('1')
+    await page.getByRole('button', { name: 'Save the block' }).click()
+    await page.getByText(/name C\b/).first().waitFor()
+    expect(await page.getByLabel('Name', { exact: true }).getAttribute('aria-invalid')).toBe('true')
+    await page.getByLabel('Name', { exact: true }).fill('2C')
+    await page.getByRole('button', { name: 'Save the block' }).click()
+    await page.getByText('A name for expressions is a letter').first().waitFor()
+    await page.getByRole('link', { name: 'Cancel' }).click()
+    await page.getByRole('button', { name: 'Leave' }).click()
+    await page.waitForURL('**part=blocks')
+  })
+
   it('keeps what is typed over a reload', async () => {
     await addBlock('N', 'Filter')
     await gainField().fill('(s^2+0.8*s+1600)/(s^2+40*s+1600)')

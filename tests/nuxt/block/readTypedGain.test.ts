@@ -19,7 +19,7 @@ describe('the gain of a block as typed', () => {
     { kind: 'stateSpace', uploadId: 7, set: null, states: null, inputs: [], outputs: [] },
     { kind: 'sections', rows: [['16384/32768', '-0.50', '0', '1', '-.25', '1e-3']], gain: '0.10', sampleTime: 0.001 },
     { kind: 'modal', frequencyUnit: 'Hz', derivative: 1, modes: [{ name: 'bending', frequency: 12.5, damping: 0.007, gainIn: [1, 0], gainOut: [0.25] }], rigid: [{ power: -2, gainIn: [1, 1], gainOut: [2] }], inputs: [], outputs: [] },
-    { kind: 'measured', uploadId: 3, mapping: { frequencyColumn: 0, frequencyUnit: 'Hz', form: 'dB and degrees', firstColumn: 1, secondColumn: 2, coherenceColumn: null, quantity: 'loopGain' }, averages: 16 },
+    { kind: 'measured', uploadId: 3, mapping: { frequencyColumn: 0, frequencyUnit: 'Hz', form: 'dB and degrees', firstColumn: 1, secondColumn: 2, coherenceColumn: null, quantity: 'loopGain' }, averages: 16, openLoopUnstablePoles: 0, openLoopOriginPoles: 2 },
     { kind: 'deadTime', deadTime: 0.0005, unit: 's' },
     { kind: 'deadTime', deadTime: 1.5, unit: 'samples' },
     { kind: 'hold', hold: 'pwmDoubleUpdate', sampleTime: 5e-5, duty: 0.4 },
