@@ -35,6 +35,11 @@ describe('what stands against freezing a report', () => {
   it('takes a blank break point for none', () => {
     expect(freezeObstacles({ loops: [{ code: 'SL-P', breakPoint: ' \n' }], conditions: [{}] })).toEqual(['SL-P does not say at which signal it is opened: state its break point.'])
   })
+
+  it('is that break points of one closed system contradict one another, told at both', () => {
+    const loops = [{ code: 'SL-P', breakPoint: 'command' }]
+    expect(freezeObstacles({ loops, conditions: [{}], disagreements: [{ loopCode: 'SL-P', conditionCode: 'C1', words: 'Opened here it is stable.' }] })).toEqual(['SL-P in C1: Opened here it is stable.'])
+  })
 })
 
 describe('the next draft', () => {
