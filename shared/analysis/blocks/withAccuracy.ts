@@ -19,8 +19,16 @@ export function withAccuracy(analysis: LoopAnalysis): LoopAnalysis {
       proven: false,
       exceptions: [{
         from, to, code: 'accuracy',
-        reason: `the factors analysed may differ ${size} from the loop gain as given, more than 1e-9: ${accuracy.basis}. Give its blocks in better conditioned coordinates or as modal table`,
+        reason: `the factors analysed may differ ${size} from the loop gain as given, more than 1e-9: ${accuracy.basis}. ${adviceOf(accuracy.basis)}`.trimEnd(),
       }, ...exceptions],
     },
   }
+}
+
+function adviceOf(basis: string): string {
+  const advice = [
+    ...basis.includes('state space') ? ['Give its blocks in better conditioned coordinates or as modal table.'] : [],
+    ...basis.includes('discrete equivalent') ? ['A zero or pole in z is held to 1e-16 only: of a slow, light mode sampled very fast that is much of its distance from the unit circle.'] : [],
+  ]
+  return advice.join(' ')
 }

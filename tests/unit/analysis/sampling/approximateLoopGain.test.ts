@@ -81,3 +81,18 @@ describe('the continuous approximation of a sampled loop', () => {
     expect(out[1]).toBeCloseTo(closed[0]! * controller[1]! + closed[1]! * controller[0]!, 13)
   })
 })
+
+describe('what doubles cannot hold of a sampled loop is told', () => {
+  it('a mode of 2 rad/s, damped by 0.0025 % of critical and sampled at 20 kHz: its roots in z are not known to 1e-9 of their distance from the circle', () => {
+    const { structure, coverage } = analyseLoop({
+      expression: 'H0*G',
+      blocks: { H0: { kind: 'hold', hold: 'zeroOrder', sampleTime: 5e-5 }, G: { kind: 'expression', expression: '1e-4/(s^2 + 1e-4*s + 4)' } },
+    })
+    // 1e-16 over zeta w T = 5e-5 * 5e-5
+    expect(structure!.accuracy!.relative).toBeGreaterThan(1e-9)
+    expect(structure!.accuracy!.relative).toBeLessThan(1e-7)
+    expect(coverage.proven).toBe(false)
+    expect(coverage.exceptions[0]).toMatchObject({ code: 'accuracy' })
+    expect(coverage.exceptions[0]!.reason).toMatch(/slow, light mode sampled very fast/)
+  })
+})
