@@ -173,8 +173,11 @@ class Refinement {
     this.re[k] = x - stepRe
     this.im[k] = y - stepIm
     const floor = Math.max(2 ** -84 * Math.hypot(x, y), 2 * (this.noise[k] as number))
-    return Math.abs(stepRe) <= Math.max(floor, 2 ** -50 * Math.abs(x))
-      && Math.abs(stepIm) <= Math.max(floor, 2 ** -50 * Math.abs(y))
+    const enoughRe = Math.max(floor, 2 ** -50 * Math.abs(x))
+    const enoughIm = Math.max(floor, 2 ** -50 * Math.abs(y))
+    if (!(Math.abs(stepRe) <= enoughRe && Math.abs(stepIm) <= enoughIm)) return false
+    // A step is small too where the corrections of other roots are still large: then this one's own must be small by itself.
+    return Math.hypot(ur - 1, ui) <= 0.5 || Math.hypot(wr, wi) <= 8 * (enoughRe + enoughIm)
   }
 
   /** No two approximations may coincide: W would have no value. */
