@@ -78,6 +78,9 @@ export const drawGainOverPhase: DrawFigure<LoopFigureData> = (pen, data, options
 
   drawGround(pen, plane, criticals, data.requiredVectorMargin, options)
   drawStanding(pen, main.analysis, panel, title, theme)
+  const isOverlaid = data.curves.length > 1
+  const mainPlace = (sample: MeasuredSample) => samplePlace(sample, main, views[0]!.phase, window, plane)
+  if (isOverlaid) drawSamples(pen, main.samples, mainPlace, panel, theme, true)
   let mainPieces: number[][] = []
   let mainShown = { xs: new Float64Array(0), ys: new Float64Array(0), shown: main, end: 0 }
   for (let index = data.curves.length - 1; index >= 0; index--) {
@@ -95,7 +98,7 @@ export const drawGainOverPhase: DrawFigure<LoopFigureData> = (pen, data, options
       drawWinding(pen, field, figureCurve, views[0]!, end, plane, options)
     }
   }
-  drawSamples(pen, main.samples, sample => samplePlace(sample, main, views[0]!.phase, window, plane), panel, theme)
+  if (!isOverlaid) drawSamples(pen, main.samples, mainPlace, panel, theme)
 
   const marks = placeMarks(main, views[0]!, data, window, plane)
   for (const { x, y } of marks) field.blockRectangle({ x: x - 6, y: y - 6, width: 12, height: 12 })

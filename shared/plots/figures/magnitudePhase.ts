@@ -65,6 +65,12 @@ export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, option
   const fields = { upper: new LabelField(upper), lower: new LabelField(lower) }
   fields.upper.blockPolylines([[upper.x, gain.toPixel(0), upper.x + upper.width, gain.toPixel(0)]])
   fields.lower.blockPolylines(criticalPhases(phase).map(value => [lower.x, phase.toPixel(value), lower.x + lower.width, phase.toPixel(value)]))
+  const isOverlaid = data.curves.length > 1
+  const drawSamplesOn = (draw: (place: (sample: MeasuredSample) => [number, number], panel: Rectangle) => void, index: number) => {
+    draw(({ frequency, re, im }) => [x.toPixel(frequency), gain.toPixel(20 * Math.log10(Math.hypot(re, im)))], upper)
+    draw(sample => [x.toPixel(sample.frequency), phase.toPixel(shownPhase(samplePhase(sample, data.curves[index]!, views[index]!.phase), window))], lower)
+  }
+  if (isOverlaid) drawSamplesOn((place, panel) => drawSamples(pen, main.samples, place, panel, theme, true), 0)
   for (let index = data.curves.length - 1; index >= 0; index--) {
     const figureCurve = data.curves[index]!
     const xs = figureCurve.curve.frequency.map(x.toPixel)
@@ -75,13 +81,9 @@ export const drawMagnitudePhase: DrawFigure<LoopFigureData> = (pen, data, option
     if (index === 0 && end < xs.length) drawWinding(pen, fields.lower, xs[end]!, panels, options)
     const shown: FigureCurve = { ...figureCurve, curve: { ...figureCurve.curve, frequency: wrapped.frequency } }
     fields.lower.blockPolylines(drawCurve(pen, shown, style, wrapped.frequency.map(x.toPixel), wrapped.phase.map(phase.toPixel), lower))
-    const gainPlace = ({ frequency, re, im }: MeasuredSample): [number, number] => [x.toPixel(frequency), gain.toPixel(20 * Math.log10(Math.hypot(re, im)))]
-    const phasePlace = (sample: MeasuredSample): [number, number] => [x.toPixel(sample.frequency), phase.toPixel(shownPhase(samplePhase(sample, figureCurve, views[index]!.phase), window))]
-    for (const [place, panel] of [[gainPlace, upper], [phasePlace, lower]] as const) {
-      if (index > 0) drawOtherSamples(pen, figureCurve.samples, index, place, panel, theme)
-      else drawSamples(pen, figureCurve.samples, place, panel, theme)
-    }
+    if (index > 0) drawSamplesOn((place, panel) => drawOtherSamples(pen, figureCurve.samples, index, place, panel, theme), index)
   }
+  if (!isOverlaid) drawSamplesOn((place, panel) => drawSamples(pen, main.samples, place, panel, theme), 0)
 
   const placed: { mark: LoopMark, kind: LoopMark['kind'], at: MarkPlaces, x: number, y: number }[] = []
   for (const mark of loopMarks(main.analysis, data.frequencyUnit, data.requiredVectorMargin)) {

@@ -64,6 +64,8 @@ export const drawReturnDifferenceProfile: DrawFigure<LoopFigureData> = (pen, dat
     field.blockPolylines([[panel.x, y.toPixel(required), panel.x + panel.width, y.toPixel(required)]])
   }
 
+  const isOverlaid = data.curves.length > 1
+  if (isOverlaid) drawSamples(pen, main.samples, samplePlace, panel, theme, true)
   for (let index = data.curves.length - 1; index >= 0; index--) {
     const figureCurve = data.curves[index]!
     const { distance } = curveViews(figureCurve.curve)
@@ -71,7 +73,7 @@ export const drawReturnDifferenceProfile: DrawFigure<LoopFigureData> = (pen, dat
     field.blockPolylines(pieces)
     if (index > 0) drawOtherSamples(pen, figureCurve.samples, index, samplePlace, panel, theme)
   }
-  drawSamples(pen, main.samples, samplePlace, panel, theme)
+  if (!isOverlaid) drawSamples(pen, main.samples, samplePlace, panel, theme)
 
   const marks: FigureMark[] = []
   const approaches = loopMarks(main.analysis, data.frequencyUnit, required)

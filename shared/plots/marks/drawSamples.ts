@@ -14,10 +14,13 @@ const shapes: readonly ((x: number, y: number) => string)[] = [
   (x, y) => `M${tenth(x)} ${tenth(y - half - 0.6)}l${half + 0.5} ${2 * half}h${-2 * half - 1}z`,
 ]
 
-/** The measured samples of the main curve as small points, where `place` puts them (px); those outside the panel are left out. */
-export function drawSamples(pen: Pen, samples: readonly MeasuredSample[] | undefined, place: (sample: MeasuredSample) => [number, number], panel: Rectangle, theme: PlotTheme): void {
+/**
+ * The measured samples of the main curve as small points, where `place` puts them (px); those outside the panel are left out. Drawn lightly `under`
+ * other curves, where these would be lost among them.
+ */
+export function drawSamples(pen: Pen, samples: readonly MeasuredSample[] | undefined, place: (sample: MeasuredSample) => [number, number], panel: Rectangle, theme: PlotTheme, under = false): void {
   const d = placesInside(samples, place, panel).map(([x, y]) => `M${tenth(x)} ${tenth(y)}h0`).join('')
-  pen.stroke(d, theme.slate, 2.6, { 'stroke-linecap': 'round' })
+  pen.stroke(d, under ? theme.channel : theme.slate, 2.6, { 'stroke-linecap': 'round' })
 }
 
 /**

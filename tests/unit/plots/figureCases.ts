@@ -113,6 +113,19 @@ export const compared = once((): LoopFigureData => {
   })
 })
 
+/** A dense sweep of record with the model it was compared with. */
+export const measuredWithModel = once((): LoopFigureData => {
+  const [main] = measured().curves
+  const gain = scaled(slewGain, 1.15, 1.04)
+  return buildLoopFigureData({
+    title: 'SL-P Slew position', requiredVectorMargin: 0.5, range: measured().range,
+    curves: [
+      { name: 'sweep 2', analysis: main.analysis, gain: { ...slewGain, axisStart: 4 * Math.PI, axisEnd: 120 * Math.PI }, sampleFrequencies: main.samples!.map(({ frequency }) => frequency) },
+      { name: 'design model', gain, analysis: analysisByScan(gain, 12, 380, 'stable', 'Hz') },
+    ],
+  })
+})
+
 export const crossingRows = once((): CrossingChartData => {
   const row = (code: string, name: string, gain: LoopGain | null, verdict: string, standing: CrossingChartRow['standing'], stability: 'stable' | 'unstable' = 'stable'): CrossingChartRow => ({
     key: code, code, name, verdict, standing, requiredVectorMargin: 0.5, gainAboveOne: false,

@@ -5,7 +5,7 @@ import type { RenderOptions } from '#server/adapters/svgdom/renderFigure'
 import { renderFigure } from '#server/adapters/svgdom/renderFigure'
 import type { FigureDataOf, FigureName } from '#shared/plots/figures'
 import { plotThemes } from '#shared/plots/theme'
-import { compared, conditional, crossingRows, crowded, delayed, measured, overlaid, slewPosition, unstable } from './figureCases'
+import { compared, conditional, crossingRows, crowded, delayed, measured, measuredWithModel, overlaid, slewPosition, unstable } from './figureCases'
 
 /**
  * Each figure against a reviewed file, byte by byte. To renew them after a wanted change: delete the files, run with RENEW_GOLDEN=1, and look at every one
@@ -49,8 +49,9 @@ describe('figures as reviewed', () => {
     ['return-difference-profile', 'returnDifferenceProfile'],
     ['magnitude-phase', 'magnitudePhase'],
     ['gain-over-phase', 'gainOverPhase'],
-  ] as const)('%s of a model with its approximation and two sweeps over it, on paper', (file, name) => {
+  ] as const)('%s of a model with its approximation and two sweeps over it, and of a sweep with its model, on paper', (file, name) => {
     expectGolden(`${file}-compared`, name, compared())
+    expectGolden(`${file}-measured-with-model`, name, measuredWithModel())
   })
 
   it('berth chart and gain over phase of a long dead time, too closely wound to be drawn', () => {
