@@ -35,8 +35,8 @@ export class ContinuousPoles {
   private readonly starts: PoleStart[] = []
 
   constructor(denominator: FactorMap) {
-    for (const { coefficients, power, precise = false } of denominator.values()) {
-      for (const factor of squareFreeFactors(coefficients)) this.addRoots(factor.coefficients, factor.multiplicity * power, precise)
+    for (const { coefficients, power, precise = false, roots } of denominator.values()) {
+      for (const factor of squareFreeFactors(coefficients)) this.addRoots(factor.coefficients, factor.multiplicity * power, precise || roots !== undefined)
     }
   }
 
