@@ -1,5 +1,6 @@
 import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
 import { analyseEntries } from '#shared/analysis/analyseEntries'
+import { findBuildFault } from '#shared/analysis/blocks/findBuildFault'
 import { closedLoopPoles as listClosedLoopPoles } from '#shared/analysis/structure/closedLoopPoles'
 import { compareSources, type ComparedSource } from '#shared/analysis/structure/compareSources'
 import { shiftModes } from '#shared/analysis/structure/shiftModes'
@@ -25,3 +26,4 @@ function answering<Question, Answer>(answer: (question: Question) => Answer): (q
 export const closedLoopPoles = answering(listClosedLoopPoles)
 export const modeShifts = answering(({ input, roles }: { input: LoopInput, roles: Record<string, BlockRole> }) => shiftModes(input, roles))
 export const sourceDifference = answering(({ reference, other }: { reference: ComparedSource, other: ComparedSource }) => compareSources(reference, other))
+export const buildFault = findBuildFault

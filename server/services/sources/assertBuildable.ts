@@ -1,11 +1,11 @@
 import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
-import { measuredInputOf } from '#shared/analysis/blocks/measuredInputOf'
-import { lowerExpression } from '#shared/analysis/expressions/lowerExpression'
+import type { BuildFault } from '#shared/analysis/blocks/findBuildFault'
 import { namesInExpression } from '#shared/analysis/expressions/namesInExpression'
 import { AppError } from '#shared/errors/AppError'
-import type { ExpressionInput } from '#shared/types/analysis'
+import type { AnalysisFailure, ExpressionInput, LoopInput } from '#shared/types/analysis'
 import type { ExpressionDefinition } from '#shared/types/source'
 import type { SystemRow } from '../../database/models/SystemRow'
+import { runInPool } from '../../adapters/analysisPool/analysisPool'
 import { ConditionRow } from '../../database/models/ConditionRow'
 import { BlockGains } from '../blocks/BlockGains'
 import { listBlocks } from '../blocks/listBlocks'
@@ -24,22 +24,30 @@ export async function assertBuildable(definition: ExpressionDefinition, system: 
   const tried = new Set<string>()
   for (const condition of conditions) {
     const facts = { systemId: system.id, frequencyUnit: system.frequencyUnit, condition, parameters, blocks: gains }
-    const input = await buildLoopInput({ ...definition, deadTime: undefined }, facts).catch(unlessMissing) as ExpressionInput | null
+    const input = await buildLoopInput(definition, facts).catch(unlessMissing) as ExpressionInput | null
     if (input === null) continue
     const build = JSON.stringify(Object.entries(input.blocks ?? {}).map(([name, gain]) => [name, gain.kind, 'sampleTime' in gain ? gain.sampleTime : null]))
     if (tried.has(build)) continue
     tried.add(build)
-    try {
-      if (measuredInputOf(input) === null) lowerExpression(input)
-    }
-    catch (error) {
-      if (!(error instanceof AnalysisInputError)) throw error
-      // A block that cannot be taken at all is told where its loops are looked at; the expression is right until that is mended.
-      if (/^blocks\.\w+$/.test(error.path)) continue
-      const position = error.path === 'expression' ? error.position : placeOfBlock(definition.expression, error.path)
-      throw new AppError('invalidInput', `${error.message} (in the condition ${condition.code})`, { path: 'definition.expression', ...(position !== undefined && { details: { position } }), cause: error })
-    }
+    const fault = await askFault(input)
+    // A block that cannot be taken at all is told where its loops are looked at; the expression is right until that is mended.
+    if (fault === null || /^blocks\.\w+$/.test(fault.path)) continue
+    throw new AppError('invalidInput', `${fault.message} (in the condition ${condition.code})`, placeOf(fault, definition))
   }
+}
+
+function placeOf({ path, position }: BuildFault, { expression, deadTime = 0 }: ExpressionDefinition): { path: string, details?: { position: number } } {
+  if (path !== 'expression') return { path: 'definition.expression', details: { position: placeOfBlock(expression, path) } }
+  if (position === undefined) return { path: 'definition.expression' }
+  // A dead time beside it stands behind the expression, which is put in brackets: see loopInputFromDefinition.
+  const typed = deadTime === 0 ? position : Math.max(0, position - 1)
+  return typed >= expression.length ? { path: 'definition.deadTime' } : { path: 'definition.expression', details: { position: typed } }
+}
+
+/** In a thread of its own: the matrices of a large block take their time. One that broke off is no fault of the input. */
+async function askFault(input: LoopInput): Promise<BuildFault | null> {
+  const answer = await runInPool('buildFault', input) as BuildFault | AnalysisFailure | null
+  return answer === null || 'error' in answer ? null : answer
 }
 
 /** Where the block of a path as in 'blocks.G.sampleTime' is named; the start where only another block names it. */

@@ -107,6 +107,7 @@ describe('a source over blocks', () => {
     for (const expression of ['D*P', 'D*E', 'C*P/(1+one)']) {
       await expect(buildSource(loop.id, c1.id, context, over(expression))).rejects.toMatchObject({ code: 'invalidInput', path: 'definition.expression', details: { position: expect.any(Number) as number } })
     }
+    await expect(buildSource(loop.id, c1.id, context, { ...over('C*D'), deadTime: 0.0105 })).rejects.toMatchObject({ code: 'invalidInput', path: expect.stringMatching(/^definition\.(?:expression|deadTime)$/) as string })
     expect((await readLoop(loop.id, context)).sources).toEqual([])
   })
 
