@@ -44,15 +44,15 @@ export const gangway: DemoSystem = {
   loops: [
     {
       code: 'SL-R', name: 'Slew rate', axis: 'slew', breakPoint: 'servo valve command of the slew motor', breakAt: { block: 'SlValve', side: 'input' }, loopStates: { 'SL-P': 'open' }, notes: '',
-      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CSlR*SlValve*HydSl*BoomSl*SlGyro*TCtrl*TSl' } },
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CSlR*SlValve*HydSl*BoomSl*SlGyro*TCtrl*TSl' } },
     },
     {
       code: 'SL-P', name: 'Slew position', axis: 'slew', breakPoint: 'slew rate command', breakAt: { block: 'RateSl', side: 'input' }, loopStates: { 'SL-R': 'closed' }, notes: 'The closed rate loop stands in the model as a second-order lag at 0.62 of the hydraulic frequency.',
-      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CSlP*RateSl*TipSl*Int*TCtrl*TSl*TRef' } },
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CSlP*RateSl*TipSl*Int*TCtrl*TSl*TRef' } },
     },
     {
       code: 'LU-R', name: 'Luff rate', axis: 'luff', breakPoint: 'servo valve command of the luff cylinders', breakAt: { block: 'LuValve', side: 'input' }, loopStates: { 'LU-P': 'open' }, notes: '',
-      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CLuR*LuValve*HydLu*BoomLu*TCtrl*TLu' } },
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CLuR*LuValve*HydLu*BoomLu*TCtrl*TLu' } },
       sweeps: {
         conditionCodes: ['C1', 'C2', 'C3', 'C4', 'C5'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 0.8, to: 140, pointsPerDecade: 110, fine: [{ around: 'wVer', from: 0.9, to: 1.25, points: 90 }],
         truth: { whLu: 0.985, wVer: 1.012, kLuR: 1.03 }, averages: 64, noise: 0.0006, seed: 4201, amplitude: 'valve command 4 % of full scale, 0 to peak',
@@ -60,11 +60,11 @@ export const gangway: DemoSystem = {
     },
     {
       code: 'LU-P', name: 'Luff position', axis: 'luff', breakPoint: 'luff rate command', breakAt: { block: 'RateLu', side: 'input' }, loopStates: { 'LU-R': 'closed' }, notes: '',
-      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CLuP*RateLu*TipLu*Int*TCtrl*TLu*TRefLR' } },
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CLuP*RateLu*TipLu*Int*TCtrl*TLu*TRefLR' } },
     },
     {
       code: 'TE-R', name: 'Telescope rate', axis: 'telescope', breakPoint: 'servo valve command of the telescope winch', breakAt: { block: 'TeValve', side: 'input' }, loopStates: { 'TE-P': 'open' }, notes: '',
-      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CTeR*TeValve*HydTe*BoomTe*TCtrl*TTe' } },
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CTeR*TeValve*HydTe*BoomTe*TCtrl*TTe' } },
       sweeps: {
         conditionCodes: ['C2', 'C3'], name: 'sweep 1', reasonModelIsSetAside: 'measured on the first article', from: 1, to: 220, pointsPerDecade: 120, fine: [{ around: 'wAx', from: 0.9, to: 1.1, points: 80 }],
         truth: { whTe: 0.97, wAx: 0.993 }, averages: 64, noise: 0.0005, seed: 4207, amplitude: 'valve command 5 % of full scale, 0 to peak',
@@ -72,15 +72,15 @@ export const gangway: DemoSystem = {
     },
     {
       code: 'TE-P', name: 'Telescope position', axis: 'telescope', breakPoint: 'telescope rate command', breakAt: { block: 'RateTe', side: 'input' }, loopStates: { 'TE-R': 'closed' }, notes: 'Two integrators in the compensator: the loop is conditionally stable, the gain may not fall far.',
-      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CTeP*RateTe*Int*TCtrl*TTe*TRef' } },
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CTeP*RateTe*Int*TCtrl*TTe*TRef' } },
     },
     {
       code: 'RO-R', name: 'Roll rate', axis: 'roll', breakPoint: 'servo valve command of the roll actuator', breakAt: { block: 'HydRo', side: 'input' }, loopStates: { 'RO-P': 'open' }, notes: 'The torsion mode of the boom tip lifts the gain above one a second time.',
-      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CRoR*HydRo*BoomRo*TCtrl*TRo' } },
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CRoR*HydRo*BoomRo*TCtrl*TRo' } },
     },
     {
       code: 'RO-P', name: 'Roll position', axis: 'roll', breakPoint: 'roll rate command', breakAt: { block: 'RateRo', side: 'input' }, loopStates: { 'RO-R': 'closed' }, notes: '',
-      model: { name: 'NAME', definition: { kind: 'expression', expression: 'CRoP*RateRo*TipRo*Int*TCtrl*TRo*TRefLR' } },
+      model: { name: 'design model', definition: { kind: 'expression', expression: 'CRoP*RateRo*TipRo*Int*TCtrl*TRo*TRefLR' } },
     },
   ],
   report: {
