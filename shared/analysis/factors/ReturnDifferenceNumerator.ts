@@ -44,6 +44,19 @@ export class ReturnDifferenceNumerator {
     out[5] = exponent
   }
 
+  /** Starting points for the roots of D + N: the poles, each moved a little its own way so that no two are one. */
+  besidePoles(): { re: Float64Array, im: Float64Array } {
+    const size = this.typicalSize()
+    const re = this.polesRe.slice()
+    const im = this.polesIm.slice()
+    for (let k = 0; k < re.length; k++) {
+      const length = 1e-3 * Math.max(Math.hypot(re[k]!, im[k]!), 1e-3 * size)
+      re[k] = re[k]! + length * Math.cos(2.4 * k + 1)
+      im[k] = im[k]! + length * Math.sin(2.4 * k + 1)
+    }
+    return { re, im }
+  }
+
   /** Power of two about the geometric mean of the poles, those at 0 aside. */
   typicalSize(): number {
     let sum = 0

@@ -18,8 +18,10 @@ export function closedLoopRoots(sum: ReturnDifferenceNumerator): { re: Float64Ar
     re[k] = (re[k] as number) * sigma
     im[k] = (im[k] as number) * sigma
   }
-  if (!settleRoots(sum, re, im)) return null
-  return { re, im, radius: discRadii(sum, re, im) }
+  if (settleRoots(sum, re, im)) return { re, im, radius: discRadii(sum, re, im) }
+  // where many lie at like distances from 0 the coefficients say little of them: then they are looked for from the poles of the loop gain
+  const beside = sum.besidePoles()
+  return settleRoots(sum, beside.re, beside.im) ? { ...beside, radius: discRadii(sum, beside.re, beside.im) } : null
 }
 
 /** n |W_k|, the evaluation's own error and that of the factors included (A. Neumaier, 'Enclosing clusters of zeros of polynomials', 2003). */

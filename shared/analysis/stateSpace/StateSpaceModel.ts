@@ -203,8 +203,8 @@ export class StateSpaceModel {
   /** True where the response is no larger than what rounding of the matrices makes, at points of several sizes. */
   private isNothing(zeros: readonly PreciseRoot[], poles: readonly PreciseRoot[], gain: number, perturbation: (s: number) => Perturbation): boolean {
     if (this.states === 0) return false
-    const scale = Math.max(this.norm, 2 ** -300)
-    return [2, 0.3, 0.03].every(factor => this.size(gain, zeros, poles, factor * scale) <= perturbation(factor * scale).response)
+    const scale = this.reach > 0 ? this.reach : Math.max(this.norm, 2 ** -300)
+    return [1, 0.1, 10, 0.01, 0.001].every(factor => this.size(gain, zeros, poles, factor * scale) <= perturbation(factor * scale).response)
   }
 
   private snap(roots: PreciseRoot[], uncertainty: (s: number) => number): void {

@@ -28,18 +28,18 @@ const MOST_LEFT = 1e-4
  *
  * Roots of a cluster that rounding does not tell apart come with the large corrections that are left of them.
  *
- * @throws RangeError when the iteration does not settle
+ * @throws RangeError when the iteration leaves the range of doubles
  */
 export function refineDoubleDoubleRoots(value: PreciseValue, lead: ScaledNumber, scale: number, start: { re: Float64Array, im: Float64Array }): DoubleDoubleRoots {
   const refinement = new Refinement(value, lead, scale, start)
   if (!refinement.settle(PAIRED_SWEEPS, true)) {
     refinement.spread()
-    const settled = refinement.settle(FREE_SWEEPS, false)
+    // roots of an exact multiple go round one another for ever, as near as rounding lets them: their corrections tell
+    refinement.settle(FREE_SWEEPS, false)
     pairDoubleDoubleRoots(refinement.roots)
     refinement.separate()
     refinement.measure()
-    // roots of an exact multiple go round one another for ever, as near as rounding lets them
-    if (!settled && refinement.roots.correction.some(size => !(size <= MOST_LEFT * scale))) throw new RangeError('the roots do not settle')
+    if (refinement.roots.correction.some(size => !Number.isFinite(size))) throw new RangeError('the roots do not settle')
   }
   return refinement.roots
 }
