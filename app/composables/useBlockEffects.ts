@@ -1,5 +1,4 @@
 import type { MaybeRefOrGetter } from 'vue'
-import type { BlockEffect } from '#shared/types/structure'
 import { ApiError } from '~/services/ApiError'
 import { blocksClient, type BlockDraft } from '~/services/blocksClient'
 
@@ -8,22 +7,21 @@ const pause = 600
 /** What the draft of a block would move, asked of the server while one types; nothing is stored by it. Null stands for nothing to ask. */
 export function useBlockEffects(systemId: number, draft: MaybeRefOrGetter<BlockDraft | null>) {
   let timer: ReturnType<typeof setTimeout> | undefined
-  const { answer, failure, pending, ask } = useLatest<BlockDraft, BlockEffect[]>(question => blocksClient.effects(systemId, question))
-  const isOld = ref(false)
-
   // By its text: the draft is put together anew at every key.
-  watch(() => JSON.stringify(toValue(draft)), (text) => {
+  const text = computed(() => JSON.stringify(toValue(draft)))
+  const { answer, failure, pending, ask } = useLatest(async (question: string) => ({ question, effects: await blocksClient.effects(systemId, JSON.parse(question) as BlockDraft) }))
+
+  watch(text, (question) => {
     clearTimeout(timer)
-    isOld.value = true
-    const question = JSON.parse(text) as BlockDraft | null
-    if (question === null) return
-    timer = setTimeout(async () => {
-      await ask(question)
-      isOld.value = false
-    }, pause)
+    if (question !== 'null') timer = setTimeout(() => void ask(question), pause)
   }, { immediate: import.meta.client })
   onScopeDispose(() => clearTimeout(timer))
 
-  const refusal = computed(() => failure.value === null ? null : ApiError.from(failure.value))
-  return { effects: answer, refusal, pending, isOld }
+  return {
+    effects: computed(() => answer.value?.effects ?? null),
+    /** they are those of an earlier draft */
+    isOld: computed(() => answer.value?.question !== text.value),
+    refusal: computed(() => failure.value === null ? null : ApiError.from(failure.value)),
+    pending,
+  }
 }
