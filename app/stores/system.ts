@@ -32,7 +32,6 @@ export const useSystemStore = defineStore('system', () => {
     changeSystem: (fields: SystemFields & { version: number }) => change(id => systemsClient.change(id, fields)),
     putCriteria: (criteria: Criterion[]) => change(id => systemsClient.putCriteria(id, criteria)),
     createLoop: (fields: LoopFields) => change(id => systemsClient.createLoop(id, fields)),
-    changeLoop: (loopId: number, fields: LoopFields & { version: number }) => change(() => loopsClient.change(loopId, fields)),
     copyLoop: (loopId: number, fields: { code: string, name: string }) => change(() => loopsClient.copy(loopId, fields)),
     removeLoop: (loopId: number) => change(() => loopsClient.remove(loopId)),
     restoreLoop: (loopId: number) => change(() => loopsClient.restore(loopId)),
