@@ -12,7 +12,6 @@ import { conventionsSection } from './view/conventionsSection'
 import { coverView, documentType } from './view/coverView'
 import { criteriaLine } from './view/criteriaWords'
 import { matrixTables } from './view/matrixTables'
-import { modeShiftSection } from './view/modeShiftSection'
 import type { FigureView, ReportView, SectionView } from './view/ReportView'
 import { summaryView } from './view/summaryView'
 
@@ -63,7 +62,6 @@ export function buildReportView(snapshot: ReportSnapshot, edition: EditionFacts,
     number => conditionsSection(snapshot, number),
     number => blocksSection(snapshot, number),
     number => closedLoopSection(snapshot, cells, number),
-    number => modeShiftSection(snapshot, cells, number),
     number => conventionsSection(snapshot, number),
     cautionsSection,
   ])

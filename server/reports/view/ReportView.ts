@@ -111,13 +111,20 @@ export interface ChapterView {
   conditions: ConditionView[]
 }
 
+export interface SectionBlock {
+  title: string
+  paragraphs: string[]
+  items: { term: string, words: string }[]
+  table: TableView | null
+}
+
 /** A section of plain words and tables. */
 export interface SectionView {
   number: string
   anchor: string
   title: string
   introduction: string[]
-  blocks: { title: string, paragraphs: string[], items: { term: string, words: string }[], table: TableView | null }[]
+  blocks: SectionBlock[]
 }
 
 /** The whole document as strings, tables and drawings: what the templates lay out without deciding anything. */

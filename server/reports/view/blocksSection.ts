@@ -1,7 +1,7 @@
 import { describeBlockGain } from '#shared/formatting/describeBlockGain'
 import type { BlockGain } from '#shared/types/block'
 import type { LoopInput } from '#shared/types/analysis'
-import type { ReportSnapshot, SnapshotBlock } from '#shared/types/snapshot'
+import type { ReportSnapshot, SnapshotBlock, SnapshotCell } from '#shared/types/snapshot'
 import type { SectionView, TableView } from './ReportView'
 import { tableOf } from './tableOf'
 
@@ -12,11 +12,12 @@ const printedLength = 500
 const printedModes = 60
 
 const blocksOf = (input: LoopInput | null): Record<string, BlockGain> => (input !== null && 'expression' in input && input.blocks) || {}
+const isBuiltFrom = (input: LoopInput | null, name: string) => Object.hasOwn(blocksOf(input), name)
 const shortened = (text: string) => (text.length <= printedLength ? text : `${text.slice(0, printedLength)} \u2026 (whole in snapshot.json of the package)`)
 
 /** As the engine was given it, where a loop uses it in that condition: it knows what stood in a file. */
 function gainIn(snapshot: ReportSnapshot, block: SnapshotBlock, conditionCode: string): string {
-  const used = snapshot.cells.find(cell => cell.conditionCode === conditionCode && blocksOf(cell.input)[block.name] !== undefined)
+  const used = snapshot.cells.find(cell => cell.conditionCode === conditionCode && isBuiltFrom(cell.input, block.name))
   const gain = blocksOf(used?.input ?? null)[block.name] ?? block.definitions[conditionCode]
   return gain === undefined ? '' : shortened(describeBlockGain(gain))
 }
@@ -40,7 +41,9 @@ function blocksTable(snapshot: ReportSnapshot, blocks: readonly SnapshotBlock[])
     caption: 'The blocks, and the loops built from each',
     columns: [{ head: 'block' }, { head: 'role' }, { head: 'conditions' }, { head: 'gain', isWide: true }, { head: 'units', unit: 'out per in' }, { head: 'loops' }],
     rows: blocks.flatMap((block) => {
-      const loops = snapshot.loops.filter(loop => snapshot.cells.some(cell => cell.loopCode === loop.code && blocksOf(cell.input)[block.name] !== undefined))
+      const codes = (uses: (cell: SnapshotCell) => boolean) => snapshot.loops.filter(loop => snapshot.cells.some(cell => cell.loopCode === loop.code && uses(cell))).map(({ code }) => code)
+      const ofRecord = codes(cell => isBuiltFrom(cell.input, block.name))
+      const setAside = codes(cell => cell.otherSources?.some(other => isBuiltFrom(other.input, block.name)) ?? false).filter(code => !ofRecord.includes(code))
       const units = block.unitIn === '' && block.unitOut === '' ? '' : `${block.unitOut || '1'} per ${block.unitIn || '1'}`
       return gainsOf(snapshot, block).map(({ conditions, words }, index) => ({
         cells: [
@@ -49,7 +52,7 @@ function blocksTable(snapshot: ReportSnapshot, blocks: readonly SnapshotBlock[])
           { text: conditions.length === everywhere ? 'all' : conditions.join(', ') },
           words === '' ? { text: 'no gain in this condition', tone: 'quiet' as const } : { text: words, isMono: true },
           { text: index === 0 ? units : '' },
-          { text: index === 0 ? loops.map(({ code }) => code).join(', ') || 'none' : '' },
+          index === 0 ? { text: ofRecord.join(', ') || (setAside.length > 0 ? '' : 'none'), small: setAside.length > 0 ? `set aside: ${setAside.join(', ')}` : '' } : { text: '' },
         ],
       }))
     }),

@@ -1,9 +1,11 @@
 import { describeClosedLoopPole } from '#shared/formatting/describeClosedLoopPole'
+import { listInWords } from '#shared/formatting/listInWords'
 import type { ReportSnapshot } from '#shared/types/snapshot'
 import type { ClosedLoopPoles } from '#shared/types/structure'
 import type { PlacedCell } from './cellsOf'
 import { governingCell } from './chapterView'
-import type { SectionView, TableView } from './ReportView'
+import { modeShiftTable } from './modeShiftTable'
+import type { SectionBlock, SectionView, TableView } from './ReportView'
 import { tableOf } from './tableOf'
 
 /** Poles of one loop that are printed; the package holds every one. */
@@ -31,26 +33,41 @@ function withoutList(cells: readonly PlacedCell[]): string[] {
     const reason = cell.closedLoopPoles?.reason
     if (reason) loopsOf.set(reason, (loopsOf.get(reason) ?? new Set()).add(loop.code))
   }
-  return [...loopsOf].map(([reason, loops]) => `${[...loops].join(', ')}: ${reason}`)
+  return [...loopsOf].map(([reason, loops]) => `${listInWords([...loops])}: ${reason}`)
 }
 
-/** The closed-loop poles of every loop in the condition that stands worst. Null where the snapshot has none, as from before they were listed. */
+const polesWords = 'One of each conjugate pair is listed. \u2018Goes back to\u2019 names the open-loop pole it departs from as the gain rises from zero, where that is plain. Every condition is in tables/closed-loop-poles.csv of this revision\u2019s package.'
+const shiftWords = 'Each flexible mode of a plant, actuator or sensor moved by \u221220, \u221210, +10 and +20 % with its damping and gains kept and the notch filters left where they are. Every condition is in tables/mode-shifts.csv of this revision\u2019s package.'
+
+/** A title with its words, then a table a block, so that long ones may part over pages. */
+const titled = (title: string, paragraphs: string[], tables: readonly TableView[]): SectionBlock[] => [
+  { title, paragraphs, items: [], table: null }, ...tables.map(table => ({ title: '', paragraphs: [], items: [], table })),
+]
+
+/**
+ * The closed-loop poles of every loop in the condition that stands worst, and what becomes of its margins where flexible modes lie elsewhere. Null where
+ * the snapshot has neither, as from before they were listed.
+ */
 export function closedLoopSection(snapshot: ReportSnapshot, cells: readonly PlacedCell[], number: string): SectionView | null {
-  if (!cells.some(({ cell }) => cell.closedLoopPoles)) return null
   const governing = snapshot.loops.flatMap((_, index) => governingCell(cells.filter(cell => cell.loopIndex === index)) ?? [])
-  const tables = governing.flatMap((placed) => {
-    const poles = placed.cell.closedLoopPoles
-    return poles && poles.reason === null ? [polesTable(placed, poles)] : []
+  const poles = governing.flatMap((placed) => {
+    const found = placed.cell.closedLoopPoles
+    return found && found.reason === null ? [polesTable(placed, found)] : []
   })
-  const left = withoutList(governing)
+  const reasons = withoutList(governing)
+  const shifts = governing.flatMap((placed) => {
+    const found = placed.cell.modeShifts
+    return found && found.reason === null ? [modeShiftTable(placed, found)] : []
+  })
+  if (poles.length + reasons.length + shifts.length === 0) return null
   return {
     number,
     anchor: 'closed-loop-poles',
-    title: 'Closed-loop poles',
-    introduction: [
-      'Each loop in the condition that stands worst; every condition is in tables/closed-loop-poles.csv of this revision\u2019s package. One of each conjugate pair is listed. \u2018Goes back to\u2019 names the open-loop pole it departs from as the gain rises from zero, where that is plain.',
-      ...(left.length === 0 ? [] : [`No list can be given for ${left.join('; ')}`]),
+    title: shifts.length === 0 ? 'Closed-loop poles' : 'Closed-loop poles and flexible modes',
+    introduction: ['Each loop is shown in the condition in which it stands worst.'],
+    blocks: [
+      ...titled('Closed-loop poles', [...(poles.length === 0 ? [] : [polesWords]), ...reasons.map(reason => `No list for ${reason}`)], poles),
+      ...(shifts.length === 0 ? [] : titled('Flexible modes moved', [shiftWords], shifts)),
     ],
-    blocks: tables.map(table => ({ title: '', paragraphs: [], items: [], table })),
   }
 }

@@ -70,8 +70,8 @@ describe('how loop gains are built, in the report', () => {
       ...cell, closedLoopPoles: cell.loopCode === 'SL-R' ? { frequencyUnit: 'rad/s', poles, reason: null } : { frequencyUnit: 'rad/s', poles: [], reason: 'dead time gives endlessly many.' },
     }))
     const section = sectionOf({ ...snapshot, cells }, 'closed-loop-poles')
-    expect(section?.blocks.map(block => texts(block.table))).toEqual([[['2.000', '1', '500 ms', 'not told'], ['3.162', 'minus 0.316', 'grows by e in 1.00 s', 'bending (G)']]])
-    expect(section?.introduction[1]).toBe('No list can be given for SL-P: dead time gives endlessly many.')
+    expect(section?.blocks.map(block => texts(block.table))).toEqual([[], [['2.000', '1', '500 ms', 'not told'], ['3.162', 'minus 0.316', 'grows by e in 1.00 s', 'bending (G)']]])
+    expect(section?.blocks[0]?.paragraphs[1]).toBe('No list for SL-P: dead time gives endlessly many.')
     expect(tablesOf({ ...snapshot, cells }).find(({ name }) => name === 'tables/closed-loop-poles.csv')?.data.toString().split('\r\n')[2]).toBe('SL-R,C1,3.162,-0.316,-1,1,3,,,bending (G)')
   })
 
@@ -83,7 +83,7 @@ describe('how loop gains are built, in the report', () => {
         modes: [{ block: 'G', mode: 'bending', frequency: 100, damping: 0.01, shifts: [{ change: -0.2, ...there }, { change: 0.1, verdict: 'unstable', summary: null, vectorMargin: { distance: 0.1, frequency: 110 }, failure: null }] }],
       },
     })
-    const table = sectionOf(snapshot, 'mode-shifts')?.blocks[0]?.table
+    const table = sectionOf(snapshot, 'closed-loop-poles')?.blocks[2]?.table
     expect(texts(table)).toEqual([
       ['as it is', '', 'stable', '16.3', 'none', '95.1', 'none', '0.846'],
       ['bending', '80.00', 'stable', '16.3', 'none', '95.1', 'none', '0.846'],

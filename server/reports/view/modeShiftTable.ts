@@ -3,11 +3,9 @@ import { formatDegrees } from '#shared/formatting/formatDegrees'
 import { formatDistance } from '#shared/formatting/formatDistance'
 import { formatFrequency } from '#shared/formatting/formatFrequency'
 import { significantDigits } from '#shared/formatting/significantDigits'
-import type { ReportSnapshot } from '#shared/types/snapshot'
 import type { MarginsThere, ModeShiftTable } from '#shared/types/structure'
 import type { PlacedCell } from './cellsOf'
-import { governingCell } from './chapterView'
-import type { SectionView, TableView } from './ReportView'
+import type { TableView } from './ReportView'
 import type { CellDraft } from './tableOf'
 import { tableOf } from './tableOf'
 import { withoutUnit } from './withoutUnit'
@@ -27,9 +25,10 @@ function marginCells({ verdict, summary, vectorMargin, failure }: MarginsThere):
   ]
 }
 
-function shiftTable({ loop, condition }: PlacedCell, { modes, nominal, frequencyUnit, notes }: ModeShiftTable): TableView {
+/** The margins of one loop with each flexible mode moved, the loop as it is first. */
+export function modeShiftTable({ loop, condition }: PlacedCell, { modes, nominal, frequencyUnit, notes }: ModeShiftTable): TableView {
   return tableOf({
-    caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: each flexible mode moved, everything else left where it is`,
+    caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: margins with each flexible mode moved`,
     columns: [
       { head: 'mode' }, { head: 'moved to', unit: frequencyUnit, isNumber: true }, { head: 'closed loop' }, { head: 'gain rise', unit: 'dB', isNumber: true }, { head: 'gain fall', unit: 'dB', isNumber: true },
       { head: 'lag', unit: 'deg', isNumber: true }, { head: 'lead', unit: 'deg', isNumber: true }, { head: 'least', unit: '|1 + L|', isNumber: true },
@@ -47,21 +46,4 @@ function shiftTable({ loop, condition }: PlacedCell, { modes, nominal, frequency
     notes,
     kind: 'shifts',
   })
-}
-
-/** What becomes of the margins where a flexible mode lies elsewhere than modelled. Null where no loop has such a table. */
-export function modeShiftSection(snapshot: ReportSnapshot, cells: readonly PlacedCell[], number: string): SectionView | null {
-  const tables = snapshot.loops.flatMap((_, index) => {
-    const placed = governingCell(cells.filter(cell => cell.loopIndex === index))
-    const shifts = placed?.cell.modeShifts
-    return placed && shifts && shifts.reason === null ? [shiftTable(placed, shifts)] : []
-  })
-  if (tables.length === 0) return null
-  return {
-    number,
-    anchor: 'mode-shifts',
-    title: 'Flexible modes moved',
-    introduction: ['Each flexible mode of a plant, actuator or sensor moved by \u221220, \u221210, +10 and +20 % with its damping and gains kept and the notch filters left where they are, in the condition that stands worst for the loop; every condition is in tables/mode-shifts.csv of this revision\u2019s package.'],
-    blocks: tables.map(table => ({ title: '', paragraphs: [], items: [], table })),
-  }
 }
