@@ -54,7 +54,7 @@ function factorsOf(polynomial: ExactPolynomial, sampled: boolean, path: string, 
   }
   catch (error) {
     if (error instanceof RangeError) {
-      throw new AnalysisInputError(`The roots of the ${path} cannot be found: ${error.message}. Scale the coefficients or give zeros and poles.`, path)
+      throw new AnalysisInputError(`The roots of the ${path} cannot be found: ${error.message}.${path === 'expression' ? '' : ' Scale the coefficients or give zeros and poles.'}`, path)
     }
     throw error
   }

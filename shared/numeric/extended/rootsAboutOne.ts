@@ -1,6 +1,7 @@
 import { aberthRoots, evaluateWithDerivative, type WithDerivative } from './aberthRoots'
 import type { ExactPolynomial } from './ExactPolynomial'
 import { initialRoots } from './initialRoots'
+import { preciseEvaluation } from './preciseEvaluation'
 import { refineRoots, type RefinedRoots } from './refineRoots'
 import { ScaledPolynomial } from './ScaledPolynomial'
 
@@ -21,7 +22,7 @@ export function rootsAboutOne(exact: ExactPolynomial): RefinedRoots | null {
   const start = startingPoints(ScaledPolynomial.fromExact(exact), shifted)
   if (!start.re.every(Number.isFinite) || !start.im.every(Number.isFinite)) return null
   for (let k = 0; k < start.re.length; k++) start.re[k] = (start.re[k] as number) - 1
-  const { re, im, correction } = refineRoots(shifted, start, value => (1 + value) - 1)
+  const { re, im, correction } = refined(shifted, start)
   for (let k = 0; k < re.length; k++) {
     const root = 1 + (re[k] as number)
     // exact unless the root is far beyond 1
@@ -30,6 +31,19 @@ export function rootsAboutOne(exact: ExactPolynomial): RefinedRoots | null {
     correction[k] = (correction[k] as number) + rounding * (1 + 1e-9)
   }
   return { re, im, correction }
+}
+
+const onto = (value: number) => (1 + value) - 1
+
+/** From these starting points, or, where doubles see nothing of the roots, from those of as many bits as the coefficients have. */
+function refined(shifted: ScaledPolynomial, start: { re: Float64Array, im: Float64Array }): RefinedRoots {
+  try {
+    return refineRoots(shifted, start, onto)
+  }
+  catch (error) {
+    if (!(error instanceof RangeError)) throw error
+    return refineRoots(shifted, aberthRoots(shifted, preciseEvaluation(shifted.exact)), onto)
+  }
 }
 
 /** Aberth's iteration in x, evaluated in powers of x - 1 near 1. */

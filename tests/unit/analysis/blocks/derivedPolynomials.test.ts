@@ -63,4 +63,15 @@ describe('polynomials worked out from modes', () => {
     expect(analyseLoop(sampled).structure?.notes).toEqual([])
     for (const w of [40, 306, 433.3, 640, 5000]) expect(relativeError(sampled, w, aliasingSum(w, 2e-4))).toBeLessThan(1e-8)
   })
+
+  it('have roots that are found of order 150 too, where doubles see nothing of how they crowd about z = 1', () => {
+    const many = Array.from({ length: 75 }, (_, k) => ({ name: `mode ${k + 1}`, frequency: 20 * Math.PI * 1.04 ** k, damping: 0.01, gainIn: [1], gainOut: [Math.cos(k)] }))
+    const input: ExpressionInput = { expression: 'K*H*G', blocks: {
+      K: { kind: 'expression', expression: '1000/(z-0.2)', sampleTime: 5e-4 }, H: { kind: 'hold', hold: 'zeroOrder', sampleTime: 5e-4 },
+      G: { kind: 'modal', frequencyUnit: 'rad/s', derivative: 0, modes: many, rigid: [], inputs: [], outputs: [] },
+    } }
+    const { coverage, structure } = analyseLoop(input)
+    expect(coverage.proven).toBe(true)
+    expect(structure?.accuracy?.relative).toBeLessThan(1e-11)
+  })
 })
