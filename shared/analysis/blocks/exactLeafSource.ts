@@ -50,6 +50,7 @@ export function exactLeafSource(): ExactLeafSource {
         notes.push(...hidden.map(note => ({ block, ...note })))
         accuracies.push(accuracy)
       }
+      if (!loop) notes.push({ block, code: 'other', message: `Its channel [${channel.output + 1}, ${channel.input + 1}] is zero: products with it are left out of L, and modes of the blocks in them, stable or not, are not in the verdict.` })
       if (loop) used.push({ block, loop, sampled: 'sampleTime' in gain && gain.sampleTime !== undefined })
       return loop
     },

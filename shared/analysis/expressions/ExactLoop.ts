@@ -38,7 +38,7 @@ export interface DelayedSum {
  *
  * Factors are kept as they were typed, nothing cancels between numerator and denominator: a pole that is typed and
  * cancelled is a hidden mode of the loop. Only `inverted`, the denominators of sums that were divided by (the poles of G in
- * G/(1+G*H)), cancel, because there the pole is no pole of the whole.
+ * G/(1+G*H)), cancel with what they are multiplied by, because there the pole is no pole of the whole.
  */
 export interface ExactLoop {
   scale: Rational

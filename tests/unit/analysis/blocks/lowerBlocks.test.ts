@@ -229,6 +229,19 @@ describe('hidden modes', () => {
     expect(analysis.stability.reason).toContain('hidden cancellation')
   })
 
+  it('an unstable mode hidden in the feedback path of an inner loop stays unstable and is told', () => {
+    // P alone keeps its mode at s = 2 whatever is closed around it: 1/(1 + Q P) divides by a sum, which does not remove it
+    const P: BlockGain = { kind: 'zerosPoles', zeros: [[2, 0]], poles: [[2, 0], [-1, 0]], gain: 1 }
+    const Q: BlockGain = { kind: 'coefficients', numerator: [1], denominator: [1, 3] }
+    for (const expression of ['Q/(1 + Q*P)', 'Q*(1/(1 + Q*P))', 'Q/(1 + P*Q)*2/(1 + Q)', 'P/(1 + P*Q)', 'Q/(1 + U*Z*Q)', 'Q/(1 + Q*P*D)']) {
+      const analysis = analyse(over(expression, { P, Q, U: gain('1/(s-2)'), Z: gain('(s-2)/(s+5)'), D: { kind: 'deadTime', deadTime: 0.1, unit: 's' } }))
+      expect(analysis.stability.verdict, expression).toBe('unstable')
+      expect(analysis.structure?.notes, expression).toMatchObject([{ code: 'hidden unstable' }])
+    }
+    // the poles of the feedback path itself are zeros of the whole and hide nothing
+    expect(analyse(over('Q/(1 + Q*U)', { Q, U: gain('10/(s-2)') }))).toMatchObject({ stability: { verdict: 'stable' }, structure: { notes: [] } })
+  })
+
   it('an integrator that a washout cancels is told as one on the boundary', () => {
     const analysis = analyse(over('C*G', { C: gain('s/(s+1)'), G }))
     expect(analysis.structure?.notes).toMatchObject([{ block: 'G', code: 'hidden boundary' }])
@@ -254,6 +267,13 @@ describe('state space among other blocks', () => {
 
   it('a channel that is zero is told by its block', () => {
     expect(refused('2*G[angle, force]', { G: plant }).message).toBe('The expression is zero: a loop gain of zero has no crossings to find. What is zero: the block G in its channel [2,2].')
+  })
+
+  it('a channel that is zero beside others is told: what the block holds is then not in L', () => {
+    // the second input reaches nothing, so P's unstable state is in no term of the sum
+    const unreached: BlockGain = { kind: 'stateSpace', a: [[2, 0], [0, -1]], b: [[1, 0], [1, 0]], c: [[1, 1]], d: [[0, 0]], inputs: [], outputs: [] }
+    const analysis = analyse(over('G + P[1, 2]', { G: gain('1/(s+1)'), P: unreached }))
+    expect(analysis.structure?.notes).toEqual([{ block: 'P', code: 'other', message: 'Its channel [1, 2] is zero: products with it are left out of L, and modes of the blocks in them, stable or not, are not in the verdict.' }])
   })
 
   it('is its channels typed out, in a feedback over two of them too', () => {
