@@ -1,5 +1,5 @@
 import { execFileSync } from 'node:child_process'
-import { mkdtempSync, readdirSync, rmSync } from 'node:fs'
+import { mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
@@ -36,11 +36,32 @@ describe('the main job, from sign-in to an issued revision', () => {
     expect(await page.getByRole('button', { name: 'Sign in' }).isVisible()).toBe(true)
   })
 
-  it('signs the demo engineer in and shows both systems', async () => {
+  it('signs the demo engineer in and shows the systems', async () => {
     await signIn(page, server.url, 'engineer@tern.example', accounts.password)
     await page.getByRole('link', { name: 'Tern 30 access gangway' }).waitFor()
     await page.getByRole('link', { name: 'Plover 48 V converter' }).waitFor()
+    await page.getByRole('link', { name: 'Skua stabilised antenna mount' }).waitFor()
     await keepScreenshot(page, '01-systems')
+  })
+
+  it('exports a system as JSON, tells what is wrong in a changed file by its path, and imports the right one', async () => {
+    await page.getByRole('link', { name: 'Plover 48 V converter' }).click()
+    await page.getByRole('link', { name: 'Set up' }).click()
+    const [download] = await Promise.all([page.waitForEvent('download'), page.getByRole('link', { name: 'Export as JSON' }).click()])
+    expect(download.suggestedFilename()).toBe('Plover 48 V converter.json')
+    const file = join(folder, 'converter.json')
+    await download.saveAs(file)
+    const text = readFileSync(file, 'utf8').replace('"Plover 48 V converter"', '"Plover, second article"')
+    await page.goto(`${server.url}/systems`)
+    await page.getByRole('button', { name: 'Import a system' }).click()
+    const dialog = page.getByRole('dialog')
+    const choose = (content: string) => dialog.locator('input[type=file]').setInputFiles({ name: 'converter.json', mimeType: 'application/json', buffer: Buffer.from(content) })
+    await choose(text.replace('"expression": "1/(LM*s+RM)"', '"expression": "1/(LM*s+RX)"'))
+    await dialog.getByText(/^blocks\[\d+\]\.definition\.expression$/).waitFor()
+    await choose(text)
+    await page.waitForURL(/\/systems\/\d+$/)
+    await page.getByRole('heading', { name: 'Plover, second article' }).waitFor()
+    await page.goto(`${server.url}/systems`)
   })
 
   it('shows the board: every loop in every condition with its verdict in words', async () => {
