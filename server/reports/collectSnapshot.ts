@@ -10,6 +10,7 @@ import type { ReportRow } from '../database/models/ReportRow'
 import { RevisionRow } from '../database/models/RevisionRow'
 import { SourceRow } from '../database/models/SourceRow'
 import { UploadRow } from '../database/models/UploadRow'
+import { findModeShifts } from '../services/analyses/findModeShifts'
 import { findStructures, type LoopStructureFacts, type SourcesOfCell } from '../services/analyses/findStructures'
 import { listBlocks } from '../services/blocks/listBlocks'
 import { readBrandForPrint } from '../services/brand/readBrandForPrint'
@@ -19,6 +20,7 @@ import { listLoops } from '../services/loops/listLoops'
 import { listParameters } from '../services/parameters/listParameters'
 import { analyseSources } from '../services/sources/analyseSources'
 import { readSystem } from '../services/systems/readSystem'
+import { compareStanding } from './view/compareStanding'
 
 /** Rows in the order of the ids given; ids of rows that are gone are left out. */
 function inOrder<Row extends { id: number }>(rows: readonly Row[], ids: readonly number[]): Row[] {
@@ -47,7 +49,7 @@ async function cellOf({ loop, condition, ofRecord: entry, others }: CoveredCell,
     failure: entry?.failure ?? null,
     judgement: judgeAnalysis(analysis, criteria),
     closedLoopPoles: structure.closedLoopPoles,
-    modeShifts: structure.modeShifts,
+    modeShifts: null,
     otherSources: others.map(({ source, ...other }, index) => ({
       name: source.name, kind: source.kind, setAsideReason: source.setAsideReason, ...other, difference: structure.differences[index] ?? null,
     })),
@@ -102,11 +104,23 @@ export async function coverageOf(report: ReportRow): Promise<{ loops: Loop[], co
   return { loops: inOrder(loops, report.loopIds), conditions: inOrder(conditions, report.conditionIds) }
 }
 
+/** Flexible modes are moved where each loop stands worst, which is where a report prints them; it takes many analyses a loop. */
+async function addModeShifts(cells: SnapshotCell[], blocks: readonly Block[], isPreview: boolean, context: ServiceContext): Promise<void> {
+  const loopCodes = [...new Set(cells.map(({ loopCode }) => loopCode))]
+  const governing = loopCodes.flatMap(code => cells.filter(({ loopCode, analysis }) => loopCode === code && analysis !== null).sort(compareStanding).slice(0, 1))
+  const asked = governing.flatMap(cell => (cell.input === null ? [] : [{ cell, input: cell.input }]))
+  const roles = Object.fromEntries(blocks.map(({ name, role }) => [name, role]))
+  const shifts = await findModeShifts(asked.map(({ input }) => input), roles, context, { known: isPreview })
+  asked.forEach(({ cell }, index) => {
+    cell.modeShifts = shifts[index] ?? null
+  })
+}
+
 /**
  * Everything a report says at this moment, as plain data: inputs, results, criteria, brand. Analyses that are not known yet are
- * computed, so this is never called inside a write transaction.
+ * computed, so this is never called inside a write transaction. A preview does not wait for flexible modes to be moved.
  */
-export async function collectSnapshot(report: ReportRow, draft: DraftFacts, context: ServiceContext): Promise<ReportSnapshot> {
+export async function collectSnapshot(report: ReportRow, draft: DraftFacts, context: ServiceContext, { isPreview = false } = {}): Promise<ReportSnapshot> {
   const [{ system, criteria }, { loops, conditions }, parameters, blocks, brand, history] = await Promise.all([
     readSystem(report.systemId), coverageOf(report), listParameters(report.systemId), listBlocks(report.systemId), readBrandForPrint(), historyOf(report.id),
   ])
@@ -117,11 +131,12 @@ export async function collectSnapshot(report: ReportRow, draft: DraftFacts, cont
     const ofCell = analysed.filter(({ source }) => source.loopId === loop.id && source.conditionId === condition.id)
     return { loop, condition, ofRecord: ofCell.find(({ source }) => source.ofRecord), others: ofCell.filter(({ source }) => !source.ofRecord) }
   }))
-  const structures = await findStructures(covered, Object.fromEntries(blocks.map(({ name, role }) => [name, role])), context)
+  const structures = await findStructures(covered, context)
   const disagreements = breakPointDisagreements({ loops, cells: covered.map(({ loop, condition, ofRecord }) => ({ loopId: loop.id, conditionId: condition.id, analysis: ofRecord?.analysis ?? null })) })
   const cells = await Promise.all(covered.map((cell, index) => (
     cellOf(cell, structures[index]!, disagreements.get(cellKey(cell.loop.id, cell.condition.id)) ?? null, criteria)
   )))
+  await addModeShifts(cells, blocks, isPreview, context)
   return {
     format: 'wideberth report snapshot',
     formatVersion: 1,

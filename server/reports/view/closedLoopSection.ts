@@ -2,6 +2,7 @@ import { describeClosedLoopPole } from '#shared/formatting/describeClosedLoopPol
 import { listInWords } from '#shared/formatting/listInWords'
 import type { ReportSnapshot } from '#shared/types/snapshot'
 import type { ClosedLoopPoles } from '#shared/types/structure'
+import { shiftsPending } from '../../services/analyses/findModeShifts'
 import type { PlacedCell } from './cellsOf'
 import { governingCell } from './chapterView'
 import { modeShiftTable } from './modeShiftTable'
@@ -37,7 +38,7 @@ function withoutList(cells: readonly PlacedCell[]): string[] {
 }
 
 const polesWords = 'One of each conjugate pair is listed. \u2018Goes back to\u2019 names the open-loop pole it departs from as the gain rises from zero, where that is plain. Every condition is in tables/closed-loop-poles.csv of this revision\u2019s package.'
-const shiftWords = 'Each flexible mode of a plant, actuator or sensor moved by \u221220, \u221210, +10 and +20 % with its damping and gains kept and the notch filters left where they are. Every condition is in tables/mode-shifts.csv of this revision\u2019s package.'
+const shiftWords = 'Each flexible mode of a plant, actuator or sensor moved by \u221220, \u221210, +10 and +20 % with its damping and gains kept and the notch filters left where they are. Full digits are in tables/mode-shifts.csv of this revision\u2019s package.'
 
 /** A title with its words, then a table a block, so that long ones may part over pages. */
 const titled = (title: string, paragraphs: string[], tables: readonly TableView[]): SectionBlock[] => [
@@ -59,7 +60,8 @@ export function closedLoopSection(snapshot: ReportSnapshot, cells: readonly Plac
     const found = placed.cell.modeShifts
     return found && found.reason === null ? [modeShiftTable(placed, found)] : []
   })
-  if (poles.length + reasons.length + shifts.length === 0) return null
+  const isPending = governing.some(({ cell }) => cell.modeShifts?.reason === shiftsPending)
+  if (poles.length + reasons.length + shifts.length === 0 && !isPending) return null
   return {
     number,
     anchor: 'closed-loop-poles',
@@ -67,7 +69,7 @@ export function closedLoopSection(snapshot: ReportSnapshot, cells: readonly Plac
     introduction: ['Each loop is shown in the condition in which it stands worst.'],
     blocks: [
       ...titled('Closed-loop poles', [...(poles.length === 0 ? [] : [polesWords]), ...reasons.map(reason => `No list for ${reason}`)], poles),
-      ...(shifts.length === 0 ? [] : titled('Flexible modes moved', [shiftWords], shifts)),
+      ...(shifts.length === 0 && !isPending ? [] : titled('Flexible modes moved', [...(shifts.length === 0 ? [] : [shiftWords]), ...(isPending ? [shiftsPending] : [])], shifts)),
     ],
   }
 }

@@ -1,14 +1,12 @@
-import type { AnalysisFailure, FrequencyUnit } from '#shared/types/analysis'
-import type { BlockRole } from '#shared/types/block'
+import type { AnalysisFailure } from '#shared/types/analysis'
 import type { AnalysedSource } from '#shared/types/source'
-import type { ClosedLoopPoles, ModeShiftTable, SourceDifference } from '#shared/types/structure'
+import type { ClosedLoopPoles, SourceDifference } from '#shared/types/structure'
 import type { OpenContext } from '../context'
 import { runEngine } from './runEngine'
 
 /** What the engine says of a loop in a condition beside its analysis. */
 export interface LoopStructureFacts {
   closedLoopPoles: ClosedLoopPoles | null
-  modeShifts: ModeShiftTable | null
   /** one for each of the other sources, in their order */
   differences: SourceDifference[]
 }
@@ -21,9 +19,6 @@ export interface SourcesOfCell {
 const compared = ({ source, input, analysis }: AnalysedSource) => ({ name: source.name, input, analysis })
 const failed = <Answer extends object>(answer: Answer | AnalysisFailure): answer is AnalysisFailure => 'error' in answer
 
-const withoutShifts = (frequencyUnit: FrequencyUnit, reason: string): ModeShiftTable =>
-  ({ frequencyUnit, nominal: { verdict: 'undetermined', summary: null, vectorMargin: null, failure: reason }, modes: [], reason, notes: [] })
-
 /** Answers in the order of `cells`; null where a cell asks nothing. */
 async function ask<Cell, Answer>(cells: readonly Cell[], questionOf: (cell: Cell) => object | null, run: (questions: object[]) => Promise<Answer[]>): Promise<(Answer | null)[]> {
   const questions = cells.map(questionOf)
@@ -32,27 +27,19 @@ async function ask<Cell, Answer>(cells: readonly Cell[], questionOf: (cell: Cell
   return questions.map(question => (question === null ? null : answers[next++] ?? null))
 }
 
-/**
- * Closed-loop poles and moved modes of the sources of record, and how far the others lie from them. `roles` of the blocks say whose modes are
- * flexible modes. Computed in the pool and kept; what cannot be answered says why in its `reason`.
- */
-export async function findStructures(cells: readonly SourcesOfCell[], roles: Record<string, BlockRole>, context: OpenContext): Promise<LoopStructureFacts[]> {
+/** Closed-loop poles of the sources of record, and how far the others lie from them. Computed in the pool and kept; what cannot be answered says why in its `reason`. */
+export async function findStructures(cells: readonly SourcesOfCell[], context: OpenContext): Promise<LoopStructureFacts[]> {
   const inputOf = ({ ofRecord }: SourcesOfCell) => (ofRecord?.analysis ? ofRecord.input : null)
   const poles = await ask(cells, inputOf, questions => runEngine('closedLoopPoles', questions, context))
-  const shifts = await ask(cells, (cell) => {
-    const input = inputOf(cell)
-    return input !== null && 'expression' in input && input.blocks ? { input, roles } : null
-  }, questions => runEngine('modeShifts', questions, context))
   const pairs = cells.flatMap(({ ofRecord, others }) => (ofRecord ? others.map(other => ({ reference: compared(ofRecord), other: compared(other) })) : []))
   const differences = await runEngine('sourceDifference', pairs, context)
   let next = 0
   return cells.map(({ ofRecord, others }, index): LoopStructureFacts => {
     const unit = ofRecord?.input?.frequencyUnit ?? 'rad/s'
     const ofCell = ofRecord ? others.map(() => next++) : []
-    const [pole, shift] = [poles[index] ?? null, shifts[index] ?? null]
+    const pole = poles[index] ?? null
     return {
       closedLoopPoles: pole && (failed(pole) ? { frequencyUnit: unit, poles: [], reason: pole.error.message } : pole),
-      modeShifts: shift && (failed(shift) ? withoutShifts(unit, shift.error.message) : shift),
       differences: ofCell.map((place) => {
         const difference = differences[place]!
         const { reference, other } = pairs[place]!

@@ -19,15 +19,19 @@ const hashOf = (task: keyof EngineAnswers, question: unknown) =>
  * What the engine answers to each question, in their order. Known answers come from the database; new ones are computed and, unless `keep` says
  * otherwise, kept; failures are not.
  */
-export async function runEngine<Task extends keyof EngineAnswers>(task: Task, questions: readonly unknown[], context: OpenContext, { keep = true }: { keep?: boolean } = {}): Promise<(EngineAnswers[Task] | AnalysisFailure)[]> {
+export function runEngine<Task extends keyof EngineAnswers>(task: Task, questions: readonly unknown[], context: OpenContext, options?: { keep?: boolean }): Promise<(EngineAnswers[Task] | AnalysisFailure)[]>
+/** With `known` nothing is computed: null stands for what is not known yet. */
+export function runEngine<Task extends keyof EngineAnswers>(task: Task, questions: readonly unknown[], context: OpenContext, options: { known: boolean }): Promise<(EngineAnswers[Task] | AnalysisFailure | null)[]>
+export async function runEngine<Task extends keyof EngineAnswers>(task: Task, questions: readonly unknown[], context: OpenContext, { keep = true, known: onlyKnown = false }: { keep?: boolean, known?: boolean } = {}): Promise<(EngineAnswers[Task] | AnalysisFailure | null)[]> {
   type Answer = EngineAnswers[Task] | AnalysisFailure
   const hashes = questions.map(question => hashOf(task, question))
   const known = await knownAnswers(hashes)
   const fresh = new Map<string, EngineAnswer>()
-  const answers = await Promise.all(questions.map(async (question, index): Promise<Answer> => {
+  const answers = await Promise.all(questions.map(async (question, index): Promise<Answer | null> => {
     const hash = hashes[index] as string
     const kept = known.get(hash)
     if (kept) return kept as Answer
+    if (onlyKnown) return null
     const answer = await askOnce(hash, task, question) as Answer
     if (!('error' in answer)) fresh.set(hash, answer)
     return answer

@@ -14,7 +14,7 @@ import { findReport } from './findReport'
 export async function previewReport(reportId: number, renderHtml: HtmlRenderer, context: ServiceContext): Promise<string> {
   const report = await findReport(reportId)
   const draft = nextDraft(await RevisionRow.findAll({ where: { reportId } }))
-  const snapshot = await collectSnapshot(report, { ...draft, changeNote: 'Not frozen yet' }, context)
+  const snapshot = await collectSnapshot(report, { ...draft, changeNote: 'Not frozen yet' }, context, { isPreview: true })
   const drawn = await drawReportFigures(snapshot, { ...loopGains, progress: async () => undefined })
   return renderHtml(buildReportView(snapshot, {
     edition: 'preview', label: 'Preview', preparedBy: context.actor.name, preparedAt: snapshot.frozenAt, approvedBy: null, issuedAt: null, snapshotSha256: sha256Of(writeSnapshot(snapshot)),
