@@ -19,8 +19,8 @@ export interface LeafSource<V> {
   algebra: LoopAlgebra<V>
   /** One channel of a rational block; null where it is zero. */
   rational: (name: string, gain: RationalGain, channel: ChannelNumbers) => V | null
-  /** Told of each expression block that is needed. */
-  expression: (name: string, part: LoopPart<V>) => void
+  /** Told of each expression block that is needed; answers it as what refers to it takes it. */
+  expression: (name: string, part: LoopPart<V>) => LoopPart<V>
   /** A measured block, which stands beside parts of either domain. */
   measured: (name: string) => V
 }
@@ -79,8 +79,7 @@ export class BlockScope<V> {
     for (const [value, sampled] of [[part?.sampled, true], [part?.continuous, false]] as const) {
       if (value && (this.leaves.algebra.excess(value) ?? 0) > 0) throw new AnalysisInputError(improper(sampled), 'expression', tree.position)
     }
-    if (part) this.leaves.expression(name, part)
-    return part
+    return part && this.leaves.expression(name, part)
   }
 
   private partOf(name: string, channel: BlockChannel | null, position: number): LoopPart<V> | null {

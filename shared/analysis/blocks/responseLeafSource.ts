@@ -22,7 +22,7 @@ export function responseLeafSource(sampleTime: number | undefined, measured: Rea
       const loop = rational(name, gain, channel)
       return loop && responseOf(loop, 'sampleTime' in gain && gain.sampleTime !== undefined ? sampleTime : undefined)
     },
-    expression: () => {},
+    expression: (_, part) => part,
     measured: (name) => {
       const response = measured.get(name)
       if (!response) throw new AnalysisInputError('The block is measured: it is known only at its points.', 'points')

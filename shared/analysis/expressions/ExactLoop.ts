@@ -12,6 +12,13 @@ export interface PolynomialFactor {
    * where it lies there, not where coefficients rounded to doubles could not tell (`snapToBoundary`).
    */
   precise?: true
+  /** The blocks it comes from and whether it stands in z; not known where it was typed in the loop's own expression. */
+  origin?: FactorOrigin
+}
+
+export interface FactorOrigin {
+  blocks: readonly string[]
+  sampled: boolean
 }
 
 /** Polynomial factors by their coefficients written out. */

@@ -1,6 +1,6 @@
 import { primitivePart } from '../../numeric/extended/primitivePart'
 import { Rational } from '../../numeric/extended/Rational'
-import type { FactorMap, PolynomialFactor } from './ExactLoop'
+import type { FactorMap, FactorOrigin, PolynomialFactor } from './ExactLoop'
 
 /** Products of integer polynomial factors, each known by its coefficients. */
 export const FactorProduct = {
@@ -29,13 +29,18 @@ export const FactorProduct = {
     return new Map(Array.from(a, ([key, factor]) => [key, { ...factor, precise: true }]))
   },
 
+  /** The same factors, those without an origin with this one. */
+  from(origin: FactorOrigin, a: FactorMap): FactorMap {
+    return new Map(Array.from(a, ([key, factor]) => [key, { origin, ...factor }]))
+  },
+
   times(a: FactorMap, b: FactorMap): FactorMap {
     if (a.size === 0) return b
     if (b.size === 0) return a
     const product = new Map(a)
     for (const [key, factor] of b) {
       const present = a.get(key)
-      product.set(key, present ? { ...factor, ...present, power: factor.power + present.power } : factor)
+      product.set(key, present ? { ...factor, ...present, ...bothOrigins(factor, present), power: factor.power + present.power } : factor)
     }
     return product
   },
@@ -59,7 +64,7 @@ export const FactorProduct = {
     const result = new Map(a)
     for (const [key, factor] of b) {
       const present = a.get(key)
-      result.set(key, present ? { ...factor, ...present, power: Math.max(factor.power, present.power) } : factor)
+      result.set(key, present ? { ...factor, ...present, ...bothOrigins(factor, present), power: Math.max(factor.power, present.power) } : factor)
     }
     return result
   },
@@ -93,6 +98,10 @@ export const FactorProduct = {
 
   /** Product of two polynomials, lowest power first. */
   multiplied,
+}
+
+function bothOrigins({ origin: a }: PolynomialFactor, { origin: b }: PolynomialFactor): { origin?: FactorOrigin } {
+  return a && b ? { origin: { ...a, blocks: [...new Set([...a.blocks, ...b.blocks])] } } : {}
 }
 
 function multiplied(a: bigint[], b: bigint[]): bigint[] {

@@ -242,6 +242,31 @@ describe('hidden modes', () => {
     expect(analyse(over('Q/(1 + Q*U)', { Q, U: gain('10/(s-2)') }))).toMatchObject({ stability: { verdict: 'stable' }, structure: { notes: [] } })
   })
 
+  describe('a pole that different blocks have in one place', () => {
+    const I = gain('1/s')
+    const J = gain('2/s')
+    const Q = gain('1/(s+3)')
+    const notesOf = (expression: string, blocks: Record<string, BlockGain>) => analyse(over(expression, blocks)).structure?.notes.map(({ message }) => message)
+
+    it('two integrators side by side are taken as one, and it is told what they keep where they are two', () => {
+      expect(notesOf('(I + J)*Q', { I, J, Q })).toEqual([expect.stringMatching(/^I and J have the same pole at s = 0, not a stable one, which is taken as one pole .* write what they share as a block of its own\.$/)])
+      expect(notesOf('H*Q*I + H*Q*J', { I, J, Q, H: zoh })).toEqual([expect.stringContaining('have the same pole at ')])
+    })
+
+    it('so is an integrator before an inner loop with one in its feedback, which its zero cancels', () => {
+      expect(notesOf('I*Q/(1 + Q*J)', { I, J, Q })).toEqual([expect.stringContaining('I and J have the same pole at s = 0')])
+    })
+
+    it('but not one block used twice, its channels, stable poles, or poles in a product', () => {
+      const plant: BlockGain = { kind: 'modal', frequencyUnit: 'Hz', derivative: 0, modes: [], rigid: [{ power: -1, gainIn: [1], gainOut: [1, 2] }], inputs: [], outputs: [] }
+      expect(notesOf('I*Q/(1 + Q*I)', { I, Q })).toEqual([])
+      expect(notesOf('Q*(P[1, 1] + P[2, 1])', { Q, P: plant })).toEqual([])
+      expect(notesOf('Q + R', { Q, R: gain('2/(s+3)') })).toEqual([])
+      expect(notesOf('Q*I*J', { I, J, Q })).toEqual([])
+      expect(notesOf('J*I*Q/(1 + Q*J)', { I, J, Q })).toEqual([])
+    })
+  })
+
   it('an integrator that a washout cancels is told as one on the boundary', () => {
     const analysis = analyse(over('C*G', { C: gain('s/(s+1)'), G }))
     expect(analysis.structure?.notes).toMatchObject([{ block: 'G', code: 'hidden boundary' }])
