@@ -4,4 +4,6 @@ export const matrixLimits = {
   channels: 50,
   /** sets in one file */
   sets: 1000,
+  /** lines of one table: those of as many sets of that size, and their headings */
+  lines: 300_000,
 } as const

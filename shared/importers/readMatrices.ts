@@ -44,7 +44,7 @@ function checked(typed: TypedSet[]): MatrixReading {
     const found = checkMatrices(set, name)
     if ('name' in found) sets.push(found)
     // Where there is no line, the name of the set says where the fault is.
-    else problems.push(...found.map(({ line, message }) => ({ line, message: line === 0 && typed.length > 1 ? `${name}: ${message}` : message })))
+    else for (const { line, message } of found) problems.push({ line, message: line === 0 && typed.length > 1 ? `${name}: ${message}` : message })
   }
   return problems.length > 0 ? failed(problems) : { sets, problems: [] }
 }

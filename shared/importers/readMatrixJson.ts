@@ -1,3 +1,4 @@
+import { findFaultyKey } from './findFaultyKey'
 import type { MatrixName, TypedMatrix, TypedNames, TypedSet } from './MatrixSet'
 import type { MeasurementProblem } from './MeasurementProblem'
 
@@ -18,6 +19,8 @@ export function readMatrixJson(text: string): { sets: TypedSet[] } | { problems:
     if (!(error instanceof SyntaxError)) throw error
     return { problems: [{ line: lineOf(error, text), message: `The file is not JSON: ${error.message}.` }] }
   }
+  const faulty = findFaultyKey(text)
+  if (faulty) return { problems: [{ line: lineAt(faulty.position, text), message: faulty.message }] }
   const entries = entriesOf(value)
   const problems: MeasurementProblem[] = []
   const sets = entries.flatMap(([name, entry], index): TypedSet[] => {
@@ -33,17 +36,20 @@ export function readMatrixJson(text: string): { sets: TypedSet[] } | { problems:
 /** The line of a fault that the parser tells by its place; 0 where it tells none. */
 function lineOf(error: SyntaxError, text: string): number {
   const place = /position (\d+)/.exec(error.message)
-  return place === null ? 0 : text.slice(0, Number(place[1])).split('\n').length
+  return place === null ? 0 : lineAt(Number(place[1]), text)
 }
+
+const lineAt = (position: number, text: string): number => text.slice(0, position).split('\n').length
 
 function entriesOf(value: unknown): [string | null, unknown][] {
   if (Array.isArray(value)) return value.map(entry => [null, entry])
   if (!isRecord(value)) return []
   const isSet = Object.entries(value).some(([key, entry]) => /^[abcd]$/i.test(key) && !isRecord(entry))
-  return isSet ? [[null, value]] : Object.entries(value)
+  return isSet ? [[null, value]] : Object.entries(value).map(([name, entry]) => [name.trim(), entry])
 }
 
 function readSet(name: string | null, value: unknown): Read<TypedSet> {
+  if (name === '') return { problem: 'a set of matrices needs a name that is not blank' }
   if (!isRecord(value)) return { problem: 'must be an object with A, B, C and D' }
   const set: TypedSet = { name, line: 0, matrices: {}, inputs: null, outputs: null }
   for (const [key, entry] of Object.entries(value)) {

@@ -2,6 +2,7 @@ import type { Dialect } from './Dialect'
 import { guessMatrixDialect } from './guessMatrixDialect'
 import type { MatrixName, TypedSet } from './MatrixSet'
 import type { MeasurementProblem } from './MeasurementProblem'
+import { matrixLimits } from './matrixLimits'
 import { parseDecimal } from './parseDecimal'
 import { stackPlainRows, type PlainRow } from './stackPlainRows'
 import { splitRows, type TableRow } from './splitRows'
@@ -23,8 +24,8 @@ interface Reading {
   common: Pick<TypedSet, 'inputs' | 'outputs' | 'sampleTime'>
   set: TypedSet | null
   matrix: MatrixName | null
-  /** name of the set that the plain rows to come belong to */
-  plainName: string | null
+  /** the 'condition' line of the set that the plain rows to come belong to */
+  plainSet: PlainRow['set']
 }
 
 /**
@@ -35,12 +36,13 @@ interface Reading {
  */
 export function readMatrixText(text: string, shape: PlainShape): { sets: TypedSet[] } | { problems: MeasurementProblem[] } {
   const typed = text.split(/\r\n|\n|\r/)
+  if (typed.length > matrixLimits.lines) return { problems: [{ line: 0, message: `The file has ${typed.length} lines; at most ${matrixLimits.lines} are read.` }] }
   const blankLines = new Set(typed.flatMap((line, index) => blank.test(line) ? [index + 1] : []))
   const lines = typed.map(line => comment.test(line) ? '' : line)
   const { dialect, blanks } = guessMatrixDialect(lines)
   const rows = splitRows((blanks ? lines.map(line => line.trim().replace(/[ \t]+/g, '\t')) : lines).join('\n'), dialect)
   if ('message' in rows) return { problems: [rows] }
-  const reading: Reading = { sets: [], problems: [], plain: [], blankLines, common: { inputs: null, outputs: null }, set: null, matrix: null, plainName: null }
+  const reading: Reading = { sets: [], problems: [], plain: [], blankLines, common: { inputs: null, outputs: null }, set: null, matrix: null, plainSet: null }
   for (const row of rows) readRow({ line: row.line, cells: withoutEmptyEnd(row.cells) }, dialect, reading)
   const { sets, problems, plain, common } = reading
   if (problems.length > 0) return { problems }
@@ -98,7 +100,7 @@ function beginSet(name: string, line: number, reading: Reading): void {
   reading.set = { name, line, matrices: {}, inputs: null, outputs: null }
   reading.sets.push(reading.set)
   reading.matrix = null
-  reading.plainName = name
+  reading.plainSet = { name, line }
 }
 
 function beginMatrix(name: MatrixName, line: number, reading: Reading): void {
@@ -125,7 +127,7 @@ function readStatement(word: string, rest: string, line: number, dialect: Dialec
   }
 }
 
-function addRow(line: number, values: number[], { set, matrix, plain, blankLines, plainName }: Reading): void {
+function addRow(line: number, values: number[], { set, matrix, plain, blankLines, plainSet }: Reading): void {
   if (set && matrix) {
     set.matrices[matrix]?.rows.push({ line, values })
     return
@@ -133,5 +135,5 @@ function addRow(line: number, values: number[], { set, matrix, plain, blankLines
   const before = plain.at(-1)?.line ?? line
   let afterBlank = false
   for (let next = before + 1; next < line && !afterBlank; next++) afterBlank = blankLines.has(next)
-  plain.push({ line, values, name: plainName, afterBlank })
+  plain.push({ line, values, set: plainSet, afterBlank })
 }

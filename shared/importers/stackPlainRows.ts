@@ -6,8 +6,8 @@ import type { PlainShape } from './readMatrices'
 export interface PlainRow {
   line: number
   values: number[]
-  /** of the set it belongs to, as a 'condition' line above it has it */
-  name: string | null
+  /** the 'condition' line above it, which begins and names its set; null where there is none */
+  set: { name: string, line: number } | null
   /** whether a blank line stands between it and the row before */
   afterBlank: boolean
 }
@@ -15,7 +15,7 @@ export interface PlainRow {
 type Stacked = { sets: TypedSet[] } | { problems: MeasurementProblem[] }
 
 /**
- * Rows of plain numbers as sets [A B; C D] with `shape.states` states. One set ends where the name changes; without names, where `shape.outputs` says,
+ * Rows of plain numbers as sets [A B; C D] with `shape.states` states. One set ends at a 'condition' line; without those, where `shape.outputs` says,
  * or else at a blank line (one between [A B] and [C D] parts nothing). Width and height must fit, or every fault is told with its line.
  */
 export function stackPlainRows(rows: readonly PlainRow[], shape: PlainShape): Stacked {
@@ -42,7 +42,7 @@ function commonest(counts: readonly number[]): number {
 }
 
 function groupsOf(rows: readonly PlainRow[], states: number, outputs: number | null): PlainRow[][] | { problems: MeasurementProblem[] } {
-  if (rows.some(row => row.name !== null)) return partsOf(rows, (row, before) => row.name !== before.name)
+  if (rows.some(row => row.set !== null)) return partsOf(rows, (row, before) => row.set !== before.set)
   if (outputs !== null) {
     const height = states + outputs
     if (rows.length % height !== 0) return { problems: [{ line: rows[0]?.line ?? 0, message: `there are ${rows.length} rows: with ${states} states and ${outputs} ${outputs === 1 ? 'output' : 'outputs'} they must be a multiple of ${height}` }] }
@@ -83,7 +83,7 @@ function setsOf(groups: readonly PlainRow[][], states: number): Stacked {
   })
   return {
     sets: groups.map(group => ({
-      name: group[0]?.name ?? null,
+      name: group[0]?.set?.name ?? null,
       line: group[0]?.line ?? 0,
       matrices: { a: block(group, 0, states, 0, states), b: block(group, 0, states, states), c: block(group, states, group.length, 0, states), d: block(group, states, group.length, states) },
       inputs: null,

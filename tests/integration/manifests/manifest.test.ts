@@ -161,6 +161,16 @@ describe('a manifest with a fault', () => {
     await expect(importManifest(text, context)).rejects.toMatchObject({ code: 'invalidInput', ...(line !== undefined && { details: { line, column } }) })
   })
 
+  it.each([
+    ['a key twice, of which a parser keeps the last', '"values": {', '"values": { "FULL": 7, ', 46, /"FULL" stands twice/],
+    ['a key written in another way once more', '"version": 1', '"version": 1, "\\u0076ersion": 1', 3, /"version" stands twice/],
+    ['a name that parsers drop', '"values": {', '"values": { "__proto__": 7, ', 44, /"__proto__" is no name/],
+  ] as const)('that holds %s is refused with line and column, and stores nothing', async (_, from, to, line, words) => {
+    const before = await SystemRow.count()
+    await expect(importManifest((await manifestExample()).replace(from, to), context)).rejects.toMatchObject({ code: 'invalidInput', message: expect.stringMatching(words) as unknown, details: { line } })
+    expect(await SystemRow.count()).toBe(before)
+  })
+
   it('does not leave behind what it read of a file that was taken back', async () => {
     const bad = await changedExample(manifest => Object.assign(sourceOf(manifest).definition, { expression: 'q/s' }))
     await expect(importManifest(bad, context)).rejects.toMatchObject({ code: 'invalidInput' })

@@ -21,6 +21,10 @@ describe('a file of matrices that cannot be read', () => {
     ['JSON of something else', '[]', 0, 'holds no matrices'],
     ['a text among the numbers', '{"A": [["0"]], "B": [[1]], "C": [[1]], "D": [[0]]}', 0, 'row 1 of A: column 1 is no number'],
     ['a field nobody knows', '{"A": [[0]], "E": [[1]]}', 0, 'there is no field "E"'],
+    ['a condition twice in JSON, of which a parser keeps the last', '{"C1": {"A": 1, "B": 1, "C": 1, "D": 0},\n "C1": {"A": 2, "B": 1, "C": 1, "D": 0}}', 2, '"C1" stands twice'],
+    ['the same key written two ways', '{"A": 1, "B": 1, "C": 1, "D": 0, "\\u0041": 2}', 1, '"A" stands twice'],
+    ['a set under a blank name, which nobody could choose', '{" ": {"A": 1, "B": 1, "C": 1, "D": 0}, "C1": {"A": 1, "B": 1, "C": 1, "D": 0}}', 0, 'not blank'],
+    ['more lines than all sets could fill', '1\n'.repeat(300_001), 0, 'at most 300000 are read'],
   ])('holds %s, and says so with the line', (_, text, line, message) => {
     expect(problemsOf(text)[0]?.line).toBe(line)
     expect(problemsOf(text)[0]?.message).toContain(message)
@@ -63,6 +67,16 @@ describe('a file of matrices that cannot be read', () => {
     expect(problemsOf(JSON.stringify({ A: wide, B: wide.map(() => [1]), C: [wide[0]], D: 0 }))[0]?.message).toBe('There are 201 states; at most 200 are taken.')
   })
 
+  it('names two conditions of plain numbers alike: the second is not taken for outputs of the first', () => {
+    const plain = '-1,1\n1,0'
+    expect(problemsOf(`condition, C1\n${plain}\ncondition, C1\n${plain.replace('-1', '-2')}`, 1)).toEqual([{ line: 5, message: 'there are two sets named C1' }])
+  })
+
+  it('is told though more rows are at fault than a function takes arguments', () => {
+    const text = `A\n${'1\n1,1\n1\n'.repeat(90_000)}B\n1\nC\n1\nD\n0`
+    expect(problemsOf(text)).toHaveLength(101)
+  })
+
   it('tells a hundred faults and counts the rest', () => {
     const text = `A\n${Array.from({ length: 150 }, () => '1,x').join('\n')}`
     expect(problemsOf(text)).toHaveLength(101)
@@ -100,6 +114,7 @@ describe('a file of matrices', () => {
     const set = { A: oneSet.a, B: oneSet.b, C: oneSet.c, D: oneSet.d, outputs: ['rate', 'angle'], sampleTime: 0.01 }
     expect(readMatrices(JSON.stringify({ C1: set, C2: set })).sets.map(({ name, outputs, sampleTime }) => [name, outputs, sampleTime])).toEqual([['C1', ['rate', 'angle'], 0.01], ['C2', ['rate', 'angle'], 0.01]])
     expect(readMatrices(JSON.stringify([set, { ...set, name: 'deep' }])).sets.map(({ name }) => name)).toEqual(['set 1', 'deep'])
+    expect(readMatrices(JSON.stringify({ ' C1 ': set })).sets.map(({ name }) => name)).toEqual(['C1'])
     expect(problemsOf(JSON.stringify({ C1: set, C2: { ...set, B: [[1]] } }))).toEqual([{ line: 0, message: 'C2: B has 1 row, 2 are needed' }])
   })
 })
