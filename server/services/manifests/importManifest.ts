@@ -2,9 +2,10 @@ import { readManifest } from '#shared/manifest/readManifest'
 import type { System } from '#shared/types/system'
 import { recordAudit } from '../../audit/recordAudit'
 import { writeTransaction } from '../../database/database'
+import { rehearse } from '../../database/rehearse'
 import { presentSystem } from '../../presenters/presentSystem'
 import type { ServiceContext } from '../context'
-import { assertManifestDefinitions } from './assertManifestDefinitions'
+import { assertManifestBuildable, assertManifestDefinitions } from './assertManifestDefinitions'
 import { parseManifestText } from './parseManifestText'
 import { readManifestUploads } from './readManifestUploads'
 import { refuseManifest } from './refuseManifest'
@@ -19,10 +20,10 @@ export async function importManifest(text: string, context: ServiceContext): Pro
   if (faults !== null) throw refuseManifest(faults)
   const files = readManifestUploads(manifest.uploads)
   if (files.faults.length > 0) throw refuseManifest(files.faults)
+  // The engine is asked with no transaction open: the others go on writing while it takes its time.
+  await assertManifestBuildable(await rehearse(async () => assertManifestDefinitions(await storeManifest(manifest, files.uploads, context))))
   return writeTransaction(async () => {
-    const stored = await storeManifest(manifest, files.uploads, context)
-    await assertManifestDefinitions(stored)
-    const { system } = stored
+    const { system } = await storeManifest(manifest, files.uploads, context)
     await recordAudit(context, 'system imported', { systemId: system.id, subjectId: system.id, payload: { name: system.name, loops: manifest.loops.length, conditions: manifest.conditions.length } })
     return presentSystem(system)
   })
