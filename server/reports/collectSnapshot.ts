@@ -1,6 +1,6 @@
 import { ENGINE_VERSION } from '#shared/analysis/engineVersion'
 import { breakPointDisagreements, cellKey } from '#shared/workflow/breakPointDisagreements'
-import type { Block } from '#shared/types/block'
+import type { Block, BlockDefinition } from '#shared/types/block'
 import { judgeAnalysis } from '#shared/analysis/criteria/judgeAnalysis'
 import type { ReportSnapshot, SnapshotBlock, SnapshotCell, SnapshotLoop } from '#shared/types/snapshot'
 import type { SourceDefinition } from '#shared/types/source'
@@ -27,8 +27,8 @@ function inOrder<Row extends { id: number }>(rows: readonly Row[], ids: readonly
   return ids.flatMap(id => rows.filter(row => row.id === id))
 }
 
-async function fileOf(definition: SourceDefinition): Promise<{ name: string, sha256: string } | null> {
-  if (definition.kind !== 'measured') return null
+async function fileOf(definition: SourceDefinition | BlockDefinition): Promise<{ name: string, sha256: string } | null> {
+  if (!('uploadId' in definition)) return null
   const upload = await UploadRow.findByPk(definition.uploadId, { attributes: ['fileName', 'sha256'] })
   return upload === null ? null : { name: upload.fileName, sha256: upload.sha256 }
 }
@@ -57,17 +57,22 @@ async function cellOf({ loop, condition, ofRecord: entry, others }: CoveredCell,
   }
 }
 
-function blocksOf(blocks: readonly Block[], conditions: readonly OperatingCondition[]): SnapshotBlock[] {
-  return blocks.map(({ name, role, unitIn, unitOut, notes, definition, byCondition }) => ({
-    name,
-    role,
-    unitIn,
-    unitOut,
-    notes,
-    definitions: Object.fromEntries(conditions.flatMap(({ id, code }) => {
-      const inEffect = byCondition[id] ?? definition
-      return inEffect === null ? [] : [[code, inEffect]]
-    })),
+function blocksOf(blocks: readonly Block[], conditions: readonly OperatingCondition[]): Promise<SnapshotBlock[]> {
+  return Promise.all(blocks.map(async ({ name, role, unitIn, unitOut, notes, definition, byCondition }) => {
+    const inEffect = conditions.flatMap(({ id, code }): [string, BlockDefinition][] => {
+      const there = byCondition[id] ?? definition
+      return there === null ? [] : [[code, there]]
+    })
+    const files = await Promise.all(inEffect.map(async ([code, there]) => [code, await fileOf(there)] as const))
+    return {
+      name,
+      role,
+      unitIn,
+      unitOut,
+      notes,
+      definitions: Object.fromEntries(inEffect),
+      files: Object.fromEntries(files.flatMap(([code, file]) => (file === null ? [] : [[code, file]]))),
+    }
   }))
 }
 
@@ -151,7 +156,7 @@ export async function collectSnapshot(report: ReportRow, draft: DraftFacts, cont
     conditions: conditions.map(({ code, name, coordinates, tags, notes }) => ({ code, name, coordinates, tags, notes })),
     loops: loops.map(loop => snapshotLoop(loop, codes, report)),
     parameters: parametersOf(parameters, conditions),
-    blocks: blocksOf(blocks, conditions),
+    blocks: await blocksOf(blocks, conditions),
     cells,
     history,
   }

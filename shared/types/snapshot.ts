@@ -57,6 +57,8 @@ export interface SnapshotBlock {
   notes: string
   /** by condition code, as it holds there; a condition without one has no gain of this block */
   definitions: Record<string, BlockDefinition>
+  /** by condition code, of what was read from a file: its name and the SHA-256 of its bytes */
+  files?: Record<string, { name: string, sha256: string }>
 }
 
 /** A source kept beside the one of record. */

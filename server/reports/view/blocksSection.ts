@@ -2,14 +2,12 @@ import { describeBlockGain } from '#shared/formatting/describeBlockGain'
 import type { BlockGain } from '#shared/types/block'
 import type { LoopInput } from '#shared/types/analysis'
 import type { ReportSnapshot, SnapshotBlock, SnapshotCell } from '#shared/types/snapshot'
+import { blockTables } from './blockTables'
 import type { SectionView, TableView } from './ReportView'
 import { tableOf } from './tableOf'
 
 /** Characters of a gain that are printed; the package holds the whole. */
 const printedLength = 500
-
-/** Modes of a table that are printed. */
-const printedModes = 60
 
 const blocksOf = (input: LoopInput | null): Record<string, BlockGain> => (input !== null && 'expression' in input && input.blocks) || {}
 const isBuiltFrom = (input: LoopInput | null, name: string) => Object.hasOwn(blocksOf(input), name)
@@ -22,15 +20,21 @@ function gainIn(snapshot: ReportSnapshot, block: SnapshotBlock, conditionCode: s
   return gain === undefined ? '' : shortened(describeBlockGain(gain))
 }
 
+function fileIn(block: SnapshotBlock, conditionCode: string): string {
+  const file = block.files?.[conditionCode]
+  return file ? `file ${file.name}, SHA-256 ${file.sha256}` : ''
+}
+
 /** The gains of a block, conditions with the very same one together. */
-function gainsOf(snapshot: ReportSnapshot, block: SnapshotBlock): { conditions: string[], words: string }[] {
-  const gains: { conditions: string[], words: string, key: string }[] = []
+function gainsOf(snapshot: ReportSnapshot, block: SnapshotBlock): { conditions: string[], words: string, file: string }[] {
+  const gains: { conditions: string[], words: string, file: string, key: string }[] = []
   for (const { code } of snapshot.conditions) {
     const words = gainIn(snapshot, block, code)
-    const key = JSON.stringify([words, block.definitions[code]])
+    const file = fileIn(block, code)
+    const key = JSON.stringify([words, file, block.definitions[code]])
     const same = gains.find(gain => gain.key === key)
     if (same) same.conditions.push(code)
-    else gains.push({ conditions: [code], words, key })
+    else gains.push({ conditions: [code], words, file, key })
   }
   return gains
 }
@@ -45,44 +49,18 @@ function blocksTable(snapshot: ReportSnapshot, blocks: readonly SnapshotBlock[])
       const ofRecord = codes(cell => isBuiltFrom(cell.input, block.name))
       const setAside = codes(cell => cell.otherSources?.some(other => isBuiltFrom(other.input, block.name)) ?? false).filter(code => !ofRecord.includes(code))
       const units = block.unitIn === '' && block.unitOut === '' ? '' : `${block.unitOut || '1'} per ${block.unitIn || '1'}`
-      return gainsOf(snapshot, block).map(({ conditions, words }, index) => ({
+      return gainsOf(snapshot, block).map(({ conditions, words, file }, index) => ({
         cells: [
           { text: index === 0 ? block.name : '', isHead: true, small: index === 0 ? block.notes : '' },
           { text: index === 0 ? block.role : '' },
           { text: conditions.length === everywhere ? 'all' : conditions.join(', ') },
-          words === '' ? { text: 'no gain in this condition', tone: 'quiet' as const } : { text: words, isMono: true },
+          words === '' ? { text: 'no gain in this condition', tone: 'quiet' as const } : { text: words, small: file, isMono: true },
           { text: index === 0 ? units : '' },
           index === 0 ? { text: ofRecord.join(', ') || (setAside.length > 0 ? '' : 'none'), small: setAside.length > 0 ? `set aside: ${setAside.join(', ')}` : '' } : { text: '' },
         ],
       }))
     }),
     kind: 'blocks',
-  })
-}
-
-function modesTables(blocks: readonly SnapshotBlock[]): TableView[] {
-  return blocks.flatMap((block) => {
-    const tables = new Map<string, string[]>()
-    for (const [condition, definition] of Object.entries(block.definitions)) {
-      if (definition.kind === 'modal') tables.set(JSON.stringify(definition), [...tables.get(JSON.stringify(definition)) ?? [], condition])
-    }
-    return [...tables].map(([text, conditions]) => {
-      const definition = JSON.parse(text) as Extract<SnapshotBlock['definitions'][string], { kind: 'modal' }>
-      const gains = (values: readonly number[]) => values.map(value => String(Number(value.toPrecision(8)))).join(', ')
-      const left = definition.modes.length - printedModes
-      return tableOf({
-        caption: `Modes of ${block.name}${conditions.length === Object.keys(block.definitions).length ? '' : ` in ${conditions.join(', ')}`}`,
-        columns: [{ head: 'mode' }, { head: 'frequency', unit: definition.frequencyUnit, isNumber: true }, { head: 'damping', isNumber: true }, { head: 'gain in', isNumber: true }, { head: 'gain out', isNumber: true }],
-        rows: [
-          ...definition.rigid.map(term => ({ cells: [{ text: `rigid, s^${term.power}`, isHead: true }, { text: '' }, { text: '' }, { text: gains(term.gainIn) }, { text: gains(term.gainOut) }] })),
-          ...definition.modes.slice(0, printedModes).map(mode => ({
-            cells: [{ text: mode.name, isHead: true }, { text: String(mode.frequency) }, { text: String(mode.damping) }, { text: gains(mode.gainIn) }, { text: gains(mode.gainOut) }],
-          })),
-        ],
-        notes: left > 0 ? [`${left} more modes are in snapshot.json of this revision's package.`] : [],
-        kind: 'modes',
-      })
-    })
   })
 }
 
@@ -97,7 +75,7 @@ export function blocksSection(snapshot: ReportSnapshot, number: string): Section
     introduction: ['Each block is described once; the loop gains are expressions over their names, printed with the sources of each loop.'],
     blocks: [
       { title: '', paragraphs: [], items: [], table: blocksTable(snapshot, blocks) },
-      ...modesTables(blocks).map(table => ({ title: '', paragraphs: [], items: [], table })),
+      ...blocks.flatMap(blockTables).map(table => ({ title: '', paragraphs: [], items: [], table })),
     ],
   }
 }

@@ -30,15 +30,18 @@ export function modeShiftTable({ loop, condition }: PlacedCell, { modes, nominal
   return tableOf({
     caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: margins with each flexible mode moved`,
     columns: [
-      { head: 'mode' }, { head: 'moved to', unit: frequencyUnit, isNumber: true }, { head: 'closed loop' }, { head: 'gain rise', unit: 'dB', isNumber: true }, { head: 'gain fall', unit: 'dB', isNumber: true },
+      { head: 'mode' }, { head: 'moved by', isNumber: true }, { head: 'to', unit: frequencyUnit, isNumber: true }, { head: 'closed loop' }, { head: 'gain rise', unit: 'dB', isNumber: true }, { head: 'gain fall', unit: 'dB', isNumber: true },
       { head: 'lag', unit: 'deg', isNumber: true }, { head: 'lead', unit: 'deg', isNumber: true }, { head: 'least', unit: '|1 + L|', isNumber: true },
     ],
     rows: [
-      { isMarked: true, cells: [{ text: 'as it is', isHead: true }, { text: '' }, ...marginCells(nominal)] },
+      { isMarked: true, cells: [{ text: 'as it is', isHead: true }, { text: '' }, { text: '' }, ...marginCells(nominal)] },
       ...modes.flatMap(({ block, mode, frequency, damping, shifts }) => shifts.map((shift, index) => ({
         cells: [
-          { text: index === 0 ? mode : '', isHead: true, small: index === 0 ? `${block}, at ${formatFrequency(frequency, frequencyUnit)}, damping ${significantDigits(damping, 3)}` : '' },
-          { text: formatFrequency(frequency * (1 + shift.change)), small: `${shift.change > 0 ? '+' : '\u2212'}${Math.round(Math.abs(shift.change) * 100)} %` },
+          index === 1
+            ? { text: `${block}, ${formatFrequency(frequency, frequencyUnit)}, damping ${significantDigits(damping, 3)}`, tone: 'quiet' as const }
+            : { text: index === 0 ? mode : '', isHead: true },
+          { text: `${shift.change > 0 ? '+' : '\u2212'}${Math.round(Math.abs(shift.change) * 100)} %` },
+          { text: formatFrequency(frequency * (1 + shift.change)) },
           ...marginCells(shift),
         ],
       }))),

@@ -53,6 +53,18 @@ describe('how loop gains are built, in the report', () => {
     expect(texts(sectionOf(snapshot, 'blocks')?.blocks[1]?.table)).toEqual([['rigid, s^-2', '', '', '0.5', '1'], ['bending', '12.5', '0.004', '2', '-1']])
   })
 
+  it('prints second-order sections exactly as coded, and the file that matrices came from', () => {
+    const sections = { kind: 'sections' as const, gain: '1', sampleTime: 1e-3, rows: [['16089/16384', '-0.50', '0', '1.0', '-.1', '0']] }
+    const file = { kind: 'stateSpace' as const, uploadId: 3, set: 'C1', states: null, inputs: [], outputs: [] }
+    const snapshot = buildSnapshot({ blocks: [
+      { name: 'N', role: 'filter', unitIn: '', unitOut: '', notes: '', definitions: { C1: sections, C2: sections } },
+      { name: 'G', role: 'plant', unitIn: '', unitOut: '', notes: '', definitions: { C1: file }, files: { C1: { name: 'plant.csv', sha256: 'ab12' } } },
+    ] })
+    const [blocks, table] = sectionOf(snapshot, 'blocks')?.blocks ?? []
+    expect(texts(table?.table)).toEqual([['1', '16089/16384', '-0.50', '0', '1.0', '-.1', '0']])
+    expect(blocks?.table?.rows[1]?.cells[3]?.small).toBe('file plant.csv, SHA-256 ab12')
+  })
+
   it('tells the sampling, the accuracy and hidden states of a loop with its condition, and a contradiction first', () => {
     const analysis = withStructure({
       sampleTime: 20e-6, accuracy: { relative: 3e-13, basis: 'built from state space' },
@@ -85,9 +97,9 @@ describe('how loop gains are built, in the report', () => {
     })
     const table = sectionOf(snapshot, 'closed-loop-poles')?.blocks[2]?.table
     expect(texts(table)).toEqual([
-      ['as it is', '', 'stable', '16.3', 'none', '95.1', 'none', '0.846'],
-      ['bending', '80.00', 'stable', '16.3', 'none', '95.1', 'none', '0.846'],
-      ['', '110.0', 'unstable', '', '', '', '', '0.100'],
+      ['as it is', '', '', 'stable', '16.3', 'none', '95.1', 'none', '0.846'],
+      ['bending', '\u221220 %', '80.00', 'stable', '16.3', 'none', '95.1', 'none', '0.846'],
+      ['G, 100.0 rad/s, damping 0.0100', '+10 %', '110.0', 'unstable', '', '', '', '', '0.100'],
     ])
     expect(table?.notes).toEqual(['One mode of small gain is left out.'])
   })
