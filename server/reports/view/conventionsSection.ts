@@ -23,7 +23,7 @@ const method = [
 const methodOfBlocks = [
   { term: 'Blocks', words: 'A loop gain is an expression over blocks. Rational parts and dead times are combined in exact arithmetic on the numbers given; a pole that another block\u2019s zero cancels stays a mode of the loop and is named where it is not stable. One with a measured block is taken at the points measured.' },
   { term: 'Sampled controllers', words: 'Continuous blocks behind a hold are replaced, with all dead time among them, by their exact discrete equivalent at the sampling instants (\u00c5str\u00f6m and Wittenmark, Computer-Controlled Systems, 1997; Jury, Theory and Application of the z-Transform Method, 1964). Verdicts and margins are those of that loop gain. The continuous approximation, controller times hold, delay and plant, is printed beside it and judges nothing.' },
-  { term: 'State space', words: 'Matrices are reduced to Hessenberg form in extended precision and their polynomials factored as any other (Golub and Van Loan, Matrix Computations, 2013). The relative error of what was analysed is printed with each loop, as are states that cannot be reached or seen.' },
+  { term: 'State space', words: 'Matrices are balanced and reduced to Hessenberg form in double-double arithmetic, where poles and zeros are refined to more digits than the numbers given have (Golub and Van Loan, Matrix Computations, 2013; Hyman\u2019s method: Wilkinson, The Algebraic Eigenvalue Problem, 1965). How far what was analysed lies from the matrices given is printed with each loop, as are states that cannot be reached or seen.' },
 ]
 
 /** How to read the numbers, and how they were found. */
