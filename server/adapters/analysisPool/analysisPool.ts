@@ -21,9 +21,9 @@ export const analyseInPool = (value: unknown, longest = 60_000) => runInPool('an
 
 /**
  * Has one of the worker's functions answer in a thread of its own, so that requests are answered meanwhile. Never throws for an input: what takes longer than
- * `longest` (ms) is stopped with its thread, and what breaks off says so.
+ * `longest` (ms) is stopped with its thread, and what breaks off says so. What is `patient` lets all others go first that wait for a thread.
  */
-export function runInPool(task: string, value: unknown, longest = 60_000): Promise<unknown> {
+export function runInPool(task: string, value: unknown, longest = 60_000, { patient = false } = {}): Promise<unknown> {
   return gate.add(async () => {
     pool ??= new Piscina({ filename: workerFile(), minThreads: 1, maxThreads: threads, idleTimeout: 60_000 })
     const stop = new AbortController()
@@ -41,7 +41,7 @@ export function runInPool(task: string, value: unknown, longest = 60_000): Promi
     finally {
       clearTimeout(timer)
     }
-  })
+  }, { priority: patient ? -1 : 0 })
 }
 
 /** Ends the threads. */

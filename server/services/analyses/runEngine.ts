@@ -17,7 +17,7 @@ const hashOf = (task: keyof EngineAnswers, question: unknown) =>
 
 /**
  * What the engine answers to each question, in their order. Known answers come from the database; new ones are computed and, unless `keep` says
- * otherwise, kept; failures are not.
+ * otherwise, kept; failures are not. What is not kept is a draft's: it lets all others go first, since there may be a thousand of it at every pause in typing.
  */
 export function runEngine<Task extends keyof EngineAnswers>(task: Task, questions: readonly unknown[], context: OpenContext, options?: { keep?: boolean }): Promise<(EngineAnswers[Task] | AnalysisFailure)[]>
 /** With `known` nothing is computed: null stands for what is not known yet. */
@@ -32,7 +32,7 @@ export async function runEngine<Task extends keyof EngineAnswers>(task: Task, qu
     const kept = known.get(hash)
     if (kept) return kept as Answer
     if (onlyKnown) return null
-    const answer = await askOnce(hash, task, question) as Answer
+    const answer = await askOnce(hash, task, question, !keep) as Answer
     if (!('error' in answer)) fresh.set(hash, answer)
     return answer
   }))
@@ -48,10 +48,10 @@ async function knownAnswers(hashes: string[]): Promise<Map<string, EngineAnswer>
   return new Map(rows.map(row => [row.inputHash, row.result]))
 }
 
-function askOnce(hash: string, task: keyof EngineAnswers, question: unknown): Promise<unknown> {
+function askOnce(hash: string, task: keyof EngineAnswers, question: unknown, patient: boolean): Promise<unknown> {
   let answer = running.get(hash)
   if (!answer) {
-    answer = runInPool(task, question).finally(() => running.delete(hash))
+    answer = runInPool(task, question, undefined, { patient }).finally(() => running.delete(hash))
     running.set(hash, answer)
   }
   return answer

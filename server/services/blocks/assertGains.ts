@@ -45,12 +45,19 @@ const definitionsOf = ({ definition, byCondition }: DraftGains): [string, BlockD
 ]
 
 function assertNoCircle(draft: DraftGains, others: readonly Block[]): void {
+  // The same expression may stand in a thousand conditions.
+  const read = new Map<string, string[]>()
+  const namesIn = (expression: string): string[] => {
+    const names = read.get(expression) ?? [...new Set(namesInExpression(expression).map(({ name }) => name))]
+    read.set(expression, names)
+    return names
+  }
   // Wherever no block has a gain of its own, all conditions are alike: they stand for the one without an id.
   const places = new Set([null, ...[draft, ...others].flatMap(block => Object.keys(block.byCondition).map(Number))])
   for (const place of places) {
     const inEffect = (block: DraftGains) => (place === null ? undefined : block.byCondition[place]) ?? block.definition
     const definitions = new Map([...others, draft].map(block => [block.name, inEffect(block)]))
-    const circle = findCircle(draft.name, definitions)
+    const circle = findCircle(draft.name, definitions, namesIn)
     const own = definitions.get(draft.name)
     if (circle === null || own?.kind !== 'expression') continue
     const path = place !== null && draft.byCondition[place] ? `byCondition.${place}` : 'definition'

@@ -11,6 +11,7 @@ import type { OpenContext } from '../context'
 import { analyseSources } from '../sources/analyseSources'
 import { listSourcesOfRecord } from '../sources/listSourcesOfRecord'
 import { readSystem } from '../systems/readSystem'
+import { assertBlockNameFree } from './assertBlockNameFree'
 import { assertGains } from './assertGains'
 import { BlockGains } from './BlockGains'
 
@@ -25,11 +26,12 @@ export async function readBlockEffects(systemId: number, draft: BlockDraft, cont
   if (draft.blockId !== null && !stored) throw new AppError('notFound', 'There is no such block.')
   const drafted = draftedBlock(systemId, draft, stored)
   const others = blocks.filter(block => block.id !== draft.blockId)
-  if (stored === undefined && others.some(block => block.name === draft.name)) throw new AppError('conflict', `This system has another block with the name ${draft.name}.`, { path: 'name' })
+  if (stored === undefined) await assertBlockNameFree(systemId, draft.name)
   await assertGains(drafted, others, system)
   const after = [...others, drafted]
   const sources = await listSourcesOfRecord(loops.map(loop => loop.id), conditions.map(condition => condition.id))
-  const needing = sources.filter(source => [blocks, after].some(list => needs(source, drafted.name, new BlockGains(list, system))))
+  const [gainsBefore, gainsAfter] = [new BlockGains(blocks, system), new BlockGains(after, system)]
+  const needing = sources.filter(source => needs(source, drafted.name, gainsBefore) || needs(source, drafted.name, gainsAfter))
   const asStored = await analyseSources(needing, system, context, { blocks })
   const asDrafted = await analyseSources(needing, system, context, { blocks: after, keep: false })
   const found = new Map(needing.map((source, index) => [`${source.loopId} ${source.conditionId}`, effectOf(asStored[index], asDrafted[index], criteria)]))

@@ -170,6 +170,8 @@ describe('what a drafted block would do', () => {
   it('of a new block is nothing, since nobody can name it yet; its name must be free', async () => {
     expect(await readBlockEffects(system.id, await draftOf({ blockId: null, name: 'N', definition: typed('2') }), context)).toEqual([])
     await expect(readBlockEffects(system.id, await draftOf({ blockId: null }), context)).rejects.toMatchObject({ code: 'conflict', path: 'name' })
+    const [parameter] = await replaceParameters(system.id, [{ name: 'kN', unit: '', notes: '', values: {} }], context)
+    await expect(readBlockEffects(system.id, await draftOf({ blockId: null, name: parameter?.name ?? '', definition: typed('2') }), context)).rejects.toMatchObject({ code: 'conflict', path: 'name' })
   })
 
   it('counts as the stored name where the draft has another', async () => {

@@ -1,8 +1,8 @@
 import { mkdtemp, rm, writeFile } from 'node:fs/promises'
-import { tmpdir } from 'node:os'
+import { availableParallelism, tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { analyseInPool, closeAnalysisPool } from '#server/adapters/analysisPool/analysisPool'
+import { analyseInPool, closeAnalysisPool, runInPool } from '#server/adapters/analysisPool/analysisPool'
 
 /** A worker that misbehaves as it is told, in the place of the engine. */
 const unruly = `export default (value) => {
@@ -29,6 +29,15 @@ describe('the pool of analysis threads', () => {
     const [hung, next] = await Promise.all([analyseInPool('hang', 500), analyseInPool('after')])
     expect(hung).toEqual({ error: { message: 'The analysis took longer than 0.5 s and was stopped.', path: '' } })
     expect(next).toEqual({ answered: 'after' })
+  })
+
+  it('has what is patient wait for all others, also for those that come later', async () => {
+    const count = 20 * availableParallelism()
+    const ended: string[] = []
+    const patient = Array.from({ length: count }, (_, index) => runInPool('analysis', index, undefined, { patient: true }).then(() => ended.push('patient')))
+    await Promise.all([...patient, analyseInPool('urgent').then(() => ended.push('urgent'))])
+    expect(ended).toHaveLength(count + 1)
+    expect(ended.indexOf('urgent')).toBeLessThan(count - 1)
   })
 
   it.each(['throw', 'die'])('outlives a thread that should %s', async (fault) => {
