@@ -2,10 +2,13 @@ import type { FrequencyUnit } from '../types/analysis'
 import type { ClosedLoopPole } from '../types/structure'
 import { formatDelay } from './formatDelay'
 import { formatFrequency } from './formatFrequency'
-import { withoutMinusZero } from './withoutMinusZero'
+import { significantDigits } from './significantDigits'
 
 /** |z| below which a pole has settled after its sample, to the precision of the numbers. */
 const DEAD_BEAT = 1e-12
+
+/** Damping below which a pole is printed as lying on the boundary. */
+const NO_DAMPING = 1e-9
 
 export interface ClosedLoopPoleRow {
   /** '12.30 rad/s', or the bare number without a unit */
@@ -33,8 +36,9 @@ export function describeClosedLoopPole(pole: ClosedLoopPole, unit?: FrequencyUni
 function describeDamping(damping: number): string {
   const size = Math.abs(damping)
   if (size >= 1) return damping < 0 ? 'minus 1' : '1'
-  const figure = withoutMinusZero(size < 0.1 ? size.toFixed(4) : size.toFixed(3))
-  return damping < 0 && Number(figure) > 0 ? `minus ${figure}` : figure
+  // Three digits of a lightly damped mode too; what is left of rounding on the boundary is none.
+  const figure = size < NO_DAMPING ? '0' : significantDigits(size, 3)
+  return damping < 0 && figure !== '0' ? `minus ${figure}` : figure
 }
 
 function describeTimeConstant(timeConstant: number | null): string {

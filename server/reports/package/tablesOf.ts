@@ -105,7 +105,7 @@ export function tablesOf(snapshot: ReportSnapshot): PackagedFile[] {
 function furtherTables({ cells, system: { frequencyUnit: unit } }: ReportSnapshot, table: (name: string, head: string[], rows: CsvValue[][]) => PackagedFile): PackagedFile[] {
   const at = `at, ${unit}`
   return [
-    { name: 'closed-loop-poles', head: [`frequency, ${unit}`, 'damping', 'time constant, s', 'Re s, rad/s', 'Im s, rad/s', 'Re z', 'Im z', 'goes back to'], rows: cells.flatMap(poleRows) },
+    { name: 'closed-loop-poles', head: [`frequency, ${unit}`, 'damping', 'time constant, s', 'Re s, rad/s', 'Im s, rad/s', 'Re z', 'Im z', 'comes from'], rows: cells.flatMap(poleRows) },
     {
       name: 'mode-shifts', rows: cells.flatMap(shiftRows),
       head: ['block', 'mode', `frequency, ${unit}`, 'damping', 'moved by, %', 'closed loop', 'gain may rise, dB', 'gain may fall, dB', 'lag, deg', 'lead, deg', 'delay, s', 'least |1 + L|', at],

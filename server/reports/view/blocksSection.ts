@@ -13,6 +13,9 @@ const blocksOf = (input: LoopInput | null): Record<string, BlockGain> => (input 
 const isBuiltFrom = (input: LoopInput | null, name: string) => Object.hasOwn(blocksOf(input), name)
 const shortened = (text: string) => (text.length <= printedLength ? text : `${text.slice(0, printedLength)} \u2026 (whole in snapshot.json of the package)`)
 
+/** A unit of two words is not parted over lines. */
+const unbroken = (unit: string) => unit.replaceAll(' ', '\u00a0')
+
 /** As the engine was given it, where a loop uses it in that condition: it knows what stood in a file. */
 function gainIn(snapshot: ReportSnapshot, block: SnapshotBlock, conditionCode: string): string {
   const used = snapshot.cells.find(cell => cell.conditionCode === conditionCode && isBuiltFrom(cell.input, block.name))
@@ -48,13 +51,13 @@ function blocksTable(snapshot: ReportSnapshot, blocks: readonly SnapshotBlock[])
       const codes = (uses: (cell: SnapshotCell) => boolean) => snapshot.loops.filter(loop => snapshot.cells.some(cell => cell.loopCode === loop.code && uses(cell))).map(({ code }) => code)
       const ofRecord = codes(cell => isBuiltFrom(cell.input, block.name))
       const setAside = codes(cell => cell.otherSources?.some(other => isBuiltFrom(other.input, block.name)) ?? false).filter(code => !ofRecord.includes(code))
-      const units = block.unitIn === '' && block.unitOut === '' ? '' : `${block.unitOut || '1'} per ${block.unitIn || '1'}`
+      const units = block.unitIn === '' && block.unitOut === '' ? '' : `${unbroken(block.unitOut || '1')} per ${unbroken(block.unitIn || '1')}`
       return gainsOf(snapshot, block).map(({ conditions, words, file }, index) => ({
         cells: [
           { text: index === 0 ? block.name : '', isHead: true, small: index === 0 ? block.notes : '' },
           { text: index === 0 ? block.role : '' },
           { text: conditions.length === everywhere ? 'all' : conditions.join(', ') },
-          words === '' ? { text: 'no gain in this condition', tone: 'quiet' as const } : { text: words, small: file, isMono: true },
+          words === '' ? { text: 'no gain in this condition', tone: 'quiet' as const } : { text: words, small: file, isMono: block.definitions[conditions[0] ?? '']?.kind === 'expression' },
           { text: index === 0 ? units : '' },
           index === 0 ? { text: ofRecord.join(', ') || (setAside.length > 0 ? '' : 'none'), small: setAside.length > 0 ? `set aside: ${setAside.join(', ')}` : '' } : { text: '' },
         ],

@@ -16,7 +16,7 @@ function polesTable({ loop, condition }: PlacedCell, { poles, frequencyUnit }: C
   const left = poles.length - printedPoles
   return tableOf({
     caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: closed-loop poles`,
-    columns: [{ head: 'frequency', unit: frequencyUnit, isNumber: true }, { head: 'damping', isNumber: true }, { head: 'time constant', isNumber: true }, { head: 'goes back to', isWide: true }],
+    columns: [{ head: 'frequency', unit: frequencyUnit, isNumber: true }, { head: 'damping', isNumber: true }, { head: 'time constant', isNumber: true }, { head: 'comes from', isWide: true }],
     rows: poles.slice(0, printedPoles).map((pole) => {
       const { frequency, damping, timeConstant, mode } = describeClosedLoopPole(pole)
       const tone = pole.timeConstant === null || pole.timeConstant < 0 ? 'bad' as const : 'plain' as const
@@ -37,7 +37,7 @@ function withoutList(cells: readonly PlacedCell[]): string[] {
   return [...loopsOf].map(([reason, loops]) => `${listInWords([...loops])}: ${reason}`)
 }
 
-const polesWords = 'One of each conjugate pair is listed. \u2018Goes back to\u2019 names the open-loop pole it departs from as the gain rises from zero, where that is plain. Every condition is in tables/closed-loop-poles.csv of this revision\u2019s package.'
+const polesWords = 'One of each conjugate pair is listed. \u2018Comes from\u2019 names the open-loop pole it departs from as the gain rises from zero, where that is plain. Every condition is in tables/closed-loop-poles.csv of this revision\u2019s package.'
 const shiftWords = 'Each flexible mode of a plant, actuator or sensor moved by \u221220, \u221210, +10 and +20 % with its damping and gains kept and the notch filters left where they are. Full digits are in tables/mode-shifts.csv of this revision\u2019s package.'
 
 /** A title with its words, then a table a block, so that long ones may part over pages. */

@@ -8,43 +8,55 @@ import type { PlacedCell } from './cellsOf'
 import type { TableView } from './ReportView'
 import type { CellDraft } from './tableOf'
 import { tableOf } from './tableOf'
-import { withoutUnit } from './withoutUnit'
 
-const figure = (value: number | null | undefined, format: (value: number) => string): CellDraft => (value === null || value === undefined ? { text: 'none', tone: 'quiet' } : { text: withoutUnit(format(value)) })
+const asItIs = 'as it is'
 
-/** Closed loop and margins; a loop that is not stable has none. */
-function marginCells({ verdict, summary, vectorMargin, failure }: MarginsThere): CellDraft[] {
-  const blank: CellDraft[] = Array.from({ length: 4 }, () => ({ text: '' }))
-  if (failure !== null) return [{ text: 'not analysed', small: failure, tone: 'open' }, ...blank, { text: '' }]
-  const least: CellDraft = { text: vectorMargin === null ? '' : formatDistance(vectorMargin.distance) }
-  if (summary === null) return [{ text: verdict, tone: 'bad' }, ...blank, least]
-  return [
-    { text: verdict },
-    figure(summary.gainIncrease, formatDecibels), figure(summary.gainDecrease, formatDecibels), figure(summary.phaseLag, formatDegrees), figure(summary.phaseLead, formatDegrees),
-    least,
-  ]
+/** The margins that exist, one a line. */
+function marginLines({ summary }: MarginsThere): string {
+  if (summary === null) return ''
+  const { gainIncrease, gainDecrease, phaseLag, phaseLead } = summary
+  const line = (word: string, value: number | null, format: (value: number) => string) => (value === null ? [] : [`${word} ${format(value)}`])
+  return [...line('rise', gainIncrease, formatDecibels), ...line('fall', gainDecrease, formatDecibels), ...line('lag', phaseLag, formatDegrees), ...line('lead', phaseLead, formatDegrees)].join('\n')
 }
 
-/** The margins of one loop with each flexible mode moved, the loop as it is first. */
+/** The least return difference with the margins beneath; a loop that is not stable has none, which is told first. */
+function marginsCell(there: MarginsThere): CellDraft {
+  if (there.failure !== null) return { text: 'not analysed', small: there.failure, tone: 'open' }
+  const least = there.vectorMargin === null ? '' : formatDistance(there.vectorMargin.distance)
+  if (there.summary === null) return { text: there.verdict, small: least, tone: 'bad' }
+  return { text: least, small: marginLines(there) }
+}
+
+/** A mode that changes no printed figure is told so in words: what moves the margins stands out. */
+function shiftedCell(shift: MarginsThere, nominal: CellDraft): CellDraft {
+  const cell = marginsCell(shift)
+  return shift.failure === null && cell.text === nominal.text && cell.small === nominal.small ? { text: asItIs, tone: 'quiet' } : cell
+}
+
+const changeWords = (change: number) => `${change > 0 ? '+' : '\u2212'}${Math.round(Math.abs(change) * 100)} %`
+
+/** The margins of one loop with each flexible mode moved: a row a mode, the loop as it is first. */
 export function modeShiftTable({ loop, condition }: PlacedCell, { modes, nominal, frequencyUnit, notes }: ModeShiftTable): TableView {
+  const changes = [...new Set(modes.flatMap(({ shifts }) => shifts.map(({ change }) => change)))].sort((a, b) => a - b)
+  const asModelled = marginsCell(nominal)
   return tableOf({
-    caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: margins with each flexible mode moved`,
+    caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: least |1 + L| and margins with each flexible mode moved`,
     columns: [
-      { head: 'mode' }, { head: 'moved by', isNumber: true }, { head: 'to', unit: frequencyUnit, isNumber: true }, { head: 'closed loop' }, { head: 'gain rise', unit: 'dB', isNumber: true }, { head: 'gain fall', unit: 'dB', isNumber: true },
-      { head: 'lag', unit: 'deg', isNumber: true }, { head: 'lead', unit: 'deg', isNumber: true }, { head: 'least', unit: '|1 + L|', isNumber: true },
+      { head: 'mode' }, { head: 'frequency', unit: frequencyUnit, isNumber: true }, { head: asItIs, isNumber: true }, ...changes.map(change => ({ head: changeWords(change), isNumber: true })),
     ],
     rows: [
-      { isMarked: true, cells: [{ text: 'as it is', isHead: true }, { text: '' }, { text: '' }, ...marginCells(nominal)] },
-      ...modes.flatMap(({ block, mode, frequency, damping, shifts }) => shifts.map((shift, index) => ({
+      { isMarked: true, cells: [{ text: 'none moved', isHead: true }, { text: '' }, asModelled, ...changes.map(() => ({ text: '' }))] },
+      ...modes.map(({ block, mode, frequency, damping, shifts }) => ({
         cells: [
-          index === 1
-            ? { text: `${block}, ${formatFrequency(frequency, frequencyUnit)}, damping ${significantDigits(damping, 3)}`, tone: 'quiet' as const }
-            : { text: index === 0 ? mode : '', isHead: true },
-          { text: `${shift.change > 0 ? '+' : '\u2212'}${Math.round(Math.abs(shift.change) * 100)} %` },
-          { text: formatFrequency(frequency * (1 + shift.change)) },
-          ...marginCells(shift),
+          { text: mode, isHead: true, small: `of ${block}, damping ${significantDigits(damping, 3)}` },
+          { text: formatFrequency(frequency) },
+          { text: '' },
+          ...changes.map((change): CellDraft => {
+            const shift = shifts.find(shift => shift.change === change)
+            return shift === undefined ? { text: '' } : shiftedCell(shift, asModelled)
+          }),
         ],
-      }))),
+      })),
     ],
     notes,
     kind: 'shifts',

@@ -37,7 +37,7 @@ describe('how loop gains are built, in the report', () => {
       ],
     })
     expect(texts(sectionOf(snapshot, 'blocks')?.blocks[0]?.table)).toEqual([
-      ['C', 'controller', 'C1', '2', 'N m per rad', 'SL-R'],
+      ['C', 'controller', 'C1', '2', 'N\u00a0m per rad', 'SL-R'],
       ['', '', 'C2', '3', '', ''],
       ['G', 'plant', 'C1', '2 states', '', 'SL-R'],
       ['', '', 'C2', 'no gain in this condition', '', ''],
@@ -87,20 +87,24 @@ describe('how loop gains are built, in the report', () => {
     expect(tablesOf({ ...snapshot, cells }).find(({ name }) => name === 'tables/closed-loop-poles.csv')?.data.toString().split('\r\n')[2]).toBe('SL-R,C1,3.162,-0.316,-1,1,3,,,bending (G)')
   })
 
-  it('prints each mode moved, the loop as it is first, and no margin of one that becomes unstable', () => {
+  it('prints each mode moved in a row, what moves no printed margin as it is, and no margin of a loop that becomes unstable', () => {
     const there = { verdict: 'stable' as const, summary: buildAnalysis().summary, vectorMargin: { distance: 0.846, frequency: 158 }, failure: null }
     const snapshot = withFirst({
       modeShifts: {
         frequencyUnit: 'rad/s', nominal: there, reason: null, notes: ['One mode of small gain is left out.'],
-        modes: [{ block: 'G', mode: 'bending', frequency: 100, damping: 0.01, shifts: [{ change: -0.2, ...there }, { change: 0.1, verdict: 'unstable', summary: null, vectorMargin: { distance: 0.1, frequency: 110 }, failure: null }] }],
+        modes: [{
+          block: 'G', mode: 'bending', frequency: 100, damping: 0.01,
+          shifts: [{ change: -0.2, ...there }, { change: -0.1, ...there, vectorMargin: { distance: 0.7, frequency: 158 } }, { change: 0.1, verdict: 'unstable', summary: null, vectorMargin: { distance: 0.1, frequency: 110 }, failure: null }],
+        }],
       },
     })
     const table = sectionOf(snapshot, 'closed-loop-poles')?.blocks[2]?.table
+    expect(table?.columns.map(({ head }) => head)).toEqual(['mode', 'frequency', 'as it is', '\u221220 %', '\u221210 %', '+10 %'])
     expect(texts(table)).toEqual([
-      ['as it is', '', '', 'stable', '16.3', 'none', '95.1', 'none', '0.846'],
-      ['bending', '\u221220 %', '80.00', 'stable', '16.3', 'none', '95.1', 'none', '0.846'],
-      ['G, 100.0 rad/s, damping 0.0100', '+10 %', '110.0', 'unstable', '', '', '', '', '0.100'],
+      ['none moved', '', '0.846', '', '', ''],
+      ['bending', '100.0', '', 'as it is', '0.700', 'unstable'],
     ])
+    expect(table?.rows[1]?.cells.map(({ small }) => small)).toEqual(['of G, damping 0.0100', '', '', '', 'rise 16.3 dB\nlag 95.1 deg', '0.100'])
     expect(table?.notes).toEqual(['One mode of small gain is left out.'])
   })
 
