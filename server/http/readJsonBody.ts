@@ -1,3 +1,4 @@
+import { isUtf8 } from 'node:buffer'
 import type { H3Event } from 'h3'
 import { AppError } from '#shared/errors/AppError'
 
@@ -15,11 +16,14 @@ export async function readJsonBody(event: H3Event, limit: number): Promise<unkno
   }
 }
 
-/** The JSON body of a request as its text, not yet read. Throws 'too large' over the limit (bytes) and 'invalid input' where it does not say that it is JSON. */
+/** The JSON body of a request as its text, not yet read. Throws 'too large' over the limit (bytes) and 'invalid input' where it does not say that it is JSON or is not in UTF-8. */
 export async function readJsonText(event: H3Event, limit: number): Promise<string> {
   const type = event.node.req.headers['content-type'] ?? ''
   if (!/^application\/json(?:;|$)/i.test(type)) throw new AppError('invalidInput', 'The request must carry JSON (content-type application/json).')
-  return (await readBytes(event, limit)).toString('utf8')
+  const bytes = await readBytes(event, limit)
+  // Decoded as it comes, a letter of another encoding would be stored as a question mark.
+  if (!isUtf8(bytes)) throw new AppError('invalidInput', 'The request is not in UTF-8, as JSON is: save the file in that encoding.')
+  return bytes.toString('utf8')
 }
 
 /** The bytes of a request's body; throws 'too large' as soon as they pass the limit. */

@@ -71,12 +71,15 @@ export const blockDefinitionSchema = z.discriminatedUnion('kind', [
   }),
 ])
 
-const unitField = lineText.max(limits.unit, `At most ${limits.unit} characters.`)
+/** Unit of a signal or parameter, as it is printed. */
+export const unitField = lineText.max(limits.unit, `At most ${limits.unit} characters.`)
 const byConditionField = z.record(z.string().regex(/^[1-9]\d{0,15}$/, 'Must be the id of a condition.'), blockDefinitionSchema)
+
+export const roleField = z.enum(['controller', 'filter', 'actuator', 'plant', 'sensor', 'delay', 'hold', 'other'], 'Must be controller, filter, actuator, plant, sensor, delay, hold or other.')
 
 const fields = {
   name: parameterNameField,
-  role: z.enum(['controller', 'filter', 'actuator', 'plant', 'sensor', 'delay', 'hold', 'other'], 'Must be controller, filter, actuator, plant, sensor, delay, hold or other.'),
+  role: roleField,
   unitIn: unitField,
   unitOut: unitField,
   notes: notesField,

@@ -1,8 +1,9 @@
 import { z } from 'zod'
 import { manifestFormat, manifestVersion } from '../types/manifest'
+import { roleField, unitField } from './block'
 import { newConditionSchema } from './condition'
 import { criteriaSchema } from './criterion'
-import { codeField, finiteNumber, lineField, lineText, nameField, notesField } from './fields'
+import { codeField, finiteNumber, lineField, nameField, notesField } from './fields'
 import { limits } from './limits'
 import { newLoopSchema } from './loop'
 import { parameterNameField } from './parameter'
@@ -20,16 +21,16 @@ const uploadNameFields = {
 
 const parameterSchema = z.strictObject({
   name: parameterNameField,
-  unit: lineText.max(limits.unit, `At most ${limits.unit} characters.`).default(''),
+  unit: unitField.default(''),
   notes: notesField.default(''),
   values: byCode(finiteNumber),
 })
 
 const blockSchema = z.strictObject({
   name: parameterNameField,
-  role: z.enum(['controller', 'filter', 'actuator', 'plant', 'sensor', 'delay', 'hold', 'other']),
-  unitIn: lineText.max(limits.unit, `At most ${limits.unit} characters.`).default(''),
-  unitOut: lineText.max(limits.unit, `At most ${limits.unit} characters.`).default(''),
+  role: roleField,
+  unitIn: unitField.default(''),
+  unitOut: unitField.default(''),
   notes: notesField.default(''),
   definition: definitionField.nullable(),
   byCondition: byCode(definitionField).default({}),
@@ -50,7 +51,8 @@ const sourceSchema = z.strictObject({
 
 const loopSchema = newLoopSchema.omit({ loopStates: true }).extend({
   loopStates: z.array(loopStateSchema).max(limits.rows, `At most ${limits.rows} loops.`).default([]),
-  sources: z.array(sourceSchema).max(limits.rows).default([]),
+  // How many a manifest may hold together is counted by findManifestFaults: a loop may have several in each of its conditions.
+  sources: z.array(sourceSchema).default([]),
 })
 
 const uploadSchema = z.union([
@@ -65,7 +67,7 @@ export const manifestSchema = z.strictObject({
   system: newSystemSchema,
   conditions: z.array(newConditionSchema).max(limits.rows, `At most ${limits.rows} operating conditions.`).default([]),
   parameters: z.array(parameterSchema).max(limits.parameters, `At most ${limits.parameters} parameters.`).default([]),
-  blocks: z.array(blockSchema).max(limits.rows, `At most ${limits.rows} blocks.`).default([]),
+  blocks: z.array(blockSchema).max(limits.blocks, `At most ${limits.blocks} blocks.`).default([]),
   loops: z.array(loopSchema).max(limits.rows, `At most ${limits.rows} loops.`).default([]),
   criteria: criteriaSchema.shape.criteria.default([]),
   uploads: z.array(uploadSchema).max(10 * limits.rows).default([]),

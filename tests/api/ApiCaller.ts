@@ -3,6 +3,8 @@ import { testPassword } from '../factories/buildPerson'
 export interface ApiReply<Body = unknown> {
   status: number
   headers: Headers
+  /** the body as it came */
+  text: string
   /** parsed where the reply is JSON, else the text; of the type the test says the route answers */
   body: Body
 }
@@ -37,7 +39,7 @@ export class ApiCaller {
         ...(body !== undefined && !isForm && { 'content-type': 'application/json' }),
         ...headers,
       },
-      body: body === undefined ? undefined : isForm || typeof body === 'string' ? body : JSON.stringify(body),
+      body: body === undefined ? undefined : isForm || typeof body === 'string' || body instanceof Uint8Array ? body as BodyInit : JSON.stringify(body),
     })
     for (const line of response.headers.getSetCookie()) {
       const [, name, value] = /^([^=]+)=([^;]*)/.exec(line) ?? []
@@ -47,7 +49,7 @@ export class ApiCaller {
     }
     const text = await response.text()
     const isJson = (response.headers.get('content-type') ?? '').startsWith('application/json')
-    return { status: response.status, headers: response.headers, body: (isJson && text !== '' ? JSON.parse(text) : text) as Body }
+    return { status: response.status, headers: response.headers, text, body: (isJson && text !== '' ? JSON.parse(text) : text) as Body }
   }
 
   get = <Body = unknown>(path: string, headers?: Record<string, string>) => this.call<Body>('GET', path, undefined, headers)

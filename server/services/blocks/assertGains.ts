@@ -44,7 +44,8 @@ const definitionsOf = ({ definition, byCondition }: DraftGains): [string, BlockD
   ...Object.entries(byCondition).map(([id, own]): [string, BlockDefinition] => [`byCondition.${id}`, own]),
 ]
 
-function assertNoCircle(draft: DraftGains, others: readonly Block[]): void {
+/** Refuses a block that comes to need itself, in all conditions or in one, at the expression in which it does. */
+export function assertNoCircle(draft: DraftGains, others: readonly Block[]): void {
   // The same expression may stand in a thousand conditions.
   const read = new Map<string, string[]>()
   const namesIn = (expression: string): string[] => {

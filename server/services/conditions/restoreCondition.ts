@@ -4,11 +4,16 @@ import { recordAudit } from '../../audit/recordAudit'
 import { writeTransaction } from '../../database/database'
 import { ConditionRow } from '../../database/models/ConditionRow'
 import { presentCondition } from '../../presenters/presentCondition'
+import { assertNoCircle } from '../blocks/assertGains'
+import { listBlocks } from '../blocks/listBlocks'
 import { assertCodeFree } from '../assertCodeFree'
 import { assertRoom } from '../assertRoom'
 import type { ServiceContext } from '../context'
 
-/** Brings a deleted operating condition back to its place. Throws 'conflict' where its code has been taken since. */
+/**
+ * Brings a deleted operating condition back to its place. Throws 'conflict' where its code has been taken since, 'invalid input' where blocks that were changed since
+ * would name one another in a circle by their gains there.
+ */
 export function restoreCondition(conditionId: number, context: ServiceContext): Promise<OperatingCondition> {
   return writeTransaction(async () => {
     const condition = await ConditionRow.unscoped().findByPk(conditionId)
@@ -17,6 +22,10 @@ export function restoreCondition(conditionId: number, context: ServiceContext): 
       await assertCodeFree(ConditionRow, condition.systemId, condition.code)
       await assertRoom(ConditionRow, condition.systemId)
       await condition.update({ deletedAt: null })
+      const blocks = await listBlocks(condition.systemId)
+      for (const block of blocks) {
+        if (block.byCondition[conditionId]) assertNoCircle(block, blocks.filter(other => other !== block))
+      }
       await recordAudit(context, 'condition restored', { systemId: condition.systemId, subjectId: conditionId })
     }
     return presentCondition(condition)

@@ -6,6 +6,7 @@ import { rehearse } from '../../database/rehearse'
 import { presentSystem } from '../../presenters/presentSystem'
 import type { ServiceContext } from '../context'
 import { assertManifestBuildable, assertManifestDefinitions } from './assertManifestDefinitions'
+import { findReadingFault } from './findReadingFault'
 import { parseManifestText } from './parseManifestText'
 import { readManifestUploads } from './readManifestUploads'
 import { refuseManifest } from './refuseManifest'
@@ -20,6 +21,8 @@ export async function importManifest(text: string, context: ServiceContext): Pro
   if (faults !== null) throw refuseManifest(faults)
   const files = readManifestUploads(manifest.uploads)
   if (files.faults.length > 0) throw refuseManifest(files.faults)
+  const unreadable = findReadingFault(manifest, files.uploads)
+  if (unreadable !== null) throw refuseManifest([unreadable])
   // The engine is asked with no transaction open: the others go on writing while it takes its time.
   await assertManifestBuildable(await rehearse(async () => assertManifestDefinitions(await storeManifest(manifest, files.uploads, context))))
   return writeTransaction(async () => {

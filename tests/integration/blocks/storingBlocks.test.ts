@@ -12,6 +12,7 @@ import { restoreBlock } from '#server/services/blocks/restoreBlock'
 import { updateBlock } from '#server/services/blocks/updateBlock'
 import { copyCondition } from '#server/services/conditions/copyCondition'
 import { deleteCondition } from '#server/services/conditions/deleteCondition'
+import { listConditions } from '#server/services/conditions/listConditions'
 import { restoreCondition } from '#server/services/conditions/restoreCondition'
 import type { ServiceContext } from '#server/services/context'
 import { updateLoop } from '#server/services/loops/updateLoop'
@@ -141,6 +142,17 @@ describe('a block', () => {
     expect((await updateBlock(g.id, { version: 1, byCondition: { [c2.id]: typed('3') } }, context)).byCondition).toEqual({ [c2.id]: typed('3') })
     await restoreCondition(c1.id, context)
     expect((await listBlocks(system.id))[0]?.byCondition).toEqual({ [c1.id]: typed('1'), [c2.id]: typed('3') })
+  })
+
+  it('is not brought into a circle by a condition that is restored after others were changed', async () => {
+    const g = await buildBlock(system.id, context, 'G', typed('1'))
+    await buildBlock(system.id, context, 'H', typed('2'), { byCondition: { [c1.id]: typed('G/s') } })
+    await deleteCondition(c1.id, context)
+    const changed = await updateBlock(g.id, { version: 1, definition: typed('1/(1+H)') }, context)
+    await expect(restoreCondition(c1.id, context)).rejects.toMatchObject({ code: 'invalidInput', message: expect.stringContaining('in a circle: H, G, H') as string })
+    expect((await listConditions(system.id)).map(({ code }) => code)).toEqual(['C2'])
+    await updateBlock(g.id, { version: changed.version, definition: typed('3') }, context)
+    expect(await restoreCondition(c1.id, context)).toMatchObject({ code: 'C1' })
   })
 
   it('tells which loops and blocks depend on it, directly and by others', async () => {

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { Manifest, ManifestLoop, ManifestSource } from '#shared/types/manifest'
 import { AuditEvent } from '#server/database/models/AuditEvent'
@@ -73,6 +74,29 @@ describe('a manifest', () => {
     expect(await again(text)).toBe(text)
   })
 
+  it('keeps a file whose long name was cut between two words or within a character', async () => {
+    const system = await buildSystem(context)
+    const loop = await buildLoop(system.id, context)
+    const condition = await buildCondition(system.id, context)
+    const mapping = { frequencyColumn: 0, frequencyUnit: 'Hz', form: 'real and imaginary', firstColumn: 1, secondColumn: 2, coherenceColumn: null, quantity: 'loopGain' } as const
+    for (const name of [`${'a'.repeat(199)} sweep.csv`, `${'a'.repeat(199)}\u{1F6A2}.csv`]) {
+      const upload = await storeUpload(system.id, { name, bytes: Buffer.from('1,-2,-2\n2,-1,-0.5\n3,-0.1,0.1\n') }, context)
+      await createSources(loop.id, { conditionIds: [condition.id], name: 'sweep', ofRecord: false, setAsideReason: '', definition: { kind: 'measured', uploadId: upload.id, mapping } }, context)
+    }
+    const { text } = await exportManifest(system.id)
+    expect(await again(text)).toBe(text)
+  })
+
+  it('keeps more sources of a loop than a system has conditions', async () => {
+    const text = await changedExample((manifest) => {
+      const design = sourceOf(manifest)
+      firstOf(manifest.loops).sources.push(...Array.from({ length: 1001 }, (_, index) => ({ ...design, conditions: ['FULL'], name: `variant ${index}`, definition: { kind: 'coefficients' as const, numerator: [index], denominator: [1, 1] } })))
+    })
+    const written = (await exportManifest((await importManifest(text, context)).id)).text
+    expect((JSON.parse(written) as Manifest).loops[0]?.sources).toHaveLength(1003)
+    expect(await again(written)).toBe(written)
+  })
+
   it('leaves out what is deleted, and what only points at it', async () => {
     const system = await buildSystem(context)
     const [stays, goes] = [await buildLoop(system.id, context, { code: 'STAYS' }), await buildLoop(system.id, context, { code: 'GOES' })]
@@ -129,6 +153,19 @@ describe('a manifest with a fault', () => {
     ['an upload that is not there', manifest => manifest.uploads = [], 'loops[0].sources[1].definition.upload', /no sweep1\.csv/],
     ['an id in place of an upload', manifest => Object.assign(sourceOf(manifest, 1).definition, { uploadId: 1 }), 'loops[0].sources[1].definition.uploadId', /Ids mean nothing/],
     ['no upload where one is needed', manifest => Object.assign(sourceOf(manifest, 1).definition, { upload: undefined }), 'loops[0].sources[1].definition.upload', /missing/],
+    ['more blocks than a system holds', manifest => manifest.blocks = Array.from({ length: 501 }, (_, index) => ({ ...firstOf(manifest.blocks), name: `P${index}` })), 'blocks', /At most 500 blocks/],
+    ['files that are read in too many ways', (manifest) => {
+      const text = `${'1,2,3\n'.repeat(1_000_000)}`
+      const upload = { fileName: 'sweep1.csv', sha256: createHash('sha256').update(text).digest('hex') }
+      manifest.uploads = [{ ...upload, text }]
+      const swept = sourceOf(manifest, 1)
+      firstOf(manifest.loops).sources.push(...Array.from({ length: 100 }, (_, index) => {
+        const definition = { ...swept.definition, upload } as typeof swept.definition
+        Object.assign(definition, { mapping: { ...(swept.definition as { mapping: object }).mapping, firstColumn: index } })
+        return { ...swept, ofRecord: false, definition }
+      }))
+      Object.assign(swept.definition, { upload })
+    }, 'uploads', /100 ways, 600 MB together/],
     ['an upload changed on the way', manifest => Object.assign(firstOf(manifest.uploads), { text: 'f\n' }), 'uploads[0].sha256', /sweep1\.csv has the SHA-256/],
     ['an upload that nothing reads', manifest => manifest.uploads.push({ ...firstOf(manifest.uploads), fileName: 'other.csv' }), 'uploads[1]', /leave it out/],
     ['base 64 that is none', manifest => manifest.uploads = [{ fileName: 'sweep1.csv', sha256: firstOf(manifest.uploads).sha256, base64: 'a b' }], 'uploads[0].base64', /not base 64/],
