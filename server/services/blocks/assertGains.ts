@@ -7,6 +7,7 @@ import type { Block, BlockDefinition } from '#shared/types/block'
 import type { System } from '#shared/types/system'
 import { ConditionRow } from '../../database/models/ConditionRow'
 import { ParameterRow } from '../../database/models/ParameterRow'
+import { assertProper } from './assertProper'
 import { resolveBlockGain } from './resolveBlockGain'
 import { findCircle } from './findCircle'
 
@@ -14,7 +15,7 @@ export type DraftGains = Pick<Block, 'name' | 'definition' | 'byCondition'>
 
 /**
  * Refuses a block of which a gain cannot be read by itself: a wrong number in a file or section, an expression that does not parse or names what nobody knows, a
- * block that needs itself. Told at `definition.<path>` or `byCondition.<conditionId>.<path>`, with the place in an expression as `details.position`.
+ * block that needs itself or has more zeros than poles. Told at `definition.<path>` or `byCondition.<conditionId>.<path>`, with the place in an expression as `details.position`.
  *
  * @param others the other blocks of the system
  */
@@ -37,6 +38,7 @@ export async function assertGains(draft: DraftGains, others: readonly Block[], s
     })
   }
   assertNoCircle(draft, others)
+  await assertProper(draft, others, system)
 }
 
 const definitionsOf = ({ definition, byCondition }: DraftGains): [string, BlockDefinition][] => [

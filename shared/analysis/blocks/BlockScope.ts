@@ -77,7 +77,7 @@ export class BlockScope<V> {
     const tree = parseExpression(gain.expression, names)
     const part = this.arithmetic.brackets(evaluateTree(tree, this.scope))
     for (const [value, sampled] of [[part?.sampled, true], [part?.continuous, false]] as const) {
-      if (value && (this.leaves.algebra.excess(value) ?? 0) > 0) throw new AnalysisInputError(improper(sampled), 'expression', tree.position)
+      if (value && (this.leaves.algebra.excess(value) ?? 0) > 0) throw new AnalysisInputError(improper(sampled), 'expression', tree.kind === 'divide' ? tree.left.position : tree.position)
     }
     return part && this.leaves.expression(name, part)
   }

@@ -57,6 +57,8 @@ describe('a block that cannot be read by itself', () => {
     ['itself', typed('1/(1+G)'), 'definition.expression', 'names itself'],
     ['a section whose cell is no number', { kind: 'sections', rows: [['1', '0', '0', '1', 'x', '0']], gain: '1', sampleTime: 0.001 }, 'definition.rows[0][4]', 'no number'],
     ['a file that is not there', matricesOf(4711), 'definition.uploadId', 'no longer there'],
+    ['more zeros than poles in an expression', typed('1/(s+1) + 0.1*s'), 'definition.expression', 'Improper'],
+    ['more zeros than poles in coefficients', { kind: 'coefficients', numerator: [1, 0, 0], denominator: [1, 1] }, 'definition.numerator', 'Improper'],
     ['poles without their conjugates', { kind: 'zerosPoles', zeros: [], poles: [[-1, 2]], gain: 1 }, 'definition.poles[0]', 'conjugate'],
   ] as const)('is refused with %s at its place, and nothing is stored', async (_, definition, path, message) => {
     await expect(buildBlock(system.id, context, 'G', definition as never)).rejects.toMatchObject({ code: 'invalidInput', path, message: expect.stringContaining(message) as string })
@@ -79,6 +81,15 @@ describe('a block that cannot be read by itself', () => {
   it('is refused with a gain in a condition of another system', async () => {
     const foreign = await buildCondition((await buildSystem(context)).id, context)
     await expect(buildBlock(system.id, context, 'G', null, { byCondition: { [foreign.id]: typed('1') } })).rejects.toMatchObject({ code: 'invalidInput', path: `byCondition.${foreign.id}` })
+  })
+
+  it('is refused for the one condition in which it has more zeros than poles, by another block too', async () => {
+    await buildBlock(system.id, context, 'F', typed('1/(s+1)'), { byCondition: { [c2.id]: typed('1') } })
+    const c = await buildBlock(system.id, context, 'C', typed('2'))
+    await expect(updateBlock(c.id, { version: 1, definition: typed('(1+s)*F') }, context)).rejects.toMatchObject({ path: 'definition.expression', message: expect.stringContaining('Improper') as string })
+    await expect(updateBlock(c.id, { version: 1, byCondition: { [c1.id]: typed('s') } }, context)).rejects.toMatchObject({ path: `byCondition.${c1.id}.expression` })
+    await updateBlock(c.id, { version: 1, byCondition: { [c1.id]: typed('(1+s)*F') } }, context)
+    expect((await listBlocks(system.id)).map(block => block.version)).toEqual([1, 2])
   })
 
   it('is refused where a change closes a circle, also one in a single condition', async () => {

@@ -79,6 +79,7 @@ describe('bad loops over blocks', () => {
 
   it('an improper block, of each kind', () => {
     expect(refused('G*C', { G, C: gain('s') })).toMatchObject({ path: 'blocks.C.expression', message: expect.stringContaining('Improper') })
+    expect(refused('G*C', { G, C: gain('(1 + s^3)/(s^2 + 1)') })).toMatchObject({ path: 'blocks.C.expression', position: 1 })
     expect(refused('G*C', { G, C: { kind: 'coefficients', numerator: [1, 0, 0], denominator: [1, 2] } }).path).toBe('blocks.C.numerator')
     expect(refused('G*C', { G, C: { kind: 'zerosPoles', zeros: [[-1, 0]], poles: [], gain: 1 } }).path).toBe('blocks.C.zeros')
     expect(refused('C', { C: gain('z', 0.1) }).message).toContain('future samples')
