@@ -10,10 +10,17 @@ export function useBlockEffects(systemId: number, draft: MaybeRefOrGetter<BlockD
   // By its text: the draft is put together anew at every key.
   const text = computed(() => JSON.stringify(toValue(draft)))
   const { answer, failure, pending, ask } = useLatest(async (question: string) => ({ question, effects: await blocksClient.effects(systemId, JSON.parse(question) as BlockDraft) }))
+  /** the draft last asked about: what was refused of it is not said of another */
+  const asked = ref('')
 
   watch(text, (question) => {
     clearTimeout(timer)
-    if (question !== 'null') timer = setTimeout(() => void ask(question), pause)
+    if (question !== 'null') {
+      timer = setTimeout(() => {
+        asked.value = question
+        void ask(question)
+      }, pause)
+    }
   }, { immediate: import.meta.client })
   onScopeDispose(() => clearTimeout(timer))
 
@@ -21,7 +28,9 @@ export function useBlockEffects(systemId: number, draft: MaybeRefOrGetter<BlockD
     effects: computed(() => answer.value?.effects ?? null),
     /** they are those of an earlier draft */
     isOld: computed(() => answer.value?.question !== text.value),
-    refusal: computed(() => failure.value === null ? null : ApiError.from(failure.value)),
+    refusal: computed(() => failure.value === null || asked.value !== text.value ? null : ApiError.from(failure.value)),
+    /** there is a draft that can be asked about */
+    isAsked: computed(() => text.value !== 'null'),
     pending,
   }
 }

@@ -1,4 +1,4 @@
-import type { BlockDefinition } from '#shared/types/block'
+import type { Block, BlockDefinition } from '#shared/types/block'
 import { ApiError } from '~/services/ApiError'
 import { blocksClient } from '~/services/blocksClient'
 import { systemsClient } from '~/services/systemsClient'
@@ -49,9 +49,14 @@ export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
   useUnsavedChanges(unsaved, () => draft.discard())
 
   function asStored(): Kept {
-    if (stored.value !== null) return { version: stored.value.version, typed: typedBlock(stored.value, unit.value), at: 'every' }
+    if (stored.value !== null) return { version: stored.value.version, typed: typedBlock(stored.value, unit.value), at: firstGainOf(stored.value) }
     const from = detail.value?.blocks.find(block => block.id === fromId)
-    return { version: null, typed: from === undefined ? newBlock(unit.value) : { ...typedBlock(from, unit.value), name: freeName(from.name) }, at: 'every' }
+    return { version: null, typed: from === undefined ? newBlock(unit.value) : { ...typedBlock(from, unit.value), name: freeName(from.name) }, at: from === undefined ? 'every' : firstGainOf(from) }
+  }
+  /** Where a block has no gain in every condition, the first that has one is looked at. */
+  function firstGainOf({ definition, byCondition }: Block): string {
+    const own = definition !== null ? undefined : conditions.value.find(({ id }) => byCondition[id] !== undefined)
+    return own === undefined ? 'every' : String(own.id)
   }
   /** C becomes C_2 */
   function freeName(name: string): string {
@@ -147,7 +152,7 @@ export function useBlockForm({ systemId, blockId, fromId }: BlockPlace) {
     return refused && faults.length === 0 ? [{ message: refused.message, position }] : faults
   })
   /** Problems that stand at no field: of other blocks, of the matrices. */
-  const otherProblems = computed(() => (live.answer.value?.problems ?? []).filter(({ path }) => path.startsWith('blocks.') || path.startsWith('stateSpace')).map(({ message }) => message))
+  const otherProblems = computed(() => (live.answer.value?.problems ?? []).filter(({ path }) => path.startsWith('blocks.') || path.startsWith('stateSpace')).map(({ message }) => message).filter(message => !faults.value.some(fault => fault.message === message)))
   // What was refused is no longer said of what is typed since.
   watch(() => JSON.stringify(typed.value), () => {
     if (error.value?.path !== undefined && !conflict.value) error.value = null

@@ -60,7 +60,7 @@ export function useLiveSource(typed: MaybeRefOrGetter<TypedSource>, facts: Maybe
     const read = readTypedSource(typed)
     if ('problems' in read) answer.problems = read.problems
     else if (answer.faults.length === 0) {
-      const request = { title: facts.title, name: typed.name, facts: { frequencyUnit: facts.frequencyUnit, parameters: facts.parameters }, criteria: facts.criteria }
+      const request = { title: facts.title, name: typed.name.trim() || 'as typed', facts: { frequencyUnit: facts.frequencyUnit, parameters: facts.parameters }, criteria: facts.criteria }
       const { definition } = read
       if (definition.kind !== 'measured') take(await engine().analyse({ ...request, definition }), answer)
       else if (preview.value !== null) take(await engine().analyseFile({ ...request, definition }), answer)
