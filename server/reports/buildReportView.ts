@@ -1,3 +1,4 @@
+import { counted } from '#shared/formatting/counted'
 import type { EditionFacts, ReportSnapshot } from '#shared/types/snapshot'
 import type { DrawnReport } from './figures/DrawnReport'
 import { markdownToHtml } from './text/markdownToHtml'
@@ -31,8 +32,6 @@ function numberedSections(first: number, makers: ((number: string) => SectionVie
     return section === null ? sections : [...sections, section]
   }, [])
 }
-
-const counted = (count: number, noun: string) => `${count} ${noun}${count === 1 ? '' : 's'}`
 
 /** As a browser reads a title (HTML, document.title): white space stripped and collapsed. The printer compares the two. */
 const oneLine = (text: string) => text.replace(/[\t\n\f\r ]+/g, ' ').trim()

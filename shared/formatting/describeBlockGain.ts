@@ -1,10 +1,10 @@
 import type { BlockDefinition, BlockGain } from '../types/block'
+import { counted } from './counted'
 import { describeHold } from './describeHold'
 import { formatDelay } from './formatDelay'
 import { formatFrequency } from './formatFrequency'
 import { significantDigits } from './significantDigits'
 
-const counted = (count: number, noun: string) => `${count} ${noun}${count === 1 ? '' : 's'}`
 const figure = (value: number) => String(Number(value.toPrecision(10)))
 const root = ([re, im]: readonly [number, number]) => (im === 0 ? figure(re) : `${figure(re)} ${im < 0 ? '\u2212' : '+'} ${figure(Math.abs(im))}j`)
 const list = (values: readonly string[]) => (values.length === 0 ? 'none' : values.join(', '))

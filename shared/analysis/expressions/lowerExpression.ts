@@ -62,7 +62,7 @@ export function lowerExpression(input: ExpressionInput): LoweredExpression {
 /** The accuracy of the blocks with that of the factors found for the whole. */
 function withFactors({ relative, basis }: NonNullable<LoopStructure['accuracy']>, exact: ExactLoop, loop: FactoredLoop): NonNullable<LoopStructure['accuracy']> {
   const { largest, frequencies } = differenceOfFactors(exact, loop)
-  return { relative: relative + largest, basis: `${basis}, factors compared at ${frequencies} frequencies` }
+  return { relative: relative + largest, basis: `${basis}, factors compared at ${frequencies === 1 ? 'one frequency' : `${frequencies} frequencies`}` }
 }
 
 function refuseUnusable(exact: ExactLoop, sampleTime: number | undefined, tree: ExpressionNode, scope: BlockScope<ExactLoop>): void {

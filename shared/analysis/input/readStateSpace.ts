@@ -39,5 +39,5 @@ function readMatrix(value: unknown, path: string, most: number): number[][] {
 function checkShape(matrix: number[][], path: string, rows: number, columns: number, rule: string): void {
   if (matrix.length !== rows) throw new AnalysisInputError(`${path} has ${matrix.length} rows, ${rows} are needed: ${rule}.`, path)
   const wrong = matrix.findIndex(row => row.length !== columns)
-  if (wrong >= 0) throw new AnalysisInputError(`${path}[${wrong}] has ${matrix[wrong]!.length} numbers, ${columns} are needed: ${rule}.`, `${path}[${wrong}]`)
+  if (wrong >= 0) throw new AnalysisInputError(`${path}[${wrong}] has ${matrix[wrong]!.length} ${matrix[wrong]!.length === 1 ? 'number' : 'numbers'}, ${columns} ${columns === 1 ? 'is' : 'are'} needed: ${rule}.`, `${path}[${wrong}]`)
 }

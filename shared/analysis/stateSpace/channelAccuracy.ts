@@ -51,7 +51,7 @@ export function channelAccuracy(model: StateSpaceModel, output: number, input: n
   const relative = Math.max(bound, difference)
   return {
     relative: Number.isNaN(relative) ? Infinity : relative,
-    basis: `state space of ${n} states reduced in double-double arithmetic (bound of its backward error ${bound.toExponential(0)}), compared with the matrices themselves at ${points.length} frequencies (largest difference ${difference.toExponential(0)})`,
+    basis: `state space of ${n} ${n === 1 ? 'state' : 'states'} reduced in double-double arithmetic (bound of its backward error ${bound.toExponential(0)}), compared with the matrices themselves at ${points.length === 1 ? 'one frequency' : `${points.length} frequencies`} (largest difference ${difference.toExponential(0)})`,
   }
 }
 
