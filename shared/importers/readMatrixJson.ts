@@ -1,4 +1,5 @@
 import { findFaultyKey } from './findFaultyKey'
+import { matrixLimits } from './matrixLimits'
 import type { MatrixName, TypedMatrix, TypedNames, TypedSet } from './MatrixSet'
 import type { MeasurementProblem } from './MeasurementProblem'
 
@@ -22,6 +23,7 @@ export function readMatrixJson(text: string): { sets: TypedSet[] } | { problems:
   const faulty = findFaultyKey(text)
   if (faulty) return { problems: [{ line: lineAt(faulty.position, text), message: faulty.message }] }
   const entries = entriesOf(value)
+  if (entries.length > matrixLimits.sets) return { problems: [{ line: 0, message: `The file holds ${entries.length} sets of matrices; at most ${matrixLimits.sets} are read.` }] }
   const problems: MeasurementProblem[] = []
   const sets = entries.flatMap(([name, entry], index): TypedSet[] => {
     const set = readSet(name, entry)

@@ -24,6 +24,7 @@ describe('a file of matrices that cannot be read', () => {
     ['a condition twice in JSON, of which a parser keeps the last', '{"C1": {"A": 1, "B": 1, "C": 1, "D": 0},\n "C1": {"A": 2, "B": 1, "C": 1, "D": 0}}', 2, '"C1" stands twice'],
     ['the same key written two ways', '{"A": 1, "B": 1, "C": 1, "D": 0, "\\u0041": 2}', 1, '"A" stands twice'],
     ['a set under a blank name, which nobody could choose', '{" ": {"A": 1, "B": 1, "C": 1, "D": 0}, "C1": {"A": 1, "B": 1, "C": 1, "D": 0}}', 0, 'not blank'],
+    ['more sets than are read, of which none is looked at', JSON.stringify(Array.from({ length: 1001 }, () => 0)), 0, 'The file holds 1001 sets of matrices'],
     ['more lines than all sets could fill', '1\n'.repeat(300_001), 0, 'at most 300000 are read'],
   ])('holds %s, and says so with the line', (_, text, line, message) => {
     expect(problemsOf(text)[0]?.line).toBe(line)
