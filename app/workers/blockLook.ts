@@ -70,9 +70,12 @@ export function blockLook(request: LookRequest, uploads: UploadFacts): BlockLook
     const prefix = `blocks.${name}.`
     // What stands in the way is the zero of this pair of channels, not the block.
     if (error.path === 'expression') return { ...base, response: null, reason: error.message }
-    throw error.path.startsWith(prefix) ? new AnalysisInputError(error.message, error.path.slice(prefix.length), error.position) : error
+    throw error.path.startsWith(prefix) ? new AnalysisInputError(withoutOwnName(error.message, name), error.path.slice(prefix.length), error.position) : error
   }
 }
+
+/** 'Block G: Improper' as the block's own form says it. */
+const withoutOwnName = (message: string, name: string) => message.startsWith(`Block ${name}: `) ? message.slice(`Block ${name}: `.length) : message
 
 /** The block with all that it needs, and the parameters that any of them names. */
 function needed({ name, definition, others, parameters, frequencyUnit }: LookRequest, own: BlockGain, uploads: UploadFacts) {

@@ -36,7 +36,8 @@ export async function assertProper(draft: DraftGains, others: readonly Block[], 
     const fault = ownFault(draft.name, input)
     if (fault === null) continue
     const path = draft.byCondition[condition.id] ? `byCondition.${condition.id}` : 'definition'
-    throw new AppError('invalidInput', fault.message, { path: `${path}.${fault.path.slice(`blocks.${draft.name}.`.length)}`, ...(fault.position !== undefined && { details: { position: fault.position } }), cause: fault })
+    // The request is of this block: its name goes without saying.
+    throw new AppError('invalidInput', fault.message.replace(`Block ${draft.name}: `, ''), { path: `${path}.${fault.path.slice(`blocks.${draft.name}.`.length)}`, ...(fault.position !== undefined && { details: { position: fault.position } }), cause: fault })
   }
 }
 
