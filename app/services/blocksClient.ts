@@ -4,12 +4,6 @@ import { callApi } from './apiClient'
 
 export type BlockFields = Pick<Block, 'name' | 'role' | 'unitIn' | 'unitOut' | 'notes' | 'definition' | 'byCondition'>
 
-/** What an uploaded file of matrices holds. */
-export interface MatricesFound {
-  sets: { name: string, states: number, inputs: string[], outputs: string[] }[]
-  problems: { line: number, message: string }[]
-}
-
 export interface BlockDraft {
   /** null for a block that is not stored yet */
   blockId: number | null
@@ -29,8 +23,6 @@ export const blocksClient = {
   order: (systemId: number, ids: number[]) => callApi<{ ids: number[] }>('PUT', `${of(systemId)}/order`, { body: { ids } }),
   /** what the draft of a block would move; nothing is stored */
   effects: (systemId: number, draft: BlockDraft) => callApi<BlockEffect[]>('POST', `${of(systemId)}/effects`, { body: draft }),
-  /** `states` where the file holds plain stacked numbers */
-  matrices: (systemId: number, uploadId: number, states: number | null) => callApi<MatricesFound>('POST', `/api/systems/${systemId}/matrices`, { body: { uploadId, states } }),
   change: (blockId: number, fields: Partial<BlockFields> & { version: number }) => callApi<Block>('PATCH', at(blockId), { body: fields }),
   remove: (blockId: number) => callApi<{ id: number }>('DELETE', at(blockId)),
   restore: (blockId: number) => callApi<Block>('POST', `${at(blockId)}/restore`),
