@@ -1,3 +1,4 @@
+import { circleInWords } from '../analysis/blocks/circleInWords'
 import { namesInExpression } from '../analysis/expressions/namesInExpression'
 import type { InputFault } from '../schemas/readBySchema'
 import type { ManifestBlock } from '../types/manifest'
@@ -37,9 +38,7 @@ function circlesIn(blocks: readonly ManifestBlock[], code: string | null, namesI
         const circle = way.slice(way.indexOf(next))
         faults.push({
           path: `blocks[${place.index}].${place.own ? `byCondition.${code}` : 'definition'}.expression`,
-          message: circle.length === 1
-            ? `The block ${name} names itself.`
-            : `These blocks name one another in a circle: ${[...circle, next].join(', ')}. Write one of them without the others; a feedback is written as G/(1 + G*H).`,
+          message: circleInWords(circle),
         })
       }
       else if (!state.has(next)) visit(next)

@@ -1,4 +1,5 @@
 import { AnalysisInputError } from '#shared/analysis/AnalysisInputError'
+import { circleInWords } from '#shared/analysis/blocks/circleInWords'
 import { parseExpression } from '#shared/analysis/expressions/parseExpression'
 import { readBlockGain } from '#shared/analysis/input/readBlockGain'
 import { AppError } from '#shared/errors/AppError'
@@ -65,10 +66,7 @@ export function assertNoCircle(draft: DraftGains, others: readonly Block[]): voi
     if (circle === null || own?.kind !== 'expression') continue
     const path = place !== null && draft.byCondition[place] ? `byCondition.${place}` : 'definition'
     const position = namesInExpression(own.expression).find(({ name }) => name === circle[1])?.position ?? 0
-    const message = circle.length === 2
-      ? `The block ${draft.name} names itself.`
-      : `These blocks name one another in a circle: ${circle.join(', ')}. Write one of them without the others; a feedback is written as G/(1 + G*H).`
-    throw new AppError('invalidInput', message, { path: `${path}.expression`, details: { position } })
+    throw new AppError('invalidInput', circleInWords(circle.slice(0, -1)), { path: `${path}.expression`, details: { position } })
   }
 }
 

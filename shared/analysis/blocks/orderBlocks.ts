@@ -1,6 +1,7 @@
 import type { BlockGain } from '../../types/block'
 import { AnalysisInputError } from '../AnalysisInputError'
 import { namesInExpression } from '../expressions/namesInExpression'
+import { circleInWords } from './circleInWords'
 
 /**
  * The blocks that an expression needs, those named by its blocks included, each after all that it needs itself.
@@ -20,10 +21,7 @@ export function orderBlocks(expression: string, blocks: Readonly<Record<string, 
       if (!Object.hasOwn(blocks, needed)) continue
       if (state.get(needed) === 'open') {
         const circle = way.slice(way.indexOf(needed))
-        throw new AnalysisInputError(circle.length === 1
-          ? `The block ${name} names itself.`
-          : `These blocks name one another in a circle: ${[...circle, needed].join(', ')}. Write one of them without the others; a feedback is written as G/(1 + G*H).`,
-        `blocks.${name}.expression`, position)
+        throw new AnalysisInputError(circleInWords(circle), `blocks.${name}.expression`, position)
       }
       if (!state.has(needed)) visit(needed)
     }
