@@ -14,6 +14,8 @@ interface LiveFacts {
   parameters: Record<string, number>
   parameterNames: string[]
   blockNames: string[]
+  /** faults of blocks that have no gain in that condition */
+  missingGains: { message: string, position: number }[]
   criteria: Criterion[]
 }
 
@@ -56,6 +58,7 @@ export function useLiveSource(typed: MaybeRefOrGetter<TypedSource>, facts: Maybe
       const { parameterNames, blockNames } = facts
       answer.faults = (await engine().checkExpression(typed.expression, { variable: typed.sampled ? 'z' : 's', parameterNames, ...blockNames.length > 0 && { blocks: blockNames } }))
         .map(({ message, position }) => ({ message, position }))
+      if (answer.faults.length === 0) answer.faults = facts.missingGains
     }
     const read = readTypedSource(typed)
     if ('problems' in read) answer.problems = read.problems

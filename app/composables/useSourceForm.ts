@@ -115,6 +115,7 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
         parameters: parameters.value,
         parameterNames: [...new Set([...detail.value.parameters.map(parameter => parameter.name), ...Object.keys(parameters.value)])],
         blockNames: blocks.value.map(block => block.name),
+        missingGains: kept.value.typed.kind === 'expression' ? missingGains(kept.value.typed.expression, used.value, condition.value?.name ?? '') : [],
         criteria: detail.value.criteria,
       })
   const live = useLiveSource(() => kept.value.typed, facts, gains)
