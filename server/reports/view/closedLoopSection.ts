@@ -5,6 +5,7 @@ import type { ClosedLoopPoles } from '#shared/types/structure'
 import { shiftsPending } from '../../services/analyses/findModeShifts'
 import type { PlacedCell } from './cellsOf'
 import { governingCell } from './chapterView'
+import { limitOf } from './criteriaWords'
 import { modeShiftTable } from './modeShiftTable'
 import type { SectionBlock, SectionView, TableView } from './ReportView'
 import { tableOf } from './tableOf'
@@ -58,7 +59,7 @@ export function closedLoopSection(snapshot: ReportSnapshot, cells: readonly Plac
   const reasons = withoutList(governing)
   const shifts = governing.flatMap((placed) => {
     const found = placed.cell.modeShifts
-    return found && found.reason === null ? [modeShiftTable(placed, found)] : []
+    return found && found.reason === null ? [modeShiftTable(placed, found, limitOf(snapshot.criteria, 'vectorMargin'))] : []
   })
   const isPending = governing.some(({ cell }) => cell.modeShifts?.reason === shiftsPending)
   if (poles.length + reasons.length + shifts.length === 0 && !isPending) return null

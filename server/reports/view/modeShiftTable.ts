@@ -20,27 +20,32 @@ function marginLines({ summary }: MarginsThere): string {
 }
 
 /** The least return difference with the margins beneath; a loop that is not stable has none, which is told first. */
-function marginsCell(there: MarginsThere): CellDraft {
+function marginsCell(there: MarginsThere, required: number | null): CellDraft {
   if (there.failure !== null) return { text: 'not analysed', small: there.failure, tone: 'open' }
   const least = there.vectorMargin === null ? '' : formatDistance(there.vectorMargin.distance)
   if (there.summary === null) return { text: there.verdict, small: least, tone: 'bad' }
-  return { text: least, small: marginLines(there) }
+  const isUnder = required !== null && there.vectorMargin !== null && there.vectorMargin.distance < required
+  return isUnder ? { text: `under, ${least}`, small: marginLines(there), tone: 'bad' } : { text: least, small: marginLines(there) }
 }
 
 /** A mode that changes no printed figure is told so in words: what moves the margins stands out. */
-function shiftedCell(shift: MarginsThere, nominal: CellDraft): CellDraft {
-  const cell = marginsCell(shift)
+function shiftedCell(shift: MarginsThere, nominal: CellDraft, required: number | null): CellDraft {
+  const cell = marginsCell(shift, required)
   return shift.failure === null && cell.text === nominal.text && cell.small === nominal.small ? { text: asItIs, tone: 'quiet' } : cell
 }
 
 const changeWords = (change: number) => `${change > 0 ? '+' : '\u2212'}${Math.round(Math.abs(change) * 100)} %`
 
-/** The margins of one loop with each flexible mode moved: a row a mode, the loop as it is first. */
-export function modeShiftTable({ loop, condition }: PlacedCell, { modes, nominal, frequencyUnit, notes }: ModeShiftTable): TableView {
+/**
+ * The margins of one loop with each flexible mode moved: a row a mode, the loop as it is first.
+ *
+ * @param required least |1 + L| asked for, null where none is
+ */
+export function modeShiftTable({ loop, condition }: PlacedCell, { modes, nominal, frequencyUnit, notes }: ModeShiftTable, required: number | null): TableView {
   const changes = [...new Set(modes.flatMap(({ shifts }) => shifts.map(({ change }) => change)))].sort((a, b) => a - b)
-  const asModelled = marginsCell(nominal)
+  const asModelled = marginsCell(nominal, required)
   return tableOf({
-    caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: least |1 + L| and margins with each flexible mode moved`,
+    caption: `${loop.code} ${loop.name}, ${condition.code} ${condition.name}: least |1 + L| and margins with each flexible mode moved${required === null ? '' : `; required ${formatDistance(required)}`}`,
     columns: [
       { head: 'mode' }, { head: 'frequency', unit: frequencyUnit, isNumber: true }, { head: asItIs, isNumber: true }, ...changes.map(change => ({ head: changeWords(change), isNumber: true })),
     ],
@@ -53,7 +58,7 @@ export function modeShiftTable({ loop, condition }: PlacedCell, { modes, nominal
           { text: '' },
           ...changes.map((change): CellDraft => {
             const shift = shifts.find(shift => shift.change === change)
-            return shift === undefined ? { text: '' } : shiftedCell(shift, asModelled)
+            return shift === undefined ? { text: '' } : shiftedCell(shift, asModelled, required)
           }),
         ],
       })),

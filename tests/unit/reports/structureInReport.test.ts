@@ -94,7 +94,7 @@ describe('how loop gains are built, in the report', () => {
         frequencyUnit: 'rad/s', nominal: there, reason: null, notes: ['One mode of small gain is left out.'],
         modes: [{
           block: 'G', mode: 'bending', frequency: 100, damping: 0.01,
-          shifts: [{ change: -0.2, ...there }, { change: -0.1, ...there, vectorMargin: { distance: 0.7, frequency: 158 } }, { change: 0.1, verdict: 'unstable', summary: null, vectorMargin: { distance: 0.1, frequency: 110 }, failure: null }],
+          shifts: [{ change: -0.2, ...there }, { change: -0.1, ...there, vectorMargin: { distance: 0.4, frequency: 158 } }, { change: 0.1, verdict: 'unstable', summary: null, vectorMargin: { distance: 0.1, frequency: 110 }, failure: null }],
         }],
       },
     })
@@ -102,7 +102,7 @@ describe('how loop gains are built, in the report', () => {
     expect(table?.columns.map(({ head }) => head)).toEqual(['mode', 'frequency', 'as it is', '\u221220 %', '\u221210 %', '+10 %'])
     expect(texts(table)).toEqual([
       ['none moved', '', '0.846', '', '', ''],
-      ['bending', '100.0', '', 'as it is', '0.700', 'unstable'],
+      ['bending', '100.0', '', 'as it is', 'under, 0.400', 'unstable'],
     ])
     expect(table?.rows[1]?.cells.map(({ small }) => small)).toEqual(['of G, damping 0.0100', '', '', '', 'rise 16.3 dB\nlag 95.1 deg', '0.100'])
     expect(table?.notes).toEqual(['One mode of small gain is left out.'])
