@@ -1,3 +1,4 @@
+import { conditionsClient } from '~/services/conditionsClient'
 import { systemsClient } from '~/services/systemsClient'
 import { emptySource, readTypedSource, typedSource, type TypedSource } from '~/services/TypedSource'
 import { useLoopStore } from '~/stores/loop'
@@ -97,7 +98,11 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
     })) as Record<string, number>
   })
   const blocks = computed(() => detail.value?.blocks ?? [])
-  const gains = computed(() => condition.value === null ? {} : detail.value?.blockGains[condition.value.id] ?? {})
+  // They may be large: asked for once they can be needed, and for one condition.
+  const loadedGains = useLatest((conditionId: number) => conditionsClient.gains(conditionId))
+  const gains = computed(() => loadedGains.answer.value ?? {})
+  watch(() => blocks.value.length === 0 ? null : condition.value?.id ?? null, id => id === null ? undefined : loadedGains.ask(id), { immediate: true })
+  watch(loadedGains.failure, failure => failure === null ? undefined : toasts.fail(failure))
   const used = computed(() => kept.value.typed.kind === 'expression' && condition.value !== null ? blocksUsed(kept.value.typed.expression, blocks.value, condition.value.id) : [])
   const sampling = computed(() => {
     const words = samplingInWords(used.value.map(({ block, definition }) => ({ name: block.name, definition })))
@@ -107,7 +112,7 @@ export function useSourceForm({ loopId, sourceId, conditionId }: SourcePlace) {
   const completion = computed(() => completionNames({ blocks: blocks.value, parameters: detail.value?.parameters ?? [], gains: gains.value, conditionId: condition.value?.id ?? null }))
   /** parameters that the expression itself names */
   const names = computed(() => kept.value.typed.kind === 'expression' ? namesUsed(kept.value.typed.expression).filter(name => !blocks.value.some(block => block.name === name)) : [])
-  const facts = computed(() => detail.value === null || !begun.value
+  const facts = computed(() => detail.value === null || !begun.value || loadedGains.pending.value
     ? null
     : {
         title: `${detail.value.loop.code} ${detail.value.loop.name}`,

@@ -1,7 +1,7 @@
 import type { BoardCell, Loop, OperatingCondition, Parameter, System } from '#shared/types/system'
 import type { Criterion } from '#shared/types/criterion'
 import type { Role } from '#shared/types/person'
-import type { Block, BlockGain } from '#shared/types/block'
+import type { Block } from '#shared/types/block'
 import type { AnalysedSource, Source, SourceDefinition } from '#shared/types/source'
 import type { SourceDifference } from '#shared/types/structure'
 import type { LoopFields } from './systemsClient'
@@ -15,8 +15,6 @@ export interface LoopDetail {
   conditions: OperatingCondition[]
   parameters: Parameter[]
   blocks: Block[]
-  /** by operating condition id and block name, where the gain could be made out */
-  blockGains: Record<number, Record<string, BlockGain>>
   criteria: Criterion[]
   sources: Source[]
   cells: BoardCell[]

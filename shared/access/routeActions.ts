@@ -65,6 +65,7 @@ export const routeActions = {
   'GET /api/loops/[loopId]/conditions/[conditionId]/sources': 'see loops, data and drafts',
   'POST /api/loops/[loopId]/sources': 'change loops, criteria and drafts',
 
+  'GET /api/conditions/[conditionId]/gains': 'see loops, data and drafts',
   'PATCH /api/conditions/[conditionId]': 'change loops, criteria and drafts',
   'DELETE /api/conditions/[conditionId]': 'change loops, criteria and drafts',
   'POST /api/conditions/[conditionId]/restore': 'change loops, criteria and drafts',

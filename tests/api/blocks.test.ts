@@ -85,9 +85,9 @@ describe('the blocks of a system', () => {
     const { loop, condition } = server.seeded
     expect((await engineer.get<{ blocks: Block[] }>(at)).body.blocks.map(({ name }) => name)).toEqual(['H', 'G'])
     expect((await engineer.get<Board>(`${at}/board`)).body.cells[0]).toMatchObject({ disagreement: null })
-    const { body } = await engineer.get<{ blocks: Block[], loops: object[], blockGains: Record<number, object> }>(`/api/loops/${loop.id}`)
+    const { body } = await engineer.get<{ blocks: Block[], loops: object[] }>(`/api/loops/${loop.id}`)
     expect(body.loops).toEqual([{ id: loop.id, code: 'SL-P', name: 'Slew position' }])
-    expect(body.blockGains[condition.id]).toEqual({ H: typed('2'), G: typed('0.5/(s*(s+1)^2)') })
+    expect((await engineer.get(`/api/conditions/${condition.id}/gains`)).body).toEqual({ H: typed('2'), G: typed('0.5/(s*(s+1)^2)') })
   })
 
   it('stand beside the other sources of a loop with their differences', async () => {

@@ -1,12 +1,11 @@
 import { AppError } from '#shared/errors/AppError'
-import type { Block, BlockGain } from '#shared/types/block'
+import type { Block } from '#shared/types/block'
 import type { Criterion } from '#shared/types/criterion'
 import type { Source } from '#shared/types/source'
 import type { BoardCell, Loop, OperatingCondition, Parameter, System } from '#shared/types/system'
 import { SourceRow } from '../../database/models/SourceRow'
 import { presentSource } from '../../presenters/presentSource'
 import { presentSystem } from '../../presenters/presentSystem'
-import { BlockGains } from '../blocks/BlockGains'
 import { listBlocks } from '../blocks/listBlocks'
 import { listConditions } from '../conditions/listConditions'
 import type { OpenContext } from '../context'
@@ -25,8 +24,6 @@ export interface LoopContent {
   conditions: OperatingCondition[]
   parameters: Parameter[]
   blocks: Block[]
-  /** by operating condition id, then by name: the gain of every block that has one there, as the engine takes it */
-  blockGains: Record<number, Record<string, BlockGain>>
   criteria: Criterion[]
   /** all of them, also those set aside */
   sources: Source[]
@@ -45,8 +42,6 @@ export async function readLoop(loopId: number, context: OpenContext): Promise<Lo
   const system = presentSystem(systemRow)
   const conditionIds = conditions.map(condition => condition.id)
   const sources = await SourceRow.findAll({ where: { loopId, conditionId: conditionIds }, order: ['id'] })
-  const gains = new BlockGains(blocks, system)
-  const blockGains = Object.fromEntries(await Promise.all(conditions.map(async condition => [condition.id, await gains.allIn(condition)] as const)))
   const cells = await judgeCells(system, [loop], conditionIds, criteria, loops, context)
-  return { loop, loops: loops.map(({ id, code, name }) => ({ id, code, name })), system, conditions, parameters, blocks, blockGains, criteria, sources: sources.map(presentSource), cells }
+  return { loop, loops: loops.map(({ id, code, name }) => ({ id, code, name })), system, conditions, parameters, blocks, criteria, sources: sources.map(presentSource), cells }
 }

@@ -5,6 +5,7 @@ import type { Source } from '#shared/types/source'
 import type { Loop, OperatingCondition, System } from '#shared/types/system'
 import { AnalysisRow } from '#server/database/models/AnalysisRow'
 import { listBlocks } from '#server/services/blocks/listBlocks'
+import { readGains } from '#server/services/blocks/readGains'
 import { readBlockEffects } from '#server/services/blocks/readBlockEffects'
 import { updateBlock } from '#server/services/blocks/updateBlock'
 import type { ServiceContext } from '#server/services/context'
@@ -111,13 +112,14 @@ describe('a source over blocks', () => {
     expect((await readLoop(loop.id, context)).sources).toEqual([])
   })
 
-  it('is shown with the gains of all blocks that have one, for the engine in the browser', async () => {
+  it('is shown with all blocks; their gains are read for one condition, for the engine in the browser', async () => {
     await buildBlock(system.id, context, 'G', null, { byCondition: { [c1.id]: { kind: 'sections', rows: [['1', '0', '0', '2/4', '0', '0']], gain: '1', sampleTime: 0.001 } } })
-    const { blocks, blockGains } = await readLoop(loop.id, context)
+    const { blocks } = await readLoop(loop.id, context)
+    const [inC1, inC2] = [await readGains(c1.id), await readGains(c2.id)]
     expect(blocks.map(block => block.name)).toEqual(['C', 'P', 'other', 'G'])
-    expect(Object.keys(blockGains[c1.id] ?? {})).toEqual(['C', 'P', 'other', 'G'])
-    expect(blockGains[c1.id]?.G).toEqual({ kind: 'sections', sections: [[1, 0, 0, 0.5, 0, 0]], gain: 1, sampleTime: 0.001 })
-    expect(blockGains[c2.id]?.G).toBeUndefined()
+    expect(Object.keys(inC1)).toEqual(['C', 'P', 'other', 'G'])
+    expect(inC1.G).toEqual({ kind: 'sections', sections: [[1, 0, 0, 0.5, 0, 0]], gain: 1, sampleTime: 0.001 })
+    expect(inC2.G).toBeUndefined()
   })
 })
 
