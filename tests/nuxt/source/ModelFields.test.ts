@@ -14,6 +14,8 @@ describe('the fields of a model', () => {
     const sampled = await labelsOf('expression', 'sampled every 20 us by C')
     expect(sampled.labels).not.toMatch(/Zeros|Numerator/)
     expect(sampled.text).toContain('The loop is sampled every 20 us by C.')
+    expect(sampled.labels).toMatch(/^As its blocks are .*L, the loop gain/)
+    expect((await labelsOf('expression')).labels).toMatch(/^Continuous, in s .*L\(s\), the loop gain/)
   })
 
   it('of coefficients and of roots are their own alone', async () => {
