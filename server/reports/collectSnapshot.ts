@@ -3,7 +3,8 @@ import { breakPointDisagreements, cellKey } from '#shared/workflow/breakPointDis
 import type { Block, BlockDefinition } from '#shared/types/block'
 import { judgeAnalysis } from '#shared/analysis/criteria/judgeAnalysis'
 import type { ReportSnapshot, SnapshotBlock, SnapshotCell, SnapshotLoop } from '#shared/types/snapshot'
-import type { SourceDefinition } from '#shared/types/source'
+import type { AnalysedSource, SourceDefinition } from '#shared/types/source'
+import type { SourceDifference } from '#shared/types/structure'
 import type { Criterion } from '#shared/types/criterion'
 import type { Loop, OperatingCondition, Parameter } from '#shared/types/system'
 import type { ReportRow } from '../database/models/ReportRow'
@@ -11,7 +12,8 @@ import { RevisionRow } from '../database/models/RevisionRow'
 import { SourceRow } from '../database/models/SourceRow'
 import { UploadRow } from '../database/models/UploadRow'
 import { findModeShifts } from '../services/analyses/findModeShifts'
-import { findStructures, type LoopStructureFacts, type SourcesOfCell } from '../services/analyses/findStructures'
+import { findClosedLoopPoles } from '../services/analyses/findClosedLoopPoles'
+import { findDifferences } from '../services/analyses/findDifferences'
 import { listBlocks } from '../services/blocks/listBlocks'
 import { readBrandForPrint } from '../services/brand/readBrandForPrint'
 import type { ServiceContext } from '../services/context'
@@ -33,12 +35,14 @@ async function fileOf(definition: SourceDefinition | BlockDefinition): Promise<{
   return upload === null ? null : { name: upload.fileName, sha256: upload.sha256 }
 }
 
-interface CoveredCell extends SourcesOfCell {
+interface CoveredCell {
   loop: Loop
   condition: OperatingCondition
+  ofRecord: AnalysedSource | undefined
+  others: AnalysedSource[]
 }
 
-async function cellOf({ loop, condition, ofRecord: entry, others }: CoveredCell, structure: LoopStructureFacts, disagreement: string | null, criteria: Criterion[]): Promise<SnapshotCell> {
+async function cellOf({ loop, condition, ofRecord: entry, others }: CoveredCell, differences: ReadonlyMap<number, SourceDifference>, disagreement: string | null, criteria: Criterion[]): Promise<SnapshotCell> {
   const analysis = entry?.analysis ?? null
   return {
     loopCode: loop.code,
@@ -48,10 +52,10 @@ async function cellOf({ loop, condition, ofRecord: entry, others }: CoveredCell,
     analysis,
     failure: entry?.failure ?? null,
     judgement: judgeAnalysis(analysis, criteria),
-    closedLoopPoles: structure.closedLoopPoles,
+    closedLoopPoles: null,
     modeShifts: null,
-    otherSources: others.map(({ source, ...other }, index) => ({
-      name: source.name, kind: source.kind, setAsideReason: source.setAsideReason, ...other, difference: structure.differences[index] ?? null,
+    otherSources: others.map(({ source, ...other }) => ({
+      name: source.name, kind: source.kind, setAsideReason: source.setAsideReason, ...other, difference: differences.get(source.id) ?? null,
     })),
     disagreement,
   }
@@ -109,11 +113,22 @@ export async function coverageOf(report: ReportRow): Promise<{ loops: Loop[], co
   return { loops: inOrder(loops, report.loopIds), conditions: inOrder(conditions, report.conditionIds) }
 }
 
+/** Cells that can be asked more than their analysis. */
+const askable = (cells: readonly SnapshotCell[]) => cells.flatMap(cell => (cell.analysis === null || cell.input === null ? [] : [{ cell, input: cell.input }]))
+
+async function addClosedLoopPoles(cells: readonly SnapshotCell[], context: ServiceContext): Promise<void> {
+  const asked = askable(cells)
+  const poles = await findClosedLoopPoles(asked.map(({ input }) => input), context)
+  asked.forEach(({ cell }, index) => {
+    cell.closedLoopPoles = poles[index] ?? null
+  })
+}
+
 /** Flexible modes are moved where each loop stands worst, which is where a report prints them; it takes many analyses a loop. */
 async function addModeShifts(cells: SnapshotCell[], blocks: readonly Block[], isPreview: boolean, context: ServiceContext): Promise<void> {
   const loopCodes = [...new Set(cells.map(({ loopCode }) => loopCode))]
   const governing = loopCodes.flatMap(code => cells.filter(({ loopCode, analysis }) => loopCode === code && analysis !== null).sort(compareStanding).slice(0, 1))
-  const asked = governing.flatMap(cell => (cell.input === null ? [] : [{ cell, input: cell.input }]))
+  const asked = askable(governing)
   const roles = Object.fromEntries(blocks.map(({ name, role }) => [name, role]))
   const shifts = await findModeShifts(asked.map(({ input }) => input), roles, context, { known: isPreview })
   asked.forEach(({ cell }, index) => {
@@ -136,11 +151,14 @@ export async function collectSnapshot(report: ReportRow, draft: DraftFacts, cont
     const ofCell = analysed.filter(({ source }) => source.loopId === loop.id && source.conditionId === condition.id)
     return { loop, condition, ofRecord: ofCell.find(({ source }) => source.ofRecord), others: ofCell.filter(({ source }) => !source.ofRecord) }
   }))
-  const structures = await findStructures(covered, context)
+  const pairs = covered.flatMap(({ ofRecord, others }) => (ofRecord ? others.map(other => ({ reference: ofRecord, other })) : []))
+  const found = await findDifferences(pairs, system.frequencyUnit, context)
+  const differences = new Map(pairs.map(({ other }, index) => [other.source.id, found[index]!]))
   const disagreements = breakPointDisagreements({ loops, cells: covered.map(({ loop, condition, ofRecord }) => ({ loopId: loop.id, conditionId: condition.id, analysis: ofRecord?.analysis ?? null })) })
-  const cells = await Promise.all(covered.map((cell, index) => (
-    cellOf(cell, structures[index]!, disagreements.get(cellKey(cell.loop.id, cell.condition.id)) ?? null, criteria)
+  const cells = await Promise.all(covered.map(cell => (
+    cellOf(cell, differences, disagreements.get(cellKey(cell.loop.id, cell.condition.id)) ?? null, criteria)
   )))
+  await addClosedLoopPoles(cells, context)
   await addModeShifts(cells, blocks, isPreview, context)
   return {
     format: 'wideberth report snapshot',

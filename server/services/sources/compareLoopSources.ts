@@ -3,7 +3,7 @@ import type { AnalysedSource } from '#shared/types/source'
 import type { SourceDifference } from '#shared/types/structure'
 import { SourceRow } from '../../database/models/SourceRow'
 import { presentSystem } from '../../presenters/presentSystem'
-import { runEngine } from '../analyses/runEngine'
+import { findDifferences } from '../analyses/findDifferences'
 import { findCondition } from '../conditions/findCondition'
 import type { OpenContext } from '../context'
 import { findLoop } from '../loops/findLoop'
@@ -26,14 +26,5 @@ export async function compareLoopSources(loopId: number, conditionId: number, co
   const sources = await analyseSources(rows, system, context)
   const [reference, ...others] = sources
   if (!reference?.source.ofRecord) return { sources, differences: [] }
-  const pairs = others.map(other => ({ reference: sideOf(reference), other: sideOf(other) }))
-  const answers = await runEngine('sourceDifference', pairs, context)
-  return {
-    sources,
-    differences: answers.map((answer, index): SourceDifference => 'error' in answer
-      ? { frequencyUnit: system.frequencyUnit, reference: reference.source.name, other: others[index]?.source.name ?? '', bands: [], basis: '', reason: answer.error.message }
-      : answer),
-  }
+  return { sources, differences: await findDifferences(others.map(other => ({ reference, other })), system.frequencyUnit, context) }
 }
-
-const sideOf = ({ source, input, analysis }: AnalysedSource) => ({ name: source.name, input, analysis })

@@ -1,30 +1,14 @@
 import { describe, expect, it } from 'vitest'
 import { rationalPart } from '#shared/analysis/expressions/rationalPart'
-import { prepareFactoredGain } from '#shared/analysis/prepareFactoredGain'
 import { discretise } from '#shared/analysis/sampling/discretise'
 import type { HoldGain } from '#shared/types/block'
 import { exactOf } from './exactOf'
+import { exponential, over, plus, times, type Complex } from './complexPairs'
+import { equivalentAt, expectClose, zeroOrderKernel } from './expectEquivalent'
 
 /*
  * The discrete equivalent against other routes to the same values on the unit circle: the aliasing sum, sums over modes in closed form, responses integrated step by step.
  */
-
-type Complex = [number, number]
-const plus = ([a, b]: Complex, [c, d]: Complex): Complex => [a + c, b + d]
-const minus = ([a, b]: Complex, [c, d]: Complex): Complex => [a - c, b - d]
-const times = ([a, b]: Complex, [c, d]: Complex): Complex => [a * c - b * d, a * d + b * c]
-const over = ([a, b]: Complex, [c, d]: Complex): Complex => [(a * c + b * d) / (c * c + d * d), (b * c - a * d) / (c * c + d * d)]
-const exponential = ([a, b]: Complex): Complex => [Math.exp(a) * Math.cos(b), Math.exp(a) * Math.sin(b)]
-const size = ([a, b]: Complex) => Math.hypot(a, b)
-
-function equivalentAt(plant: string, hold: HoldGain): (w: number) => Complex {
-  const { evaluate } = prepareFactoredGain(rationalPart(discretise(exactOf(plant), hold).loop, hold.sampleTime))
-  const out = new Float64Array(2)
-  return (w) => {
-    expect(evaluate(w, out)).toBe(true)
-    return [out[0] as number, out[1] as number]
-  }
-}
 
 /** sum over k of hold(w + k 2 pi/T) G(w + k 2 pi/T) e^(-j(w + k 2 pi/T) delay) */
 function aliasingSum(plant: (s: Complex) => Complex, kernel: (w: number) => Complex, sampleTime: number, w: number, terms: number): Complex {
@@ -37,14 +21,9 @@ function aliasingSum(plant: (s: Complex) => Complex, kernel: (w: number) => Comp
   return plus(sum, at(0))
 }
 
-const zeroOrderKernel = (T: number) => (v: number): Complex => over(minus([1, 0], exponential([0, -v * T])), [0, v * T])
 const edgesKernel = (...instants: number[]) => (v: number): Complex =>
   instants.reduce<Complex>((sum, t) => plus(sum, times([1 / instants.length, 0], exponential([0, -v * t]))), [0, 0])
 const late = (kernel: (v: number) => Complex, delay: number) => (v: number): Complex => times(kernel(v), exponential([0, -v * delay]))
-
-function expectClose(found: Complex, expected: Complex, tolerance: number) {
-  expect(size(minus(found, expected)) / size(expected)).toBeLessThan(tolerance)
-}
 
 describe('the discrete equivalent against the aliasing sum', () => {
   // relative degree 5: the tail falls with k^-5 and faster

@@ -1,36 +1,13 @@
 import { describe, expect, it } from 'vitest'
 import { rationalPart } from '#shared/analysis/expressions/rationalPart'
-import { prepareFactoredGain } from '#shared/analysis/prepareFactoredGain'
 import { discretise } from '#shared/analysis/sampling/discretise'
-import type { HoldGain } from '#shared/types/block'
 import { exactOf } from './exactOf'
+import { exponential, minus, over, plus, times, type Complex } from './complexPairs'
+import { equivalentAt, expectClose, zeroOrderKernel } from './expectEquivalent'
 
 /*
  * The discrete equivalent against other routes to the same values on the unit circle: the aliasing sum, sums over modes in closed form, responses integrated step by step.
  */
-
-type Complex = [number, number]
-const plus = ([a, b]: Complex, [c, d]: Complex): Complex => [a + c, b + d]
-const minus = ([a, b]: Complex, [c, d]: Complex): Complex => [a - c, b - d]
-const times = ([a, b]: Complex, [c, d]: Complex): Complex => [a * c - b * d, a * d + b * c]
-const over = ([a, b]: Complex, [c, d]: Complex): Complex => [(a * c + b * d) / (c * c + d * d), (b * c - a * d) / (c * c + d * d)]
-const exponential = ([a, b]: Complex): Complex => [Math.exp(a) * Math.cos(b), Math.exp(a) * Math.sin(b)]
-const size = ([a, b]: Complex) => Math.hypot(a, b)
-
-function equivalentAt(plant: string, hold: HoldGain): (w: number) => Complex {
-  const { evaluate } = prepareFactoredGain(rationalPart(discretise(exactOf(plant), hold).loop, hold.sampleTime))
-  const out = new Float64Array(2)
-  return (w) => {
-    expect(evaluate(w, out)).toBe(true)
-    return [out[0] as number, out[1] as number]
-  }
-}
-
-const zeroOrderKernel = (T: number) => (v: number): Complex => over(minus([1, 0], exponential([0, -v * T])), [0, v * T])
-
-function expectClose(found: Complex, expected: Complex, tolerance: number) {
-  expect(size(minus(found, expected)) / size(expected)).toBeLessThan(tolerance)
-}
 
 /** Zero-order equivalent of 1/(s^2 + 2 zeta w s + w^2) at z by its own two poles, in doubles. */
 function modeAt(z: Complex, w0: number, zeta: number, T: number): Complex {
